@@ -39,7 +39,7 @@ export function crossings(values: Float32Array, options: CrossingOptions): Cross
 
   for (let i = 0; i < values.length; i += 1) {
     const value = values[i]!;
-    if (value !== value) continue;
+    if (Number.isNaN(value)) continue;
     if (i - previousIndex > 1 && i - previousIndex - 1 > BRIDGED_HOLE && !holds) {
       state = 0;
       previous = Number.NaN;

@@ -8,7 +8,7 @@ export function mean(values: Numbers): number | null {
   let count = 0;
   for (let i = 0; i < values.length; i += 1) {
     const value = values[i]!;
-    if (value === value) {
+    if (!Number.isNaN(value)) {
       sum += value;
       count += 1;
     }
@@ -34,7 +34,7 @@ export function spread(values: Numbers): Spread | null {
   let max = -Infinity;
   for (let i = 0; i < values.length; i += 1) {
     const value = values[i]!;
-    if (value !== value) continue;
+    if (Number.isNaN(value)) continue;
     n += 1;
     const delta = value - average;
     average += delta / n;
@@ -87,7 +87,7 @@ export function noiseDeviation(values: Float32Array, most = 20_000): number | nu
   let count = 0;
   for (let i = 1; i <= places; i += step) {
     const second = values[i - 1]! - 2 * values[i]! + values[i + 1]!;
-    if (second === second) {
+    if (!Number.isNaN(second)) {
       differences[count] = Math.abs(second);
       count += 1;
     }
@@ -101,7 +101,7 @@ function finite(values: Numbers): Float64Array {
   let count = 0;
   for (let i = 0; i < values.length; i += 1) {
     const value = values[i]!;
-    if (value === value) {
+    if (!Number.isNaN(value)) {
       kept[count] = value;
       count += 1;
     }

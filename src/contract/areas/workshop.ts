@@ -1,0 +1,191 @@
+import { z } from 'zod';
+import { defineEndpoints } from '../endpoint.ts';
+import { ROLES, SCOPES } from '../roles.ts';
+import { id, isoTime, listOf, pageQuery, text } from './common.ts';
+
+const role = z.enum(ROLES);
+export const email = z.string().trim().toLowerCase().max(254).email();
+export const password = z.string().min(10, 'at least 10 characters').max(200);
+/** An IANA time zone name that this server knows. */
+export const timeZone = z
+  .string()
+  .max(64)
+  .refine((name) => {
+    try {
+      new Intl.DateTimeFormat('en', { timeZone: name });
+      return true;
+    } catch {
+      return false;
+    }
+  }, 'is not a known time zone');
+
+export const signUpInput = z.object({
+  name: text(80).pipe(z.string().min(1)),
+  email,
+  password,
+  workshop: text(80).pipe(z.string().min(1)),
+});
+export const signInInput = z.object({ email, password: z.string().min(1).max(200) });
+
+export const me = z.object({
+  id,
+  name: z.string(),
+  email: z.string(),
+  role,
+  workshop: z.object({ id, name: z.string(), timeZone: z.string() }),
+  workshops: z.array(z.object({ id, name: z.string(), role })),
+  via: z.enum(['session', 'token']),
+});
+export type MeJson = z.infer<typeof me>;
+
+export const token = z.object({
+  id,
+  name: z.string(),
+  scopes: z.array(z.enum(SCOPES)),
+  createdAt: isoTime,
+  expiresAt: isoTime,
+  lastUsedAt: isoTime.nullable(),
+});
+export const person = z.object({ id, name: z.string(), email: z.string(), role, since: isoTime });
+
+export const workshopEndpoints = defineEndpoints({
+  health: {
+    method: 'GET',
+    path: '/health',
+    summary: 'Whether the server can reach its database and store.',
+    access: 'open',
+    response: z.object({
+      status: z.enum(['ok', 'degraded']),
+      database: z.boolean(),
+      store: z.boolean(),
+      version: z.string(),
+    }),
+  },
+  openapi: {
+    method: 'GET',
+    path: '/openapi.json',
+    summary: 'This description.',
+    access: 'open',
+    response: z.record(z.unknown()),
+  },
+  'session.signUp': {
+    method: 'POST',
+    path: '/sign-up',
+    summary: 'Make an account and a workshop; signs in.',
+    access: 'open',
+    body: signUpInput,
+    response: me,
+    successStatus: 201,
+  },
+  'session.signIn': {
+    method: 'POST',
+    path: '/sign-in',
+    summary: 'Sign in; sets the session cookie.',
+    access: 'open',
+    body: signInInput,
+    response: me,
+  },
+  'session.signOut': {
+    method: 'POST',
+    path: '/sign-out',
+    summary: 'End this session.',
+    access: 'selfSession',
+    response: z.null(),
+    successStatus: 204,
+  },
+  'me.get': { method: 'GET', path: '/me', summary: 'Who is calling.', access: 'self', response: me },
+  'me.workshop': {
+    method: 'PUT',
+    path: '/me/workshop',
+    summary: 'Switch the current workshop.',
+    access: 'selfSession',
+    body: z.object({ workshopId: id }),
+    response: me,
+  },
+  'workshop.get': {
+    method: 'GET',
+    path: '/workshop',
+    summary: 'The current workshop.',
+    access: 'seeStaff',
+    response: z.object({
+      id,
+      name: z.string(),
+      timeZone: z.string(),
+      storageBytes: z.number(),
+      captures: z.number().int(),
+    }),
+  },
+  'workshop.patch': {
+    method: 'PATCH',
+    path: '/workshop',
+    summary: 'Change name or time zone.',
+    access: 'manage',
+    body: z
+      .object({ name: text(80).pipe(z.string().min(1)), timeZone })
+      .partial()
+      .strict(),
+    response: z.object({ id, name: z.string(), timeZone: z.string() }),
+    ifMatch: true,
+  },
+  'people.list': {
+    method: 'GET',
+    path: '/people',
+    summary: 'People of the current workshop.',
+    access: 'seeManage',
+    query: pageQuery,
+    response: listOf(person),
+  },
+  'people.patch': {
+    method: 'PATCH',
+    path: '/people/{id}',
+    summary: 'Change a role. The last owner stays owner.',
+    access: 'manage',
+    body: z.object({ role }).strict(),
+    response: person,
+  },
+  'tokens.list': {
+    method: 'GET',
+    path: '/tokens',
+    summary: 'Own tokens, without their secrets.',
+    access: 'selfSession',
+    response: listOf(token),
+  },
+  'tokens.create': {
+    method: 'POST',
+    path: '/tokens',
+    summary: 'Make a personal token. Its secret is shown once.',
+    access: 'selfSession',
+    body: z.object({
+      name: text(80).pipe(z.string().min(1)),
+      scopes: z.array(z.enum(SCOPES)).min(1),
+      expiresAt: isoTime.optional(),
+    }),
+    response: z.object({ id, token: z.string(), expiresAt: isoTime }),
+    successStatus: 201,
+  },
+  'tokens.delete': {
+    method: 'DELETE',
+    path: '/tokens/{id}',
+    summary: 'End a token.',
+    access: 'selfSession',
+    response: z.null(),
+    successStatus: 204,
+  },
+  'audit.list': {
+    method: 'GET',
+    path: '/audit',
+    summary: 'What happened that matters: who, what, when, from where.',
+    access: 'seeManage',
+    query: pageQuery,
+    response: listOf(
+      z.object({
+        id,
+        at: isoTime,
+        who: z.string(),
+        action: z.string(),
+        subject: z.string(),
+        address: z.string(),
+      }),
+    ),
+  },
+});

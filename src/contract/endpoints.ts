@@ -1,0 +1,18 @@
+import { captureEndpoints, uploadEndpoints } from './areas/captures.ts';
+import { libraryEndpoints } from './areas/library.ts';
+import { markEndpoints } from './areas/marks.ts';
+import { sharingEndpoints } from './areas/sharing.ts';
+import { workshopEndpoints } from './areas/workshop.ts';
+import { defineEndpoints } from './endpoint.ts';
+
+/** Every endpoint under /api/v1. A route that is not here does not open. */
+export const ENDPOINTS = defineEndpoints({
+  ...workshopEndpoints,
+  ...captureEndpoints,
+  ...uploadEndpoints,
+  ...markEndpoints,
+  ...sharingEndpoints,
+  ...libraryEndpoints,
+});
+
+export type EndpointId = keyof typeof ENDPOINTS;

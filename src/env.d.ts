@@ -1,0 +1,11 @@
+/// <reference types="astro/client" />
+
+declare namespace App {
+  interface Locals {
+    /** Who is asking; set by src/middleware.ts for every page and route. */
+    caller: import('./server/access.ts').Caller;
+    /** `paper`, `dim`, or null when the system's setting decides. */
+    theme: 'paper' | 'dim' | null;
+    requestId: string;
+  }
+}

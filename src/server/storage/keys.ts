@@ -1,0 +1,18 @@
+/** Where things lie in the object store. Ids are ours, never a user's text. */
+
+/** One signal's samples: little-endian float32, as recorded. */
+export const samplesKey = (captureId: string, samplesVersion: number, signal: number) =>
+  `captures/${captureId}/${samplesVersion}/${signal}.f32`;
+
+/** One signal's pyramid: see src/server/storage/pyramid-file.ts. */
+export const pyramidKey = (captureId: string, samplesVersion: number, signal: number) =>
+  `captures/${captureId}/${samplesVersion}/${signal}.pyramid`;
+
+/** Times of an uneven axis: little-endian float64. */
+export const timesKey = (captureId: string, samplesVersion: number) =>
+  `captures/${captureId}/${samplesVersion}/times.f64`;
+
+/** A known-good's own copy of samples and, for an uneven axis, times. */
+export const knownGoodSamplesKey = (knownGoodId: string, signal: number) =>
+  `known-goods/${knownGoodId}/${signal}.f32`;
+export const knownGoodTimesKey = (knownGoodId: string) => `known-goods/${knownGoodId}/times.f64`;
