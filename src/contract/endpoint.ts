@@ -22,7 +22,15 @@ export interface Endpoint {
   readonly inFront?: true;
   /** PATCH, PUT and DELETE of what people edit take If-Match. */
   readonly ifMatch?: true;
+  /** The thing that `{id}` names: the access door opens it before the handler runs, with the role held in its workshop. */
+  readonly opens?: Thing;
+  /** Hidden things open too (to bring them back). */
+  readonly opensDeleted?: true;
 }
 
+/** What is opened by id through the access door. */
+export const THINGS = ['capture', 'mark', 'shareLink', 'answer', 'knownGood', 'comparison'] as const;
+export type Thing = (typeof THINGS)[number];
+
 /** Keeps the keys' and schemas' types while checking the shape. */
-export const defineEndpoints = <T extends Record<string, Endpoint>>(endpoints: T): T => endpoints;
+export const defineEndpoints = <const T extends Record<string, Endpoint>>(endpoints: T): T => endpoints;

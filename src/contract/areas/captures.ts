@@ -232,6 +232,7 @@ export const captureEndpoints = defineEndpoints({
     path: '/captures/{id}',
     summary: 'One capture.',
     access: 'see',
+    opens: 'capture',
     response: capture,
   },
   'captures.patch': {
@@ -240,6 +241,7 @@ export const captureEndpoints = defineEndpoints({
     summary:
       'Change title, note, cylinders, signals or how the file is read; the last three read or measure again.',
     access: 'change',
+    opens: 'capture',
     body: capturePatch,
     response: capture,
     ifMatch: true,
@@ -249,6 +251,7 @@ export const captureEndpoints = defineEndpoints({
     path: '/captures/{id}',
     summary: 'Hide a capture; it can be brought back for 30 days.',
     access: 'remove',
+    opens: 'capture',
     response: z.null(),
     successStatus: 204,
     ifMatch: true,
@@ -258,6 +261,8 @@ export const captureEndpoints = defineEndpoints({
     path: '/captures/{id}/restore',
     summary: 'Bring a hidden capture back.',
     access: 'remove',
+    opens: 'capture',
+    opensDeleted: true,
     response: capture,
   },
   'captures.cancel': {
@@ -265,6 +270,7 @@ export const captureEndpoints = defineEndpoints({
     path: '/captures/{id}/cancel',
     summary: 'Stop reading or measuring. The original stays.',
     access: 'change',
+    opens: 'capture',
     response: capture,
   },
   'captures.preview': {
@@ -272,6 +278,7 @@ export const captureEndpoints = defineEndpoints({
     path: '/captures/{id}/preview',
     summary: 'The first lines of the file as they were understood.',
     access: 'see',
+    opens: 'capture',
     response: preview,
   },
   'captures.measurements': {
@@ -279,6 +286,7 @@ export const captureEndpoints = defineEndpoints({
     path: '/captures/{id}/measurements',
     summary: 'Every measured value and notice with the samples behind it.',
     access: 'see',
+    opens: 'capture',
     response: measurements,
   },
   'captures.wheel': {
@@ -287,6 +295,7 @@ export const captureEndpoints = defineEndpoints({
     summary:
       'The trigger wheel found in the capture: reference marks and tooth events with their crank degrees.',
     access: 'see',
+    opens: 'capture',
     response: wheel,
   },
   'captures.window': {
@@ -294,6 +303,7 @@ export const captureEndpoints = defineEndpoints({
     path: '/captures/{id}/window',
     summary: 'Samples of a stretch, reduced to four values a column.',
     access: 'see',
+    opens: 'capture',
     query: windowQuery,
     response: windowAnswer,
     inFront: true,
@@ -303,6 +313,7 @@ export const captureEndpoints = defineEndpoints({
     path: '/captures/{id}/original',
     summary: 'The uploaded bytes, unchanged.',
     access: 'see',
+    opens: 'capture',
     response: {
       contentType: 'application/octet-stream',
       description: 'The file as it was uploaded, as an attachment.',
@@ -314,6 +325,7 @@ export const captureEndpoints = defineEndpoints({
     path: '/captures/{id}/export',
     summary: 'A stretch as CSV: the shortest text that gives the same float32, times the same double.',
     access: 'see',
+    opens: 'capture',
     query: z.object({
       from: z.coerce.number().finite().optional(),
       to: z.coerce.number().finite().optional(),
