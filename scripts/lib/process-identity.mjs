@@ -43,7 +43,9 @@ export function identityOf(pid) {
 export function isRunning(identity) {
   if (identity.bootId !== bootId()) return false;
   const found = stat(identity.pid);
-  return found !== null && found.startTime === identity.startTime && found.state !== 'Z' && found.state !== 'X';
+  return (
+    found !== null && found.startTime === identity.startTime && found.state !== 'Z' && found.state !== 'X'
+  );
 }
 
 /**

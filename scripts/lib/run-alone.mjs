@@ -32,7 +32,8 @@ export async function runAlone(start) {
     instance?.close();
     process.exit(code);
   };
-  for (const signal of /** @type {const} */ (['SIGINT', 'SIGTERM', 'SIGHUP'])) process.once(signal, () => void end(0));
+  for (const signal of /** @type {const} */ (['SIGINT', 'SIGTERM', 'SIGHUP']))
+    process.once(signal, () => void end(0));
   const say = (/** @type {string} */ line) => void process.stderr.write(`${line}\n`);
   try {
     instance = await openInstance({ dataDir, say });
@@ -41,7 +42,9 @@ export async function runAlone(start) {
     for (const [key, value] of Object.entries(env)) process.stdout.write(`${key}=${value}\n`);
     process.stdout.write('READY=1\n');
   } catch (error) {
-    process.stderr.write(`${error instanceof PlainError ? error.message : String(error instanceof Error ? error.stack : error)}\n`);
+    process.stderr.write(
+      `${error instanceof PlainError ? error.message : String(error instanceof Error ? error.stack : error)}\n`,
+    );
     await end(1);
   }
 }

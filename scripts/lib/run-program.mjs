@@ -1,7 +1,7 @@
 // @ts-check
 import { spawn } from 'node:child_process';
-import { politely, stopProcess } from './stop-process.mjs';
 import { identityOf } from './process-identity.mjs';
+import { politely, stopProcess } from './stop-process.mjs';
 
 /**
  * @typedef {object} Finished
@@ -82,5 +82,7 @@ function sweepGroup(leader) {
 
 /** Ends what runs at this moment. */
 export async function stopRunningPrograms() {
-  await Promise.all([...underWay].map((identity) => stopProcess(identity, { signals: politely, group: true })));
+  await Promise.all(
+    [...underWay].map((identity) => stopProcess(identity, { signals: politely, group: true })),
+  );
 }

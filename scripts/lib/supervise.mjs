@@ -81,7 +81,9 @@ export function supervise(instance, program, say) {
       if (child === started) child = null;
       if (stopping || !keptUp) return;
       if (Date.now() - startedAt > STEADY_MS) pauseMs = FIRST_PAUSE_MS;
-      say(`! The ${program.name} ended (${how}); starting it again in ${pauseMs / 1000} s. Its log: ${logPath}`);
+      say(
+        `! The ${program.name} ended (${how}); starting it again in ${pauseMs / 1000} s. Its log: ${logPath}`,
+      );
       again = setTimeout(start, pauseMs);
       pauseMs = Math.min(pauseMs * 2, LONGEST_PAUSE_MS);
     };

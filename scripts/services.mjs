@@ -1,0 +1,65 @@
+// @ts-check
+import { startMailCatcher } from '../docker-free-fakes/mail.mjs';
+import { startObjectStore } from '../docker-free-fakes/object-store.mjs';
+import { startPostgres } from '../docker-free-fakes/postgres.mjs';
+import { openInstance } from './lib/instance.mjs';
+import { runAlone } from './lib/run-alone.mjs';
+import { step, say as tellTerminal } from './lib/say.mjs';
+
+/**
+ * @typedef {import('./lib/instance.mjs').Instance} Instance
+ * @typedef {import('./lib/supervise.mjs').Supervised} Supervised
+ *
+ * @typedef {object} Services
+ * @property {Instance} instance
+ * @property {Record<string, string>} env what the product needs to reach them: DATABASE_URL, S3_…, SMTP_URL, MAIL_FROM
+ * @property {string} mailPage where caught mail is read; `messages.json` below it is the list for programs
+ * @property {{ database: Supervised, store: Supervised, mail: Supervised }} programs
+ * @property {() => Promise<void>} stop
+ */
+
+/**
+ * Starts PostgreSQL, the object store and the mail catcher on one data folder.
+ * @param {{ dataDir: string, say?: import('./lib/say.mjs').Say, durable?: boolean, instance?: Instance }} options
+ *   `durable: false` is quicker and for tests: a power cut may then lose everything. An instance that is given stays open.
+ * @returns {Promise<Services>}
+ */
+export async function startServices({ dataDir, say = tellTerminal, durable = true, instance: given }) {
+  const instance = given ?? (await openInstance({ dataDir, say }));
+  /** @type {Supervised[]} */
+  const started = [];
+  const stop = async () => {
+    // The store and the mail first: the database may take its time to write everything down.
+    await Promise.all(started.map((program) => program.stop()));
+    if (!given) instance.close();
+  };
+  try {
+    const database = await step(say, 'Starting the database, waiting for its first answer', () =>
+      startPostgres(instance, { say, durable }),
+    );
+    started.push(database.program);
+    const store = await step(say, 'Starting the object store', () =>
+      startObjectStore(instance, { say, durable }),
+    );
+    started.push(store.program);
+    const mail = await step(say, 'Starting the mail catcher', () => startMailCatcher(instance, { say }));
+    started.push(mail.program);
+    return {
+      instance,
+      env: { ...database.env, ...store.env, ...mail.env },
+      mailPage: mail.page,
+      programs: { database: database.program, store: store.program, mail: mail.program },
+      stop,
+    };
+  } catch (error) {
+    await stop();
+    throw error;
+  }
+}
+
+if (import.meta.filename === process.argv[1]) {
+  await runAlone(async (instance, say) => {
+    const { env, mailPage, stop } = await startServices({ dataDir: instance.dataDir, instance, say });
+    return { env: { ...env, MAIL_PAGE: mailPage }, stop };
+  });
+}
