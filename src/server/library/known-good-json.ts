@@ -1,0 +1,61 @@
+import { asc, eq } from 'drizzle-orm';
+import type { KnownGoodJson } from '../../contract/areas/library.ts';
+import type { KnownGoodRecord } from '../access.ts';
+import { db } from '../db/client.ts';
+import { knownGoodReview, knownGoodSignal, person } from '../db/schema.ts';
+
+/** A known-good as the API shows it: frozen values, wheel and the history of its reviews. */
+export async function knownGoodJson(row: KnownGoodRecord): Promise<KnownGoodJson> {
+  const [signals, reviews, [author]] = await Promise.all([
+    db()
+      .select()
+      .from(knownGoodSignal)
+      .where(eq(knownGoodSignal.knownGoodId, row.id))
+      .orderBy(asc(knownGoodSignal.index)),
+    db()
+      .select({
+        decision: knownGoodReview.decision,
+        note: knownGoodReview.note,
+        by: person.name,
+        at: knownGoodReview.at,
+      })
+      .from(knownGoodReview)
+      .innerJoin(person, eq(person.id, knownGoodReview.reviewerId))
+      .where(eq(knownGoodReview.knownGoodId, row.id))
+      .orderBy(asc(knownGoodReview.at)),
+    db().select({ name: person.name }).from(person).where(eq(person.id, row.createdBy)),
+  ]);
+  const findings = new Map(row.findings.signals.map((finding) => [finding.index, finding]));
+  return {
+    id: row.id,
+    state: row.state,
+    engine: { make: row.make, model: row.model, code: row.code, year: row.year, cylinders: row.cylinders },
+    condition: row.condition,
+    note: row.note,
+    provenance: row.provenance,
+    captureId: row.captureId,
+    fromS: row.fromS,
+    toS: row.toS,
+    engineVersion: row.engineVersion,
+    signals: signals.map(({ index, name, circuit, unit, factor, offset }) => ({
+      index,
+      name,
+      circuit,
+      unit,
+      factor,
+      offset,
+      values: mutable(findings.get(index)?.values ?? []),
+      notices: mutable(findings.get(index)?.notices ?? []),
+    })),
+    relations: mutable(row.findings.relations),
+    wheel: row.findings.wheel === null ? null : mutable(row.findings.wheel),
+    reviews: reviews.map((review) => ({ ...review, at: review.at.toISOString() })),
+    createdBy: { id: row.createdBy, name: author?.name ?? 'former member' },
+    createdAt: row.createdAt.toISOString(),
+    publishedAt: row.publishedAt?.toISOString() ?? null,
+  };
+}
+
+type Mutable<T> = T extends object ? { -readonly [K in keyof T]: Mutable<T[K]> } : T;
+/** The engine's shapes are read-only, the contract's are not; nobody writes to either here. */
+const mutable = <T>(value: T) => value as Mutable<T>;
