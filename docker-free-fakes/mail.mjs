@@ -71,8 +71,8 @@ if (import.meta.filename === process.argv[1]) {
   const folder = process.env.MAIL_FOLDER;
   if (folder === undefined) {
     await runAlone(async (instance, say) => {
-      const { env, page, program } = await startMailCatcher(instance, { say });
-      return { env: { ...env, MAIL_PAGE: page }, stop: program.stop };
+      const { env, page } = await startMailCatcher(instance, { say });
+      return { ...env, MAIL_PAGE: page };
     });
   } else {
     await serveChild((ports) => serveMailCatcher(folder, ports));

@@ -73,8 +73,8 @@ export async function startObjectStore(instance, { say, durable = true }) {
 if (import.meta.filename === process.argv[1]) {
   if (process.env.STORE_FOLDER === undefined) {
     await runAlone(async (instance, say) => {
-      const { env, program } = await startObjectStore(instance, { say });
-      return { env, stop: program.stop };
+      const { env } = await startObjectStore(instance, { say });
+      return env;
     });
   } else {
     const credentials = {

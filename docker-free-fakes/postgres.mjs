@@ -18,6 +18,7 @@ import { freePort } from '../scripts/lib/ports.mjs';
 import { identityOf, isRunning, processesIn } from '../scripts/lib/process-identity.mjs';
 import { runAlone } from '../scripts/lib/run-alone.mjs';
 import { runProgram } from '../scripts/lib/run-program.mjs';
+import { recorded } from '../scripts/lib/run-recorded.mjs';
 import { databasePolitely, stopProcess } from '../scripts/lib/stop-process.mjs';
 import { supervise } from '../scripts/lib/supervise.mjs';
 
@@ -229,21 +230,15 @@ async function makeCluster({ instance, cluster, binaries, user, say }) {
     chownSync(half, user.uid, user.gid);
     chownSync(passwordFile, user.uid, user.gid);
   }
-  let setUp = 0;
-  const onStart = (/** @type {number} */ pid) => {
-    setUp = pid;
-    instance.record('database set-up', pid);
-  };
-  const { code, output } = await runProgram(
+  const { code, output } = await recorded(instance, 'database set-up')(
     join(binaries, 'initdb'),
     // biome-ignore format: one option and its value a line
     [
       '--pgdata', half, '--username', ADMIN, '--pwfile', passwordFile,
       '--auth', 'scram-sha-256', '--encoding', 'UTF8', '--locale', 'C.UTF-8', '--data-checksums',
     ],
-    { cwd: '/', env: { PATH: process.env.PATH, LANG: 'C.UTF-8' }, onStart, ...user },
+    { cwd: '/', env: { PATH: process.env.PATH, LANG: 'C.UTF-8' }, ...user },
   );
-  instance.forget(setUp);
   rmSync(passwordFile, { force: true });
   if (code !== 0)
     throw new PlainError(`The database cluster could not be made in ${half}:\n${output.trim()}`);
@@ -307,7 +302,7 @@ async function makeDatabase({ instance, binaries, port, program }) {
 
 if (import.meta.filename === process.argv[1]) {
   await runAlone(async (instance, say) => {
-    const { env, program } = await startPostgres(instance, { say });
-    return { env, stop: program.stop };
+    const { env } = await startPostgres(instance, { say });
+    return env;
   });
 }

@@ -21,45 +21,35 @@ import { step, say as tellTerminal } from './lib/say.mjs';
 /**
  * Starts PostgreSQL, the object store and the mail catcher on one data folder.
  * @param {{ dataDir: string, say?: import('./lib/say.mjs').Say, durable?: boolean, instance?: Instance }} options
- *   `durable: false` is quicker and for tests: a power cut may then lose everything. An instance that is given stays open.
+ *   `durable: false` is quicker and for tests: a power cut may then lose everything.
  * @returns {Promise<Services>}
  */
 export async function startServices({ dataDir, say = tellTerminal, durable = true, instance: given }) {
   const instance = given ?? (await openInstance({ dataDir, say }));
-  /** @type {Supervised[]} */
-  const started = [];
-  const stop = async () => {
-    // The store and the mail first: the database may take its time to write everything down.
-    await Promise.all(started.map((program) => program.stop()));
-    if (!given) instance.close();
-  };
   try {
     const database = await step(say, 'Starting the database, waiting for its first answer', () =>
       startPostgres(instance, { say, durable }),
     );
-    started.push(database.program);
     const store = await step(say, 'Starting the object store', () =>
       startObjectStore(instance, { say, durable }),
     );
-    started.push(store.program);
     const mail = await step(say, 'Starting the mail catcher', () => startMailCatcher(instance, { say }));
-    started.push(mail.program);
     return {
       instance,
       env: { ...database.env, ...store.env, ...mail.env },
       mailPage: mail.page,
       programs: { database: database.program, store: store.program, mail: mail.program },
-      stop,
+      stop: instance.stop,
     };
   } catch (error) {
-    await stop();
+    await instance.stop();
     throw error;
   }
 }
 
 if (import.meta.filename === process.argv[1]) {
   await runAlone(async (instance, say) => {
-    const { env, mailPage, stop } = await startServices({ dataDir: instance.dataDir, instance, say });
-    return { env: { ...env, MAIL_PAGE: mailPage }, stop };
+    const { env, mailPage } = await startServices({ dataDir: instance.dataDir, instance, say });
+    return { ...env, MAIL_PAGE: mailPage };
   });
 }

@@ -10,6 +10,7 @@ import {
   statSync,
 } from 'node:fs';
 import { join } from 'node:path';
+import { setTimeout as sleep } from 'node:timers/promises';
 import { lockFolder } from './lock.mjs';
 import { PlainError } from './plain-error.mjs';
 import { identityOf, isRunning } from './process-identity.mjs';
@@ -26,7 +27,7 @@ import { writeFileAtomically } from './write-file.mjs';
  * @property {string} storeAccessKeyId
  * @property {string} storeSecretAccessKey
  *
- * @typedef {object} Instance one GAPMARK_DATA folder, held by this process alone until `close()`
+ * @typedef {object} Instance one GAPMARK_DATA folder, held by this process alone until `stop()`
  * @property {string} id random, kept in the folder
  * @property {string} dataDir absolute, without links
  * @property {Secrets} secrets made once, readable by this user only
@@ -34,8 +35,13 @@ import { writeFileAtomically } from './write-file.mjs';
  * @property {(name: string, pid: number, database?: boolean) => ProcessIdentity | null} record remembers a started process
  *   on disk, so that a later start finds it even when this one is killed
  * @property {(pid: number) => void} forget
- * @property {() => void} close
+ * @property {(program: { stop: () => Promise<void>, phase: number }) => void} adopt remembers a program to be stopped with
+ *   the instance; refused once it is being stopped
+ * @property {() => Promise<void>} stop ends every program, the highest phase first, and gives the folder free. May be
+ *   called at any moment, also while something is being started.
  */
+
+const LONGEST_WAIT_MS = 60_000;
 
 /**
  * @param {{ dataDir: string, say: import('./say.mjs').Say }} options
@@ -43,13 +49,7 @@ import { writeFileAtomically } from './write-file.mjs';
  */
 export async function openInstance({ dataDir: wanted, say }) {
   const dataDir = makeDataFolder(wanted);
-  const lock = await lockFolder(dataDir, 'data');
-  if ('holder' in lock) {
-    throw new PlainError(
-      `Gapmark already runs on ${dataDir} (${lock.holder}). Stop that one, or give this one its own folder and port: ` +
-        'GAPMARK_DATA=… PORT=… npm start',
-    );
-  }
+  const lock = await takeLock(dataDir, say);
   try {
     const list = processList(dataDir);
     await stopLeftovers(list, say);
@@ -65,11 +65,58 @@ export async function openInstance({ dataDir: wanted, say }) {
       },
       record: list.add,
       forget: list.remove,
-      close: lock.release,
+      ...household(lock.release),
     };
   } catch (error) {
     lock.release();
     throw error;
+  }
+}
+
+/** @param {() => void} release */
+function household(release) {
+  /** @type {{ stop: () => Promise<void>, phase: number }[]} */
+  const programs = [];
+  /** @type {Promise<void> | null} */
+  let stopping = null;
+  const stopAll = async () => {
+    for (const phase of [...new Set(programs.map((program) => program.phase))].sort((a, b) => b - a)) {
+      await Promise.all(
+        programs.filter((program) => program.phase === phase).map((program) => program.stop()),
+      );
+    }
+    release();
+  };
+  return {
+    /** @param {{ stop: () => Promise<void>, phase: number }} program */
+    adopt: (program) => {
+      if (stopping) throw new PlainError('Nothing more is started: this copy is being stopped.');
+      programs.push(program);
+    },
+    stop: () => {
+      stopping ??= stopAll();
+      return stopping;
+    },
+  };
+}
+
+/**
+ * One that is about to end is waited for; one that stays is not disturbed.
+ * @param {string} dataDir @param {import('./say.mjs').Say} say
+ */
+async function takeLock(dataDir, say) {
+  const until = Date.now() + LONGEST_WAIT_MS;
+  for (let told = false; ; told = true) {
+    const lock = await lockFolder(dataDir, 'data');
+    if ('release' in lock) return lock;
+    if (!lock.ending || Date.now() > until) {
+      throw new PlainError(
+        `Gapmark already runs on ${dataDir} (${lock.holder}). Stop that one, or give this one its own folder and ` +
+          'port: GAPMARK_DATA=… PORT=… npm start',
+      );
+    }
+    if (!told) say(`- An earlier run on this folder is just ending (${lock.holder}); waiting for it …`);
+    await sleep(200);
   }
 }
 

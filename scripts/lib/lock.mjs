@@ -2,6 +2,7 @@
 import { createHash } from 'node:crypto';
 import { statSync } from 'node:fs';
 import { createConnection, createServer } from 'node:net';
+import { isEnding } from './ending.mjs';
 
 /** @param {string} folder @param {string} purpose */
 function socketName(folder, purpose) {
@@ -16,13 +17,14 @@ function socketName(folder, purpose) {
  * process, whatever ends it, so there is never a stale lock to clear away. Source: unix(7), "Abstract sockets".
  * @param {string} folder an existing folder
  * @param {string} purpose
- * @returns {Promise<{ release: () => void } | { holder: string }>} who holds it, when it is taken
+ * @returns {Promise<{ release: () => void } | { holder: string, ending: boolean }>} who holds it, when it is taken, and
+ *   whether that process is about to end
  */
 export async function lockFolder(folder, purpose) {
   const name = socketName(folder, purpose);
   const server = createServer((socket) => {
     socket.on('error', () => {});
-    socket.end(String(process.pid));
+    socket.end(`${process.pid} ${isEnding() ? 'ending' : 'staying'}`);
   });
   const taken = await new Promise((resolve, reject) => {
     server.once('error', (error) => {
@@ -31,12 +33,12 @@ export async function lockFolder(folder, purpose) {
     });
     server.listen(name, () => resolve(false));
   });
-  if (taken) return { holder: await askHolder(name) };
+  if (taken) return askHolder(name);
   server.unref();
   return { release: () => server.close() };
 }
 
-/** @param {string} name @returns {Promise<string>} */
+/** @param {string} name @returns {Promise<{ holder: string, ending: boolean }>} */
 function askHolder(name) {
   return new Promise((resolve) => {
     let text = '';
@@ -46,6 +48,9 @@ function askHolder(name) {
       text += String(data);
     });
     socket.on('error', () => {});
-    socket.on('close', () => resolve(/^\d+$/.test(text) ? `process ${text}` : 'another process'));
+    socket.on('close', () => {
+      const [pid = '', state] = text.split(' ');
+      resolve({ holder: pid === '' ? 'another process' : `process ${pid}`, ending: state === 'ending' });
+    });
   });
 }

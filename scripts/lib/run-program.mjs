@@ -1,5 +1,6 @@
 // @ts-check
 import { spawn } from 'node:child_process';
+import { isEnding } from './ending.mjs';
 import { identityOf } from './process-identity.mjs';
 import { politely, stopProcess } from './stop-process.mjs';
 
@@ -22,6 +23,9 @@ const underWay = new Set();
  * @returns {Promise<Finished>}
  */
 export function runProgram(command, args, options = {}) {
+  // Whoever ends this script ends what runs; nothing may begin after that.
+  if (isEnding())
+    return Promise.resolve({ code: 130, stdout: '', output: 'Not started: this script is ending.' });
   return new Promise((resolve) => {
     let stdout = '';
     let output = '';

@@ -13,6 +13,7 @@ import { databasePolitely, politely, stopProcess } from './stop-process.mjs';
  * @property {string} [cwd]
  * @property {number} [uid]
  * @property {number} [gid]
+ * @property {number} [phase] what has a higher one ends before what has a lower one; services have 0
  * @property {boolean} [database] stop it as PostgreSQL wants to be stopped
  * @property {boolean} [channel] open a channel for messages to us
  *
@@ -25,6 +26,7 @@ import { databasePolitely, politely, stopProcess } from './stop-process.mjs';
  * @property {() => string} logTail the last lines that it wrote
  * @property {string} logPath
  * @property {() => Promise<void>} stop
+ * @property {() => void} begin starts it again after `stop()`
  */
 
 const FIRST_PAUSE_MS = 250;
@@ -55,6 +57,7 @@ export function supervise(instance, program, say) {
   let pauseMs = FIRST_PAUSE_MS;
 
   const start = () => {
+    again = null;
     turnOver(logPath);
     const log = openSync(logPath, 'a', 0o600);
     const startedAt = Date.now();
@@ -90,6 +93,17 @@ export function supervise(instance, program, say) {
     started.on('error', (error) => onEnd(String(error)));
     started.on('exit', (code, signal) => onEnd(signal ?? `code ${code}`));
   };
+  const stop = async () => {
+    stopping = true;
+    if (again) clearTimeout(again);
+    if (child === null || identity === null) return;
+    await stopProcess(identity, {
+      signals: program.database ? databasePolitely : politely,
+      group: !program.database,
+    });
+    instance.forget(identity.pid);
+  };
+  instance.adopt({ stop, phase: program.phase ?? 0 });
   start();
 
   return {
@@ -102,15 +116,10 @@ export function supervise(instance, program, say) {
       keptUp = true;
     },
     logTail: () => (existsSync(logPath) ? lastLines(readFileSync(logPath, 'utf8'), 12) : ''),
-    stop: async () => {
-      stopping = true;
-      if (again) clearTimeout(again);
-      if (child === null || identity === null) return;
-      await stopProcess(identity, {
-        signals: program.database ? databasePolitely : politely,
-        group: !program.database,
-      });
-      instance.forget(identity.pid);
+    stop,
+    begin: () => {
+      stopping = false;
+      if (child === null) start();
     },
   };
 }

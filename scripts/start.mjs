@@ -1,0 +1,51 @@
+// @ts-check
+import { join, resolve } from 'node:path';
+import { forgetToken, startCopy } from './copy.mjs';
+import { PlainError } from './lib/plain-error.mjs';
+import { root } from './lib/root.mjs';
+import { runMain } from './lib/run-main.mjs';
+import { say } from './lib/say.mjs';
+
+/** `npm start`: the only set-up there is. What it promises is in DEVELOPERS.md, "Starting it". */
+
+const DEFAULT_PORT = 4321;
+
+let stop = async () => {};
+
+async function main() {
+  const copy = await startCopy({
+    dataDir: resolve(process.env.GAPMARK_DATA || join(root, '.gapmark')),
+    // “localhost” may mean ::1 here and 127.0.0.1 there; the address that is printed must be the one that answers.
+    host: !process.env.HOST || process.env.HOST === 'localhost' ? '127.0.0.1' : process.env.HOST,
+    port: portFrom(process.env.PORT),
+    origin: process.env.GAPMARK_ORIGIN || undefined,
+    say,
+    onStop: (given) => {
+      stop = given;
+    },
+  });
+  say(`- Mail that this copy sends is caught here: ${copy.mailPage}`);
+  say(`- Data and logs: ${copy.services.instance.dataDir}`);
+  say(`Gapmark is ready: ${copy.address}`);
+  if (copy.newToken !== null) {
+    say(`Demo token: ${copy.newToken}`);
+    forgetToken(copy);
+  }
+}
+
+/** @param {string | undefined} text */
+function portFrom(text) {
+  if (!text) return DEFAULT_PORT;
+  const port = Number(text);
+  if (/^\d+$/.test(text) && port <= 65_535) return port;
+  throw new PlainError(`PORT is “${text}”; it must be a number from 0 (any) to 65535.`);
+}
+
+await runMain(main, {
+  stop: async () => {
+    say('- Stopping everything …');
+    await stop();
+    say('Stopped.');
+  },
+  stopped: 0,
+});
