@@ -23,7 +23,7 @@ describe('degreesAt() and timeAtDegrees()', () => {
   it('are null where no tooth was seen, and for a wheel without teeth', () => {
     expect(degreesAt(wheel, 0.05)).toBeNull();
     expect(degreesAt(wheel, 5)).toBeNull();
-    expect(degreesAt({ teethPerTurn: 0, marksS: [], teethS: [], teethDeg: [] }, 0)).toBeNull();
+    expect(degreesAt({ places: null, teethPerTurn: 0, marksS: [], teethS: [], teethDeg: [] }, 0)).toBeNull();
   });
 });
 

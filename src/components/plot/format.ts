@@ -51,10 +51,3 @@ export function withUnit(number: string, unit: string): string {
 export function frequency(hz: number): string {
   return hz >= 1000 ? `${significant(hz / 1000, 4)} kHz` : `${significant(hz, 4)} Hz`;
 }
-
-/** Bytes in binary units, as file managers show them. */
-export function bytes(size: number): string {
-  if (size < 1024) return `${size} B`;
-  if (size < 1024 * 1024) return `${significant(size / 1024, 2)} KiB`;
-  return `${significant(size / (1024 * 1024), 2)} MiB`;
-}

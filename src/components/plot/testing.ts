@@ -14,5 +14,5 @@ export function evenWheel({ rpm = 200, turns = 3, firstMarkS = 0, places = 60, m
   }
   teethS.push(firstMarkS + turns * turnS);
   teethDeg.push(360 * turns);
-  return { teethPerTurn: places - missing, marksS, teethS, teethDeg };
+  return { places, teethPerTurn: places - missing, marksS, teethS, teethDeg };
 }

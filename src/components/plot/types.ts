@@ -1,5 +1,3 @@
-import type { Circuit } from '../../engine/circuit.ts';
-
 /** A stretch of the capture's own time axis, in seconds; `from` is before `to`. */
 export interface View {
   readonly from: number;
@@ -10,7 +8,8 @@ export interface View {
 export interface PlotSignal {
   readonly index: number;
   readonly name: string;
-  readonly circuit: Circuit;
+  /** One of the engine's circuits; one that this page does not know is drawn as "other". */
+  readonly circuit: string;
   readonly unit: string;
   readonly factor: number;
   readonly offset: number;
@@ -28,6 +27,8 @@ export interface PlotCapture {
 
 /** What turns seconds into crank degrees; the parts of the API's wheel that the plot uses. */
 export interface PlotWheel {
+  /** Equal places round the wheel, missing ones included; null for added-tooth and uneven wheels. */
+  readonly places: number | null;
   readonly teethPerTurn: number;
   readonly marksS: readonly number[];
   readonly teethS: readonly number[];

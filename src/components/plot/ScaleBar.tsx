@@ -1,0 +1,105 @@
+import { Mark } from '../base/Mark.tsx';
+import { degreeScale } from './degree-scale.ts';
+import { fixed } from './format.ts';
+import type { PlotModel } from './model.ts';
+import { timeScale } from './time-scale.ts';
+import type { PlotWheel } from './types.ts';
+import { useStore } from './useStore.ts';
+
+export type ScaleKind = 'seconds' | 'degrees';
+
+interface ScaleBarProps {
+  model: PlotModel;
+  wheel: PlotWheel | null;
+  kind: ScaleKind;
+  narrow: boolean;
+}
+
+/** The scale above the lanes: seconds, or crank degrees and tooth numbers where a wheel is known. */
+export function ScaleBar({ model, wheel, kind, narrow }: ScaleBarProps) {
+  const view = useStore(model.view);
+  const width = useStore(model.widthPx);
+  if (width === 0) return <div className="plot-scale" />;
+  const degrees = kind === 'degrees' && wheel !== null ? degreeScale(wheel, view, width) : null;
+  const barY = narrow ? 22 : 44;
+  const scale = degrees ?? timeScale(view, width);
+  const box = (dark: boolean) =>
+    scale.fields
+      .filter((field) => field.dark === dark)
+      .map(({ from, to }) => `M${from.toFixed(1)} ${barY}H${to.toFixed(1)}v7H${from.toFixed(1)}z`)
+      .join('');
+  const labels = degrees ? degrees.degrees : timeScale(view, width).labels;
+  const ticks = degrees ? degrees.teeth : timeScale(view, width).ticks;
+  return (
+    <div className="plot-scale" aria-hidden="true">
+      {!narrow && <span className="plot-scale-name">{degrees ? 'crank' : 'time'}</span>}
+      {!narrow && degrees && <span className="plot-scale-name plot-scale-tooth">tooth</span>}
+      <svg className="plot-scale-svg" width={width} height={narrow ? 52 : 76}>
+        {!narrow && degrees && <Turns scale={degrees} />}
+        <path className="plot-field" d={box(false)} />
+        <path className="plot-field plot-field-dark" d={box(true)} />
+        <path
+          className="plot-tick"
+          d={[
+            ...ticks.map((at) => `M${at.toFixed(1)} ${barY + 7}v4`),
+            ...labels.map(({ at }) => `M${at.toFixed(1)} ${barY - 4}v4`),
+          ].join('')}
+        />
+        {labels.map(({ at, text }) => (
+          <text key={`${text}${at.toFixed(0)}`} className="plot-label" x={at} y={barY - 8} textAnchor="middle">
+            {text}
+          </text>
+        ))}
+        {degrees?.toothNumbers.map(({ at, tooth }) => (
+          <text
+            key={at}
+            className={tooth === 1 ? 'plot-label plot-label-mark' : 'plot-label plot-label-soft'}
+            x={at}
+            y={barY + 24}
+            textAnchor="middle"
+          >
+            {tooth}
+          </text>
+        ))}
+      </svg>
+    </div>
+  );
+}
+
+function Turns({ scale }: { scale: NonNullable<ReturnType<typeof degreeScale>> }) {
+  return (
+    <g>
+      {scale.turns.map(({ from, to, turn, rpm }) => {
+        const wide = to - from;
+        if (wide < 64) return null;
+        const middle = (from + to) / 2;
+        const half = wide > 150 ? 62 : 30;
+        const line = wide / 2 - half - 14;
+        return (
+          <g key={turn}>
+            {line > 8 && (
+              <path className="plot-turn-line" d={`M${from + 14} 10h${line}M${to - 14} 10h${-line}`} />
+            )}
+            <text className="plot-turn" x={middle} y={14} textAnchor="middle">
+              Turn {turn + 1}
+              {wide > 150 && (
+                <tspan className="plot-turn-speed" dx="8">
+                  {fixed(rpm, 1)} rpm
+                </tspan>
+              )}
+            </text>
+          </g>
+        );
+      })}
+      {scale.marks.map(({ at, timeS }, place) => {
+        const before = scale.marks[place - 1];
+        if (before !== undefined && at - before.at < 40) return null;
+        return (
+          <g key={timeS} className="plot-mark-sign" transform={`translate(${at - 8} 2)`}>
+            <Mark size={16} />
+          </g>
+        );
+      })}
+    </g>
+  );
+}

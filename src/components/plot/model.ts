@@ -1,0 +1,56 @@
+import type { FetchWindow } from './fetch-window.ts';
+import { createStore, type Store } from './store.ts';
+import type { PlotCapture, View } from './types.ts';
+import { type Bounds, boundsOf, clampView } from './view.ts';
+import { createWindowLoader, type WindowLoader } from './window-loader.ts';
+
+/** What a pointer on the lanes does. */
+export type Tool = 'move' | 'span' | 'mark';
+
+/**
+ * One plot's state outside React: the view, the cursor, the span, the samples. Pieces watch what they draw, so a moved
+ * cursor redraws no trace and a moved view renders nothing but the plot.
+ */
+export interface PlotModel {
+  readonly capture: PlotCapture;
+  readonly bounds: Bounds;
+  readonly view: Store<View>;
+  readonly cursorS: Store<number | null>;
+  readonly span: Store<View | null>;
+  readonly tool: Store<Tool>;
+  /** Width of the lanes in CSS pixels; 0 before they were laid out. */
+  readonly widthPx: Store<number>;
+  readonly loader: WindowLoader;
+  show(view: View): void;
+  devicePixels(): number;
+  close(): void;
+}
+
+/** More device pixels than this a CSS pixel are not worth their bytes. */
+const MOST_RATIO = 2;
+
+export function createPlotModel(capture: PlotCapture, fetchWindow: FetchWindow, initial: View | null): PlotModel {
+  const bounds = boundsOf(capture.startS, capture.durationS, capture.samples);
+  const view = createStore<View>(initial === null ? bounds.whole : clampView(initial, bounds));
+  const widthPx = createStore(0);
+  const loader = createWindowLoader(bounds.whole, fetchWindow);
+  const devicePixels = () => Math.round(widthPx.get() * Math.min(globalThis.devicePixelRatio || 1, MOST_RATIO));
+  const ask = () => {
+    if (widthPx.get() > 0) loader.show(view.get(), devicePixels());
+  };
+  view.subscribe(ask);
+  widthPx.subscribe(ask);
+  return {
+    capture,
+    bounds,
+    view,
+    cursorS: createStore<number | null>(null),
+    span: createStore<View | null>(null),
+    tool: createStore<Tool>('move'),
+    widthPx,
+    loader,
+    show: (next) => view.set(clampView(next, bounds)),
+    devicePixels,
+    close: () => loader.close(),
+  };
+}
