@@ -1,4 +1,4 @@
-import { histogram } from '../../signal/levels.ts';
+import { fullestLevel, within } from '../../signal/fullest-level.ts';
 import { sortedRange } from '../../signal/range.ts';
 import { readingNoise } from '../../signal/resolution.ts';
 import { quantileSorted } from '../../signal/statistics.ts';
@@ -16,13 +16,6 @@ export interface LoadStates {
   readonly acCoupled: boolean;
 }
 
-const BINS = 1024;
-
-interface Mode {
-  readonly level: number;
-  readonly share: number;
-}
-
 /**
  * Rest and on level from the histogram of the trace without its rare extremes (kicks). The rest level is the fullest
  * mode, except when that mode is the on level itself: then something far above it is full as well and nothing is below.
@@ -34,8 +27,8 @@ export function loadStates(values: Float32Array): LoadStates | null {
   const noise = readingNoise(values);
   const bottom = quantileSorted(sorted, 0.0005);
   const top = quantileSorted(sorted, 0.98);
-  const full = fullest(sorted, bottom, top, noise);
-  const above = fullest(sorted, full.level + Math.max(6 * noise, 0.04 * (top - bottom)), top, noise);
+  const full = fullestLevel(sorted, bottom, top, noise);
+  const above = fullestLevel(sorted, full.level + Math.max(6 * noise, 0.04 * (top - bottom)), top, noise);
   const step = above.level - full.level;
   const below = shareBetween(sorted, Number.NEGATIVE_INFINITY, full.level - 0.3 * step);
   const fullIsOn =
@@ -45,54 +38,16 @@ export function loadStates(values: Float32Array): LoadStates | null {
   const grounded = rest > 0 ? within(sorted, -0.2 * rest, 0.62 * rest) : sorted.subarray(0, 0);
   const enough = Math.max(3, sorted.length * 0.0002);
   if (rest > 6 * noise && grounded.length >= enough) {
-    const on = fullest(grounded, grounded[0]!, grounded[grounded.length - 1]!, noise).level;
+    const on = fullestLevel(grounded, grounded[0]!, grounded[grounded.length - 1]!, noise).level;
     if (rest - on > Math.max(6 * noise, 0.3 * rest)) return { rest, on, noise, acCoupled: false };
   }
   const lower = within(sorted, bottom, rest - Math.max(8 * noise, 0.35 * (rest - bottom)));
   if (lower.length >= enough && Math.abs(rest) < 0.45 * (rest - bottom)) {
-    const on = fullest(lower, lower[0]!, lower[lower.length - 1]!, noise).level;
+    const on = fullestLevel(lower, lower[0]!, lower[lower.length - 1]!, noise).level;
     if (Math.abs(rest) < 0.7 * (rest - on)) return { rest, on, noise, acCoupled: true };
   }
   return { rest, on: null, noise, acCoupled: false };
 }
 
-/** The fullest level of the samples from `low` to `high`, and its share of all of them. */
-function fullest(sorted: Float32Array, low: number, high: number, noise: number): Mode {
-  if (!(high > low)) return { level: Number.isFinite(low) ? (sorted[sorted.length >> 1] ?? 0) : 0, share: 0 };
-  const counts = histogram(sorted, low, high, BINS);
-  const width = (high - low) / BINS;
-  const reach = Math.min(BINS / 8, Math.max(3, Math.ceil((2 * noise) / width)));
-  let sum = 0;
-  let most = -1;
-  let at = 0;
-  for (let bin = -reach; bin < BINS; bin += 1) {
-    sum += (counts[bin + reach] ?? 0) - (counts[bin - reach - 1] ?? 0);
-    if (bin >= 0 && sum > most) {
-      most = sum;
-      at = bin;
-    }
-  }
-  const centre = low + (at + 0.5) * width;
-  const near = within(sorted, centre - (reach + 0.5) * width, centre + (reach + 0.5) * width);
-  const level = near.length > 0 ? quantileSorted(near, 0.5) : centre;
-  return { level, share: near.length / sorted.length };
-}
-
-function within(sorted: Float32Array, low: number, high: number): Float32Array {
-  return sorted.subarray(place(sorted, low), place(sorted, high));
-}
-
 const shareBetween = (sorted: Float32Array, low: number, high: number) =>
   within(sorted, low, high).length / sorted.length;
-
-/** First place in rising `sorted` at or after `value`. */
-function place(sorted: Float32Array, value: number): number {
-  let low = 0;
-  let high = sorted.length;
-  while (low < high) {
-    const middle = (low + high) >> 1;
-    if (sorted[middle]! < value) low = middle + 1;
-    else high = middle;
-  }
-  return low;
-}

@@ -1,0 +1,120 @@
+import { type ExponentialFit, fitExponential } from '../../signal/exponential-fit.ts';
+import { fitLine } from '../../signal/line-fit.ts';
+import { rangeMean } from '../../signal/range.ts';
+import { timeAt } from '../../signal/time.ts';
+import type { Charge } from './charges.ts';
+import type { CurrentTrace } from './trace.ts';
+
+/** What the curve of one charge says. Times in seconds of the capture. */
+export interface ChargeShape {
+  readonly charge: Charge;
+  /** Where the fitted rise meets zero, or the foot of a step; null when the start is not in the capture. */
+  readonly startS: number | null;
+  readonly endS: number;
+  readonly peak: number;
+  /** The last 10 % of the dwell stay within 1 %. */
+  readonly flat: boolean;
+  /** Flat although the rise, drawn on, would have gone well above: a limiter and not the end of the L/R curve. */
+  readonly limiter: boolean;
+  readonly timeConstantS: number | null;
+  /** Amperes that appear at once at the start, of the peak's share; 0 without a step. */
+  readonly step: number;
+  /** The curve bends upwards: the core saturates. */
+  readonly bendsUp: boolean;
+}
+
+const MOST_POINTS = 600;
+
+/**
+ * i = I∞ (1 − e^(−t/τ)) fitted to the rise of one charge (to the part before the flat when the current is held). Where
+ * the curve does not follow that law, its ends are read from straight lines through the first fifth and the last tenth.
+ */
+export function chargeShape(trace: CurrentTrace, charge: Charge): ChargeShape {
+  const { amperes, axis, noise } = trace;
+  const from = charge.first ?? 0;
+  const { last } = charge;
+  const endS = timeAt(axis, last);
+  const tail = last - 0.1 * (last - from);
+  const held = rangeMean(amperes, tail, last + 1) ?? amperes[last]!;
+  const slope = fitLine(amperes, axis, tail, last + 1);
+  const tailS = endS - timeAt(axis, tail);
+  const drift = slope ? Math.abs(slope.slope) * tailS : Number.POSITIVE_INFINITY;
+  const flat =
+    drift < 0.01 * held || (slope !== null && drift < 0.015 * held && drift < 2 * slope.slopeError * tailS);
+
+  const to = flat ? kneeOf(amperes, from, last, 0.97 * held - 2 * noise) : last;
+  const fit = fitPart(trace, from, to);
+  const good = fit !== null && fit.residual < Math.max(2 * noise, 0.012 * held) && fit.slope > 0;
+  const originS = timeAt(axis, from);
+  const peak = flat ? held : good ? fit.at(endS - originS) : lineAt(trace, tail, last, held);
+  const footS = charge.first === null ? null : footOf(trace, charge.first, peak);
+  const zeroS = good && fit.zeroS !== null ? originS + fit.zeroS : null;
+  const lengthS = endS - originS;
+  const step = footS === null || !good ? 0 : Math.max(0, fit.at(footS - originS) / peak);
+  const isStep = step > 0.12 && zeroS !== null && footS !== null && footS - zeroS > 0.05 * lengthS;
+  const startS = startOf();
+  const sure =
+    good && fit.rate > 0 && fit.rateError < 0.12 * fit.rate && fit.rate * (timeAt(axis, to) - originS) > 0.12;
+  function startOf(): number | null {
+    if (footS === null || isStep) return footS;
+    if (zeroS !== null && Math.abs(zeroS - footS) <= 0.15 * lengthS) return zeroS;
+    return startOfLine(trace, from, to, footS);
+  }
+  return {
+    charge,
+    startS,
+    endS,
+    peak,
+    flat,
+    limiter: flat && (!good || fit.final === null || fit.final > 1.15 * held),
+    timeConstantS: sure ? 1 / fit.rate : null,
+    step: isStep ? step : 0,
+    bendsUp: fit !== null && !flat && fit.rate * lengthS < -0.3 && fit.rateError * lengthS < 0.15,
+  };
+}
+
+/** First sample at or above `level`; the flat begins about there. */
+function kneeOf(amperes: Float32Array, from: number, last: number, level: number): number {
+  for (let i = Math.ceil(from); i < last; i += 1)
+    if (amperes[i]! >= level) return Math.max(i - 1, Math.ceil(from) + 3);
+  return last;
+}
+
+/** Fit over at most 600 means of neighbouring samples, times from sample `from` on. */
+function fitPart(trace: CurrentTrace, from: number, to: number): ExponentialFit | null {
+  const { amperes, axis } = trace;
+  const size = Math.max(1, Math.ceil((to - from + 1) / MOST_POINTS));
+  const originS = timeAt(axis, from);
+  const timesS: number[] = [];
+  const means: number[] = [];
+  for (let i = from; i + size - 1 <= to; i += size) {
+    const value = size === 1 ? amperes[i]! : rangeMean(amperes, i, i + size);
+    if (value === null || Number.isNaN(value)) continue;
+    timesS.push(timeAt(axis, i + (size - 1) / 2) - originS);
+    means.push(value);
+  }
+  return fitExponential(Float64Array.from(timesS), Float64Array.from(means));
+}
+
+/** Where the trace itself leaves zero: the passage of 4 % of the peak just before the first sample with current. */
+function footOf(trace: CurrentTrace, first: number, peak: number): number {
+  const { amperes, axis } = trace;
+  const before = amperes[first - 1]!;
+  const here = amperes[first]!;
+  const level = Math.min(here, 0.04 * peak);
+  const share = here > before ? Math.min(1, Math.max(0, (level - before) / (here - before))) : 1;
+  return timeAt(axis, first - 1 + share);
+}
+
+/** Zero of a straight line through the first fifth of the rise; the foot where that makes no sense. */
+function startOfLine(trace: CurrentTrace, from: number, to: number, footS: number): number {
+  const line = fitLine(trace.amperes, trace.axis, from, from + Math.max(4, 0.2 * (to - from)));
+  if (!line || !(line.slope > 0)) return footS;
+  const zeroS = line.middleS - line.middle / line.slope;
+  return Math.abs(zeroS - footS) < 0.15 * (timeAt(trace.axis, to) - footS) ? zeroS : footS;
+}
+
+function lineAt(trace: CurrentTrace, from: number, last: number, otherwise: number): number {
+  const line = fitLine(trace.amperes, trace.axis, from, last + 1);
+  return line ? line.middle + line.slope * (timeAt(trace.axis, last) - line.middleS) : otherwise;
+}
