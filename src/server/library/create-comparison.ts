@@ -7,7 +7,8 @@ import { db } from '../db/client.ts';
 import { captureSignal, comparison, knownGood, knownGoodSignal } from '../db/schema.ts';
 import { ApiError } from '../errors.ts';
 import { newId } from '../ids.ts';
-import { queueComparison } from '../queue/queue-comparison.ts';
+import { QUEUES } from '../queue/names.ts';
+import { inTransaction } from '../queue/transaction.ts';
 import type { StoredRequest } from './comparison-request.ts';
 
 type Input = z.infer<typeof comparisonInput>;
@@ -102,11 +103,11 @@ export async function createComparison(caller: PersonCaller, row: CaptureRecord,
   const target = await targetOf(caller, input, signal.circuit, row.workshopId);
   const request: StoredRequest = { signal: input.signal, asked: input, ...target };
   const id = newId();
-  await db().transaction(async (tx) => {
+  await inTransaction(async ({ tx, send }) => {
     await tx
       .insert(comparison)
       .values({ id, workshopId: row.workshopId, createdBy: caller.personId, captureId: row.id, request });
-    await queueComparison(tx, id);
+    await send(QUEUES.compare, { comparisonId: id });
   });
   return { id, status: 'queued' as const };
 }

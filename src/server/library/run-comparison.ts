@@ -1,5 +1,5 @@
 import { and, eq, inArray, isNull } from 'drizzle-orm';
-import type { ComparisonJson } from '../../contract/areas/library.ts';
+import { type ComparisonJson, comparison as comparisonShape } from '../../contract/areas/library.ts';
 import { compare } from '../../engine/comparison/compare.ts';
 import type { ComparisonFindings, Side } from '../../engine/comparison/types.ts';
 import { ENGINE_VERSION } from '../../engine/version.ts';
@@ -61,11 +61,16 @@ async function referencesOf(
   };
 }
 
-/** The engine's shapes are read-only, the contract's are not; nobody writes to either here. */
-const resultOf = (found: ComparisonFindings): Result => {
-  const { alignment, rows, shape, overlay, text } = found;
-  return JSON.parse(JSON.stringify({ alignment, rows, shape, overlay, text })) as Result;
-};
+const resultShape = comparisonShape.pick({
+  alignment: true,
+  rows: true,
+  shape: true,
+  overlay: true,
+  text: true,
+});
+
+/** What is kept has the contract's shape, checked here once. */
+const resultOf = (found: ComparisonFindings): Result => resultShape.parse(found);
 
 /** What the worker does for one comparison. A refusal in words is kept as its error; anything else is thrown, to be tried again. */
 export async function runComparison(id: string): Promise<void> {
