@@ -1,5 +1,5 @@
-import type { Circuit } from '../circuit.ts';
 import type { TimeAxis } from '../capture.ts';
+import type { Circuit } from '../circuit.ts';
 
 export type Encoding = 'utf-8' | 'utf-16le' | 'utf-16be' | 'windows-1252';
 export type Delimiter = ',' | ';' | '\t' | ' ' | '|';
