@@ -1,0 +1,55 @@
+import type { Pattern } from './pattern.ts';
+
+/** Tooth events of one crank signal, in seconds, with the swing at each where the sensor has two wires. */
+export interface ToothTrain {
+  readonly timesS: Float64Array;
+  readonly swing: Float64Array | null;
+}
+
+/** A pattern joined with its times: what every turn-based value is computed from. */
+export interface FoundWheel {
+  readonly pattern: Pattern;
+  /** Time of each of `pattern.events`, seconds. */
+  readonly timesS: Float64Array;
+  readonly swing: Float64Array | null;
+  /** Times of the reference marks. */
+  readonly marksS: Float64Array;
+}
+
+export function joinWheel(train: ToothTrain, pattern: Pattern): FoundWheel {
+  const timesS = Float64Array.from(pattern.events, (event) => train.timesS[event]!);
+  const swing = train.swing;
+  return {
+    pattern,
+    timesS,
+    swing: swing ? Float64Array.from(pattern.events, (event) => swing[event]!) : null,
+    marksS: Float64Array.from(pattern.marks, (position) => timesS[position]!),
+  };
+}
+
+/** True when `position` opens a stretch: nothing is known between it and the event before. */
+export function stretchStarts(pattern: Pattern): Set<number> {
+  return new Set(pattern.stretches);
+}
+
+/** Tooth number in the turn (1 = reference mark) of every event; 0 where there is no mark to count from. */
+export function toothNumbers(wheel: FoundWheel): Int32Array {
+  const { degrees, places, teeth, gaps, marks } = wheel.pattern;
+  const out = new Int32Array(degrees.length);
+  if (marks.length === 0) return out;
+  if (places === null) {
+    const first = marks[0]!;
+    for (let k = 0; k < out.length; k += 1) out[k] = ((((k - first) % teeth) + teeth) % teeth) + 1;
+    return out;
+  }
+  const numberAt = new Int32Array(places);
+  const absent = new Uint8Array(places);
+  for (const gap of gaps) for (let i = 1; i < gap.size; i += 1) absent[(gap.after + i) % places] = 1;
+  let number = 0;
+  for (let place = 0; place < places; place += 1) if (absent[place] === 0) numberAt[place] = ++number;
+  for (let k = 0; k < out.length; k += 1) {
+    const place = Math.round((degrees[k]! * places) / 360);
+    out[k] = numberAt[((place % places) + places) % places]!;
+  }
+  return out;
+}
