@@ -13,7 +13,11 @@ export function Gutter({ lanes, narrow }: { lanes: readonly Lane[]; narrow: bool
         const { ticks, step } = valueTicks(lane.low, lane.high, lane.height < 130 ? 2 : 3);
         const unit = unitText(lane.signal.unit);
         return (
-          <div key={lane.signal.index} className="plot-gutter-lane" style={{ top: lane.top, height: lane.height }}>
+          <div
+            key={lane.signal.index}
+            className="plot-gutter-lane"
+            style={{ top: lane.top, height: lane.height }}
+          >
             <div className="plot-name">
               <LineSample role={words.role} />
               <b>{lane.signal.name}</b>

@@ -34,7 +34,7 @@ export function ScaleBar({ model, wheel, kind, narrow }: ScaleBarProps) {
     <div className="plot-scale" aria-hidden="true">
       {!narrow && <span className="plot-scale-name">{degrees ? 'crank' : 'time'}</span>}
       {!narrow && degrees && <span className="plot-scale-name plot-scale-tooth">tooth</span>}
-      <svg className="plot-scale-svg" width={width} height={narrow ? 52 : 76}>
+      <svg aria-hidden="true" className="plot-scale-svg" width={width} height={narrow ? 52 : 76}>
         {!narrow && degrees && <Turns scale={degrees} />}
         <path className="plot-field" d={box(false)} />
         <path className="plot-field plot-field-dark" d={box(true)} />
@@ -46,7 +46,13 @@ export function ScaleBar({ model, wheel, kind, narrow }: ScaleBarProps) {
           ].join('')}
         />
         {labels.map(({ at, text }) => (
-          <text key={`${text}${at.toFixed(0)}`} className="plot-label" x={at} y={barY - 8} textAnchor="middle">
+          <text
+            key={`${text}${at.toFixed(0)}`}
+            className="plot-label"
+            x={at}
+            y={barY - 8}
+            textAnchor="middle"
+          >
             {text}
           </text>
         ))}

@@ -34,7 +34,8 @@ export function Strip({ model, lines, marks, wheel }: StripProps) {
 
   const move = (part: Held['part'], seconds: number, start: View) => {
     if (part === 'window') model.show(panBy(start, seconds, model.bounds));
-    else if (part === 'from') model.show({ ...start, from: Math.min(start.from + seconds, start.to - least) });
+    else if (part === 'from')
+      model.show({ ...start, from: Math.min(start.from + seconds, start.to - least) });
     else model.show({ ...start, to: Math.max(start.to + seconds, start.from + least) });
   };
   const down = (part: Held['part']) => (event: PointerEvent<HTMLElement>) => {
@@ -86,7 +87,7 @@ export function Strip({ model, lines, marks, wheel }: StripProps) {
   return (
     <div className="plot-strip">
       <div ref={box} className="strip-box" onPointerDown={jump}>
-        <canvas ref={canvas} className="strip-canvas" aria-hidden="true" />
+        <canvas ref={canvas} className="strip-canvas" />
         {wheel?.marksS.length !== undefined &&
           wheel.marksS.length < 60 &&
           wheel.marksS.map((mark) => (
@@ -104,7 +105,11 @@ export function Strip({ model, lines, marks, wheel }: StripProps) {
           {grip('to', 'End of the view')}
         </div>
         {marks.map((mark) => (
-          <i key={mark.id} className="strip-dot" style={{ left: `${shareOfTime(whole, mark.from) * 100}%` }} />
+          <i
+            key={mark.id}
+            className="strip-dot"
+            style={{ left: `${shareOfTime(whole, mark.from) * 100}%` }}
+          />
         ))}
       </div>
       <div className="strip-names" aria-hidden="true">

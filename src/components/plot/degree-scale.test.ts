@@ -45,7 +45,9 @@ describe('degreeScale()', () => {
 
   it('stays in seconds where no tooth was seen', () => {
     expect(degreeScale(wheel, { from: 0, to: 0.09 }, 800)).toBeNull();
-    expect(degreeScale({ ...wheel, teethS: [], teethDeg: [], marksS: [] }, { from: 0, to: 1 }, 800)).toBeNull();
+    expect(
+      degreeScale({ ...wheel, teethS: [], teethDeg: [], marksS: [] }, { from: 0, to: 1 }, 800),
+    ).toBeNull();
   });
 
   it('draws at most a field every few pixels over hundreds of turns', () => {

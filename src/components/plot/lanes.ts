@@ -1,5 +1,5 @@
-import { extentOf } from './line-data.ts';
 import type { DecodedWindow } from './decode-window.ts';
+import { extentOf } from './line-data.ts';
 import { laneRange } from './ticks.ts';
 import type { PlotSignal } from './types.ts';
 

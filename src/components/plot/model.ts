@@ -29,12 +29,17 @@ export interface PlotModel {
 /** More device pixels than this a CSS pixel are not worth their bytes. */
 const MOST_RATIO = 2;
 
-export function createPlotModel(capture: PlotCapture, fetchWindow: FetchWindow, initial: View | null): PlotModel {
+export function createPlotModel(
+  capture: PlotCapture,
+  fetchWindow: FetchWindow,
+  initial: View | null,
+): PlotModel {
   const bounds = boundsOf(capture.startS, capture.durationS, capture.samples);
   const view = createStore<View>(initial === null ? bounds.whole : clampView(initial, bounds));
   const widthPx = createStore(0);
   const loader = createWindowLoader(bounds.whole, fetchWindow);
-  const devicePixels = () => Math.round(widthPx.get() * Math.min(globalThis.devicePixelRatio || 1, MOST_RATIO));
+  const devicePixels = () =>
+    Math.round(widthPx.get() * Math.min(globalThis.devicePixelRatio || 1, MOST_RATIO));
   const ask = () => {
     if (widthPx.get() > 0) loader.show(view.get(), devicePixels());
   };

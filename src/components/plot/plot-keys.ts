@@ -32,7 +32,8 @@ export function actOnKey(
   const view = model.view.get();
   const span = view.to - view.from;
   const cursor = model.cursorS.get();
-  const centre = cursor !== null && cursor > view.from && cursor < view.to ? cursor : (view.from + view.to) / 2;
+  const centre =
+    cursor !== null && cursor > view.from && cursor < view.to ? cursor : (view.from + view.to) / 2;
   switch (key) {
     case 'ArrowLeft':
     case 'ArrowRight': {

@@ -1,7 +1,13 @@
 import type { PlotWheel } from './types.ts';
 
 /** For tests: an N-minus-M wheel that turns evenly, complete turns from `firstMarkS` on. */
-export function evenWheel({ rpm = 200, turns = 3, firstMarkS = 0, places = 60, missing = 2 } = {}): PlotWheel {
+export function evenWheel({
+  rpm = 200,
+  turns = 3,
+  firstMarkS = 0,
+  places = 60,
+  missing = 2,
+} = {}): PlotWheel {
   const turnS = 60 / rpm;
   const marksS = Array.from({ length: turns + 1 }, (_, turn) => firstMarkS + turn * turnS);
   const teethS: number[] = [];

@@ -19,9 +19,7 @@ export function timeScale(view: View, widthPx: number): TimeScale {
   const px = (timeS: number) => (timeS - view.from) * pixelsPerS;
   const inMs = Math.max(Math.abs(view.from), Math.abs(view.to)) < 0.5;
   const label = (timeS: number) =>
-    inMs
-      ? `${fixed(timeS * 1e3, digitsFor(step * 1e3))} ms`
-      : `${fixed(timeS, digitsFor(step))} s`;
+    inMs ? `${fixed(timeS * 1e3, digitsFor(step * 1e3))} ms` : `${fixed(timeS, digitsFor(step))} s`;
   const first = Math.floor(view.from / step);
   const fields: { from: number; to: number; dark: boolean }[] = [];
   for (let i = first; i * step < view.to && fields.length < 200; i += 1) {

@@ -16,7 +16,12 @@ type Gesture =
   | { readonly kind: 'idle' }
   | { readonly kind: 'pan'; readonly startX: number; readonly view: View; readonly moved: boolean }
   | { readonly kind: 'pinch'; readonly times: readonly [number, number] }
-  | { readonly kind: 'drawing'; readonly tool: Exclude<Tool, 'move'>; readonly fromS: number; readonly moved: boolean };
+  | {
+      readonly kind: 'drawing';
+      readonly tool: Exclude<Tool, 'move'>;
+      readonly fromS: number;
+      readonly moved: boolean;
+    };
 
 /** A press that moves less than this is a tap. */
 const TAP_PX = 6;
@@ -47,7 +52,8 @@ export function useLaneGestures(
       if (a !== undefined && b !== undefined) gesture = { kind: 'pinch', times: [timeOf(a), timeOf(b)] };
     };
     const down = (event: PointerEvent) => {
-      if (event.button !== 0 || (event.target as HTMLElement).closest('button, [role=slider]') !== null) return;
+      if (event.button !== 0 || (event.target as HTMLElement).closest('button, [role=slider]') !== null)
+        return;
       element.setPointerCapture(event.pointerId);
       pointers.set(event.pointerId, event.clientX);
       if (pointers.size === 2) return beginPinch();
@@ -72,7 +78,8 @@ export function useLaneGestures(
         if (moved) model.show(panBy(view, (startX - event.clientX) * secondsPerPx(view), model.bounds));
       } else if (gesture.kind === 'drawing') {
         const toS = timeOf(event.clientX);
-        const moved = gesture.moved || Math.abs(toS - gesture.fromS) > TAP_PX * secondsPerPx(model.view.get());
+        const moved =
+          gesture.moved || Math.abs(toS - gesture.fromS) > TAP_PX * secondsPerPx(model.view.get());
         gesture = { ...gesture, moved };
         if (moved) model.span.set({ from: Math.min(gesture.fromS, toS), to: Math.max(gesture.fromS, toS) });
       }
@@ -91,7 +98,8 @@ export function useLaneGestures(
         }
         if (ended.moved || ended.tool === 'mark') model.tool.set('move');
       } else if (ended.kind === 'pan' && !ended.moved) {
-        const double = event.timeStamp - lastTap.at < DOUBLE_TAP_MS && Math.abs(event.clientX - lastTap.x) < 24;
+        const double =
+          event.timeStamp - lastTap.at < DOUBLE_TAP_MS && Math.abs(event.clientX - lastTap.x) < 24;
         lastTap = double ? { at: 0, x: 0 } : { at: event.timeStamp, x: event.clientX };
         if (double) model.show(model.bounds.whole);
         else model.cursorS.set(at);

@@ -7,8 +7,12 @@ import { createWindowLoader } from './window-loader.ts';
 const whole = { from: 0, to: 100 };
 
 function server() {
-  const asked: { request: WindowRequest; signal: AbortSignal; answer: () => void; fail: (e: unknown) => void }[] =
-    [];
+  const asked: {
+    request: WindowRequest;
+    signal: AbortSignal;
+    answer: () => void;
+    fail: (e: unknown) => void;
+  }[] = [];
   const fetchWindow = (request: WindowRequest, signal: AbortSignal) =>
     new Promise<ColumnsWindow>((resolve, reject) => {
       signal.addEventListener('abort', () => reject(new DOMException('aborted', 'AbortError')));
@@ -97,7 +101,10 @@ describe('createWindowLoader()', () => {
     asked[0]!.fail(new WindowRefused(409, 'The samples were read again since.'));
     await vi.advanceTimersByTimeAsync(60_000);
     expect(asked).toHaveLength(1);
-    expect(loader.state.get()).toMatchObject({ refused: true, trouble: 'The samples were read again since.' });
+    expect(loader.state.get()).toMatchObject({
+      refused: true,
+      trouble: 'The samples were read again since.',
+    });
     loader.close();
     vi.useRealTimers();
   });

@@ -40,7 +40,11 @@ const SETTLE_MS = 40;
 const RETRY_MS = [500, 1000, 2000, 4000, 8000];
 
 /** One request at a time; a stale one is aborted. The overview of the whole capture comes first and is never given up. */
-export function createWindowLoader(whole: View, fetchWindow: FetchWindow, timers: Timers = clock): WindowLoader {
+export function createWindowLoader(
+  whole: View,
+  fetchWindow: FetchWindow,
+  timers: Timers = clock,
+): WindowLoader {
   const state = createStore<Loaded>({ cache: emptyCache, trouble: null, refused: false });
   let running: { request: WindowRequest; abort: AbortController } | null = null;
   let overviewRunning = false;
@@ -61,7 +65,9 @@ export function createWindowLoader(whole: View, fetchWindow: FetchWindow, timers
   const failed = (error: unknown) => {
     if (closed || (error instanceof DOMException && error.name === 'AbortError')) return;
     const refused = error instanceof WindowRefused;
-    const words = refused ? error.message : 'No connection to the samples. What is drawn stays; trying again.';
+    const words = refused
+      ? error.message
+      : 'No connection to the samples. What is drawn stays; trying again.';
     state.set({ ...state.get(), trouble: words, refused });
     if (!refused) later(RETRY_MS[Math.min(tries++, RETRY_MS.length - 1)] ?? 8000);
   };

@@ -1,0 +1,209 @@
+import 'uplot/dist/uPlot.min.css';
+import './plot.css';
+import { type KeyboardEvent, useCallback, useEffect, useId, useMemo, useState } from 'react';
+import { circuitWords } from '../base/circuits.ts';
+import { Dialog } from '../base/Dialog.tsx';
+import { Cursor } from './Cursor.tsx';
+import { dashes } from './dashes.ts';
+import { Gutter } from './Gutter.tsx';
+import { type LaneLine, laneAtY, layLanes, stackHeight, valueAtY } from './lanes.ts';
+import { Balloons } from './Marks.tsx';
+import { placeMarks } from './mark-layout.ts';
+import type { PlotModel } from './model.ts';
+import { Overlay } from './Overlay.tsx';
+import { PlotSummary } from './PlotSummary.tsx';
+import { actOnKey, PLOT_KEYS } from './plot-keys.ts';
+import { ScaleBar, type ScaleKind } from './ScaleBar.tsx';
+import { SpanFigures, SpanHandles } from './Span.tsx';
+import { Strip } from './Strip.tsx';
+import { nearestValue } from './span-statistics.ts';
+import { Trace } from './Trace.tsx';
+import type { PlotEvidence, PlotMark, PlotWheel } from './types.ts';
+import { type Placed, useLaneGestures } from './useLaneGestures.ts';
+import { useSize } from './useSize.ts';
+import { useStore } from './useStore.ts';
+
+/** A place on the trace that a person chose for a mark, in the trace's own time and value. */
+export interface MarkPlace {
+  readonly kind: 'point' | 'range';
+  readonly signal: number | null;
+  readonly from: number;
+  readonly to: number | null;
+  readonly value: number | null;
+}
+
+export interface PlotProps {
+  model: PlotModel;
+  wheel: PlotWheel | null;
+  scale: ScaleKind;
+  marks?: readonly PlotMark[];
+  chosenMark?: string | null;
+  evidence?: PlotEvidence | null;
+  /** Indices of signals whose lanes are hidden. */
+  hidden?: ReadonlySet<number>;
+  onPlace?: (place: MarkPlace) => void;
+  onChooseMark?: (id: string) => void;
+  /** Called once when the first trace stands. */
+  onDrawn?: () => void;
+}
+
+const NO_MARKS: readonly PlotMark[] = [];
+const NONE_HIDDEN: ReadonlySet<number> = new Set();
+const NARROW_PX = 640;
+
+/** Lanes on one time axis with the scale above and the whole capture below. */
+export function Plot(props: PlotProps) {
+  const {
+    model,
+    wheel,
+    scale,
+    evidence = null,
+    marks = NO_MARKS,
+    hidden = NONE_HIDDEN,
+    onPlace,
+    onDrawn,
+  } = props;
+  const summary = useId();
+  const [help, setHelp] = useState(false);
+  const [outer, outerSize] = useSize<HTMLDivElement>();
+  const [frame, frameSize] = useSize<HTMLDivElement>();
+  const [stage, stageSize] = useSize<HTMLDivElement>();
+  const loaded = useStore(model.loader.state);
+  const view = useStore(model.view);
+  const tool = useStore(model.tool);
+  const { overview } = loaded.cache;
+  const narrow = outerSize.width > 0 && outerSize.width < NARROW_PX;
+  const width = stageSize.width;
+
+  const lines = useMemo<LaneLine[]>(() => {
+    const dash = dashes(model.capture.signals.map((signal) => signal.circuit));
+    return model.capture.signals
+      .map((signal, place) => ({ signal, role: circuitWords(signal.circuit).role, dash: dash[place] ?? [] }))
+      .filter(({ signal }) => !hidden.has(signal.index));
+  }, [model, hidden]);
+  const lanes = useMemo(
+    () => layLanes(lines, frameSize.height, overview),
+    [lines, frameSize.height, overview],
+  );
+  const height = stackHeight(lanes);
+  const placed = placeMarks(marks, lanes, view, width);
+
+  useEffect(() => model.widthPx.set(width), [model, width]);
+  useEffect(() => {
+    if (overview === null || onDrawn === undefined) return;
+    const frameId = requestAnimationFrame(() => requestAnimationFrame(onDrawn));
+    return () => cancelAnimationFrame(frameId);
+  }, [overview, onDrawn]);
+
+  const place = useCallback(
+    (at: Placed) => {
+      const lane = laneAtY(lanes, at.y);
+      const value = lane === null ? null : valueAtY(lane, at.y);
+      onPlace?.({
+        kind: at.dragged ? 'range' : 'point',
+        signal: lane?.signal.index ?? null,
+        from: at.from,
+        to: at.dragged ? at.to : null,
+        value: at.dragged || lane === null ? null : (onTrace(model, lane.signal, at.from) ?? value),
+      });
+    },
+    [lanes, model, onPlace],
+  );
+  useLaneGestures(stage, model, place);
+
+  const markHere = () => {
+    const at = model.cursorS.get() ?? (view.from + view.to) / 2;
+    const lane = lanes[0];
+    const value = lane === undefined ? null : onTrace(model, lane.signal, at);
+    onPlace?.({ kind: 'point', signal: lane?.signal.index ?? null, from: at, to: null, value });
+  };
+  const onKeyDown = (event: KeyboardEvent) => {
+    if (event.ctrlKey || event.metaKey || event.altKey || event.defaultPrevented) return;
+    if ((event.target as HTMLElement).closest('button, input, textarea, dialog') !== null) return;
+    const actions = { mark: markHere, help: () => setHelp(true) };
+    if (actOnKey(event.key, event.shiftKey, model, wheel, actions)) event.preventDefault();
+  };
+
+  return (
+    <div ref={outer} className={narrow ? 'plot plot-narrow' : 'plot'}>
+      {/* biome-ignore lint/a11y/noNoninteractiveTabindex: the plot takes keys of its own while it has focus */}
+      <div
+        className="plot-focus"
+        role="application"
+        aria-label={`Trace of ${lines.map((line) => line.signal.name).join(', ')}`}
+        aria-describedby={summary}
+        tabIndex={0}
+        data-own-keys
+        onKeyDown={onKeyDown}
+      >
+        <ScaleBar model={model} wheel={wheel} kind={scale} narrow={narrow} />
+        <div ref={frame} className="plot-frame">
+          <div className="plot-stack" style={{ height }}>
+            <Gutter lanes={lanes} narrow={narrow} />
+            <div ref={stage} className={`plot-stage plot-tool-${tool}`} style={{ height }}>
+              {width > 0 &&
+                lanes.map((lane) => (
+                  <Trace key={lane.signal.index} lane={lane} width={width} model={model} />
+                ))}
+              <Overlay
+                model={model}
+                lanes={lanes}
+                wheel={scale === 'degrees' ? wheel : null}
+                placed={placed}
+                evidence={evidence}
+                view={view}
+                width={width}
+              />
+              <Cursor model={model} lanes={lanes} wheel={wheel} width={width} />
+              <SpanHandles model={model} height={height} />
+              <Balloons
+                placed={placed}
+                chosen={props.chosenMark ?? null}
+                narrow={narrow}
+                onChoose={(id) => props.onChooseMark?.(id)}
+              />
+            </div>
+          </div>
+          {lanes.length === 0 && (
+            <p className="plot-empty">Every lane is hidden. Choose a signal above to see it.</p>
+          )}
+        </div>
+        <Strip model={model} lines={lines} marks={marks} wheel={wheel} />
+      </div>
+      <SpanFigures model={model} lanes={lanes} wheel={wheel} />
+      {loaded.trouble !== null && (
+        <p className="plot-trouble" role="status">
+          {loaded.trouble}
+        </p>
+      )}
+      <PlotSummary id={summary} model={model} lanes={lanes} wheel={wheel} />
+      <Dialog open={help} title="Keys while the trace has focus" onClose={() => setHelp(false)}>
+        <dl className="plot-keys">
+          {PLOT_KEYS.map(([keys, does]) => (
+            <div key={keys}>
+              <dt>
+                <kbd className="key">{keys}</kbd>
+              </dt>
+              <dd>{does}</dd>
+            </div>
+          ))}
+        </dl>
+        <form method="dialog" className="dialog-actions">
+          <button type="submit" className="button">
+            Close
+          </button>
+        </form>
+      </Dialog>
+    </div>
+  );
+}
+
+/** The trace's own value at a time, where the samples are at hand. */
+function onTrace(
+  model: PlotModel,
+  signal: PlotModel['capture']['signals'][number],
+  timeS: number,
+): number | null {
+  const window = model.loader.best(model.view.get(), model.devicePixels());
+  return window === null ? null : nearestValue(window, signal, timeS);
+}
