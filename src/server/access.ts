@@ -86,6 +86,12 @@ export function personOf(caller: Caller): PersonCaller {
   return caller;
 }
 
+/** The link's holder, where an endpoint is for those only. */
+export function shareOf(caller: Caller): ShareCaller {
+  if (caller.kind !== 'share') throw new ApiError('not_found');
+  return caller;
+}
+
 /**
  * The condition under which a person sees a capture, given the role held in its workshop (a value, or the membership's
  * column): practice captures are for their maker, instructors and owners; learners see nothing else.

@@ -24,6 +24,11 @@ const contains = (list: BlockList, address: string) =>
 
 let trusted: BlockList | undefined;
 
+function trustedProxies(): BlockList {
+  trusted ??= addressList(config().trustedProxies);
+  return trusted;
+}
+
 /**
  * The client's address: the socket's, unless a trusted proxy holds the socket; then the last address in X-Forwarded-For that
  * is not a trusted proxy's itself. Without trusted proxies the header is ignored.
@@ -31,8 +36,7 @@ let trusted: BlockList | undefined;
 export function clientAddress(
   socketAddress: string | undefined,
   forwardedFor: string | undefined,
-  proxies: BlockList = (trusted ??=
-    addressList(config().trustedProxies)),
+  proxies: BlockList = trustedProxies(),
 ): string {
   let address = plain(socketAddress ?? '');
   if (!contains(proxies, address)) return address;
