@@ -1,6 +1,4 @@
 import type { Findings } from '../capture.ts';
-import { sortedRange } from '../signal/range.ts';
-import { quantileSorted } from '../signal/statistics.ts';
 import { timeAt } from '../signal/time.ts';
 import { absent, type Notice, type Value } from '../value.ts';
 import { findFirings } from './coil-primary-voltage/firings.ts';
@@ -13,6 +11,7 @@ import { oncePerEvent } from './events/once-per-event.ts';
 import { stretch, whole } from './events/whole.ts';
 import { acCoupledNotice, upsideDownNotice } from './switched-load/input-notices.ts';
 import { onPeriods } from './switched-load/on-periods.ts';
+import { pointsDown } from './switched-load/points-down.ts';
 import { loadStates } from './switched-load/states.ts';
 import type { MeasuredSignal } from './types.ts';
 
@@ -27,12 +26,12 @@ export function measureCoilPrimaryVoltage(signal: MeasuredSignal): Findings {
   const { values, axis } = signal;
   const states = loadStates(values);
   if (!states) return noEvent(signal, null, 'no samples to measure');
-  if (pointsDown(values, states.rest, states.noise)) {
+  if (pointsDown(values, states)) {
     return { ...noEvent(signal, null, 'the trace is upside down'), notices: [upsideDownNotice(axis)] };
   }
   if (states.on === null) return noEvent(signal, states, 'no switch-off in the capture');
   const trace = { values, axis, states: { ...states, on: states.on } };
-  const periods = onPeriods(values, axis, trace.states, SHORTEST_DWELL_S);
+  const periods = onPeriods(values, axis, trace.states, { shortestS: SHORTEST_DWELL_S });
   if (periods.length === 0) return noEvent(signal, states, 'no switch-off in the capture');
   const firings = findFirings(trace, periods, signal.rail?.high ?? null);
 
@@ -129,13 +128,4 @@ export function measureCoilPrimaryVoltage(signal: MeasuredSignal): Findings {
   ];
   const notices: Notice[] = states.acCoupled ? [acCoupledNotice(axis)] : [];
   return { values: values_, notices: [...notices, ...coilNotices(signal, trace, firings, missed)] };
-}
-
-/** Rare samples far below the rest and none as far above: a load switched to ground kicks upwards only. */
-function pointsDown(values: Float32Array, rest: number, noise: number): boolean {
-  const sorted = sortedRange(values, 0, values.length, 1 << 21);
-  const up = sorted[sorted.length - 1]! - rest;
-  const down = rest - sorted[0]!;
-  const spreadOfMost = quantileSorted(sorted, 0.9) - quantileSorted(sorted, 0.1);
-  return rest < -6 * noise && down > 3 * up && down > 2.5 * Math.max(Math.abs(rest), spreadOfMost);
 }

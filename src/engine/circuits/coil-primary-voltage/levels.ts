@@ -1,40 +1,19 @@
 import { fitLine } from '../../signal/line-fit.ts';
 import { rangeMedian, sortedRange } from '../../signal/range.ts';
-import { indexAtOrAfter, timeAt } from '../../signal/time.ts';
-import type { Evidence } from '../../value.ts';
 import type { Observation } from '../events/once-per-event.ts';
 import { stretch } from '../events/whole.ts';
 import type { OnPeriod } from '../switched-load/on-periods.ts';
+import { outsideLevel } from '../switched-load/outside-level.ts';
 import type { CoilTrace, Firing } from './firing.ts';
 
-const SETTLING_S = 0.2e-3;
-
 /** Median of the samples outside events (driver on, kick, burn, ring), and where they are; null when there are none. */
-export function supplyLevel(
-  trace: CoilTrace,
-  periods: readonly OnPeriod[],
-  firings: readonly Firing[],
-): { readonly level: number | null; readonly evidence: readonly Evidence[] } {
+export function supplyLevel(trace: CoilTrace, periods: readonly OnPeriod[], firings: readonly Firing[]) {
   const { values, axis } = trace;
-  const parts: Array<readonly [number, number]> = [];
-  let from = 0;
-  for (const period of periods) {
-    const to = Math.floor(period.start ?? 0) - 1;
-    if (to - from > 2) parts.push([from, to]);
-    const firing = firings.find((one) => one.on.end === period.end);
-    const over = firing?.over ?? (period.end === null ? values.length : Math.ceil(period.end));
-    from = indexAtOrAfter(axis, timeAt(axis, Math.min(over, values.length - 1)) + SETTLING_S);
-  }
-  if (values.length - from > 2) parts.push([from, values.length]);
-  const total = parts.reduce((sum, [a, b]) => sum + b - a, 0);
-  const step = Math.max(1, Math.ceil(total / 200_000));
-  const kept = new Float32Array(Math.ceil(total / step) + parts.length);
-  let count = 0;
-  for (const [a, b] of parts) for (let i = a; i < b; i += step) kept[count++] = values[i]!;
-  return {
-    level: rangeMedian(kept, 0, count),
-    evidence: parts.map(([a, b]) => stretch(axis, a, b - 1)),
-  };
+  const events = periods.map((period) => ({
+    from: period.start ?? 0,
+    to: firings.find((one) => one.on.end === period.end)?.over ?? values.length,
+  }));
+  return outsideLevel(values, axis, events);
 }
 
 /** Median from 10 to 90 % of one driver-on time that is wholly in the capture. */

@@ -1,6 +1,6 @@
 import type { TimeAxis } from '../../capture.ts';
 import { crossings } from '../../signal/crossings.ts';
-import { rangeMedian } from '../../signal/range.ts';
+import { highestIn, rangeMedian } from '../../signal/range.ts';
 import { timeAt } from '../../signal/time.ts';
 import type { LoadStates } from './states.ts';
 
@@ -11,6 +11,15 @@ import type { LoadStates } from './states.ts';
 export interface OnPeriod {
   readonly start: number | null;
   readonly end: number | null;
+  /** Short releases inside it were bridged: the driver chops. */
+  readonly chopped: boolean;
+}
+
+export interface OnPeriodOptions {
+  /** Shorter stretches are no driver-on times. */
+  readonly shortestS: number;
+  /** Releases shorter than this, without a kick of half the swing above rest, belong to one driver-on time that is chopped. */
+  readonly bridgeS?: number;
 }
 
 /** Interruptions shorter than this are pick-up from other circuits, not a release. Common practice, no source. */
@@ -24,7 +33,7 @@ export function onPeriods(
   values: Float32Array,
   axis: TimeAxis,
   states: LoadStates & { readonly on: number },
-  shortestS: number,
+  { shortestS, bridgeS = 0 }: OnPeriodOptions,
 ): OnPeriod[] {
   const { rest, on } = states;
   const span = rest - on;
@@ -32,29 +41,38 @@ export function onPeriods(
   const found = crossings(values, { level, hysteresis: 0.4 * span });
   const periods: OnPeriod[] = [];
   let start: number | null = null;
+  let chopped = false;
   let open =
     found.count > 0 ? found.rising[0] === 1 : (rangeMedian(values, 0, values.length) ?? rest) < level;
   for (let k = 0; k < found.count; k += 1) {
     const at = found.at[k]!;
     if (found.rising[k] === 0) {
       const last = periods[periods.length - 1];
-      if (!open && last?.end != null && timeAt(axis, at) - timeAt(axis, last.end) < GLITCH_S) {
+      const gapS = last?.end == null ? Number.POSITIVE_INFINITY : timeAt(axis, at) - timeAt(axis, last.end);
+      const calm = () => values[highestIn(values, last?.end ?? at, at + 1)]! < rest + 0.5 * span;
+      if (!open && last && (gapS < GLITCH_S || (gapS < bridgeS && calm()))) {
         periods.pop();
         start = last.start;
-      } else start = at;
+        chopped = last.chopped || gapS >= GLITCH_S;
+      } else {
+        start = at;
+        chopped = false;
+      }
       open = true;
     } else if (open) {
       const end = release(values, axis, at, states);
-      periods.push({ start, end });
+      periods.push({ start, end, chopped });
       start = null;
+      chopped = false;
       open = false;
     }
   }
-  if (open) periods.push({ start, end: null });
+  if (open) periods.push({ start, end: null, chopped });
 
   const lengthS = (period: OnPeriod) =>
     timeAt(axis, period.end ?? values.length - 1) - timeAt(axis, period.start ?? 0);
   const steady = periods.filter((period) => {
+    if (period.chopped) return true;
     const from = period.start ?? 0;
     const to = period.end ?? values.length;
     const middle = rangeMedian(values, from + 0.1 * (to - from), to - 0.1 * (to - from));
