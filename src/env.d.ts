@@ -7,5 +7,7 @@ declare namespace App {
     /** `paper`, `dim`, or null when the system's setting decides. */
     theme: 'paper' | 'dim' | null;
     requestId: string;
+    /** Why the page that was asked for is not shown; read by src/pages/refused.astro. */
+    refusal?: import('./server/errors.ts').ApiError;
   }
 }

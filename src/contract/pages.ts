@@ -1,3 +1,4 @@
+import type { EndpointId } from './endpoints.ts';
 import type { AccessName } from './roles.ts';
 
 /** Pages and who may open them: a page without a row does not open. `{name}` stands for one path segment. */
@@ -5,6 +6,9 @@ export const PAGES = {
   '/': 'open',
   '/sign-in': 'open',
   '/sign-up': 'open',
+  '/refused': 'open',
+  '/404': 'open',
+  '/500': 'open',
   '/s/{secret}': 'shareLook',
   '/captures': 'see',
   '/captures/{id}': 'see',
@@ -20,3 +24,15 @@ export const PAGES = {
   '/teaching': 'self',
   '/workshop': 'self',
 } as const satisfies Record<string, AccessName>;
+
+/** Pages of one thing: the access door opens it by `{id}` for this endpoint, so the role held in its workshop counts. */
+export const PAGE_OPENS: Readonly<Partial<Record<keyof typeof PAGES, EndpointId>>> = {
+  '/captures/{id}': 'captures.get',
+  '/captures/{id}/wheel': 'captures.get',
+  '/captures/{id}/turns': 'captures.get',
+  '/captures/{id}/spectrum': 'captures.get',
+  '/captures/{id}/reading': 'captures.get',
+  '/captures/{id}/compare': 'comparisons.create',
+  '/comparisons/{id}': 'comparisons.get',
+  '/library/{id}': 'knownGoods.get',
+};

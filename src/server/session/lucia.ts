@@ -1,5 +1,5 @@
 import { DrizzlePostgreSQLAdapter } from '@lucia-auth/adapter-drizzle';
-import { Lucia, TimeSpan } from 'lucia';
+import { type Cookie, Lucia, TimeSpan } from 'lucia';
 import { db } from '../db/client.ts';
 import { person, session } from '../db/schema.ts';
 import { hashSecret, newSecret } from '../ids.ts';
@@ -39,17 +39,17 @@ export function lucia(): ReturnType<typeof makeLucia> {
   return made;
 }
 
-/** Starts a session; gives the Set-Cookie line. The one that this browser had ends. */
-export async function startSession(personId: string, earlierCookie: string | undefined): Promise<string> {
+/** Starts a session; gives its cookie. The session that this browser had ends. */
+export async function startSession(personId: string, earlierCookie: string | undefined): Promise<Cookie> {
   await endSession(earlierCookie);
   const secret = newSecret();
   await lucia().createSession(personId, {}, { sessionId: hashSecret(secret) });
-  return lucia().createSessionCookie(secret).serialize();
+  return lucia().createSessionCookie(secret);
 }
 
-/** Ends the session of a Cookie header, if there is one; gives the Set-Cookie line that clears it. */
-export async function endSession(cookieHeader: string | undefined): Promise<string> {
+/** Ends the session of a Cookie header, if there is one; gives the cookie that clears it. */
+export async function endSession(cookieHeader: string | undefined): Promise<Cookie> {
   const secret = cookieHeader === undefined ? null : lucia().readSessionCookie(cookieHeader);
   if (secret !== null && secret !== '') await lucia().invalidateSession(hashSecret(secret));
-  return lucia().createBlankSessionCookie().serialize();
+  return lucia().createBlankSessionCookie();
 }

@@ -1,4 +1,5 @@
 import { eq } from 'drizzle-orm';
+import type { Cookie } from 'lucia';
 import { db } from '../db/client.ts';
 import { person } from '../db/schema.ts';
 import { ApiError } from '../errors.ts';
@@ -15,8 +16,8 @@ export interface SignInRequest {
   readonly cookieHeader: string | undefined;
 }
 
-/** Signs in; gives the person and the Set-Cookie line. Unknown and wrong get the same answer after the same work. */
-export async function signIn(request: SignInRequest): Promise<{ personId: string; setCookie: string }> {
+/** Signs in; gives the person and the session’s cookie. Unknown and wrong get the same answer after the same work. */
+export async function signIn(request: SignInRequest): Promise<{ personId: string; cookie: Cookie }> {
   await limitSignIn(request.email, request.address);
   const [found] = await db()
     .select({
@@ -40,9 +41,9 @@ export async function signIn(request: SignInRequest): Promise<{ personId: string
     throw new ApiError('wrong_sign_in');
   }
   await forgetSignInTries(request.email);
-  const setCookie = await startSession(found.id, request.cookieHeader);
+  const cookie = await startSession(found.id, request.cookieHeader);
   await recordAudit({ ...whoOf(found), action: 'signed in', subject: '', address: request.address });
-  return { personId: found.id, setCookie };
+  return { personId: found.id, cookie };
 }
 
 const whoOf = (found: { id: string; name: string; workshopId: string | null }) => ({

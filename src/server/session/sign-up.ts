@@ -1,4 +1,5 @@
 import { eq } from 'drizzle-orm';
+import type { Cookie } from 'lucia';
 import type { z } from 'zod';
 import type { signUpInput } from '../../contract/areas/workshop.ts';
 import { config } from '../config.ts';
@@ -17,7 +18,7 @@ export interface SignUpRequest extends z.output<typeof signUpInput> {
 }
 
 /** Makes a person, their workshop with them as owner, and signs them in. */
-export async function signUp(request: SignUpRequest): Promise<{ personId: string; setCookie: string }> {
+export async function signUp(request: SignUpRequest): Promise<{ personId: string; cookie: Cookie }> {
   if (config().signUp !== 'open') throw new ApiError('sign_up_closed');
   await limitSignUp(request.address);
   const passwordHash = await hashPassword(request.password);
@@ -49,5 +50,5 @@ export async function signUp(request: SignUpRequest): Promise<{ personId: string
     );
     return made.id;
   });
-  return { personId, setCookie: await startSession(personId, request.cookieHeader) };
+  return { personId, cookie: await startSession(personId, request.cookieHeader) };
 }

@@ -5,6 +5,6 @@ import { signIn } from '../../../server/session/sign-in.ts';
 
 export const POST = route('session.signIn', async ({ body, address, request }) => {
   const cookieHeader = request.headers.get('cookie') ?? undefined;
-  const { personId, setCookie } = await signIn({ ...body, address, cookieHeader });
-  return reply(await me(personId, 'session'), { headers: { 'Set-Cookie': setCookie } });
+  const { personId, cookie } = await signIn({ ...body, address, cookieHeader });
+  return reply(await me(personId, 'session'), { headers: { 'Set-Cookie': cookie.serialize() } });
 });

@@ -5,6 +5,6 @@ import { signUp } from '../../../server/session/sign-up.ts';
 
 export const POST = route('session.signUp', async ({ body, address, request }) => {
   const cookieHeader = request.headers.get('cookie') ?? undefined;
-  const { personId, setCookie } = await signUp({ ...body, address, cookieHeader });
-  return reply(await me(personId, 'session'), { headers: { 'Set-Cookie': setCookie } });
+  const { personId, cookie } = await signUp({ ...body, address, cookieHeader });
+  return reply(await me(personId, 'session'), { headers: { 'Set-Cookie': cookie.serialize() } });
 });

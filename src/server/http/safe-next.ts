@@ -1,0 +1,12 @@
+const HERE = 'http://here.invalid';
+
+/** A path of our own to go to after signing in; anything that a browser might read as another site becomes the fallback. */
+export function safeNext(next: string | null | undefined, fallback = '/captures'): string {
+  if (!next?.startsWith('/') || /[\\\p{Cc}]/u.test(next)) return fallback;
+  try {
+    const url = new URL(next, HERE);
+    return url.origin === HERE && !next.startsWith('//') ? url.pathname + url.search + url.hash : fallback;
+  } catch {
+    return fallback;
+  }
+}
