@@ -8,6 +8,8 @@ const ABOVE_NOISE = 4;
 /** The speed at an angle is taken over this part of a compression's interval. */
 const WINDOW = 1 / 6;
 const STEPS = 32;
+/** Deviation of one cylinder's slow-down from cycle to cycle, as a share of the mean, above which nothing is said. */
+const MOST_CHANGE = 0.35;
 
 /**
  * Compressions as the crank feels them: in each 720 / cylinders degrees, centred on the lowest speed,
@@ -67,6 +69,11 @@ export function compressionBalance(speeds: ToothSpeeds, cylinders: number | null
   );
   const means = groups.map((group) => spread(group)!);
   const overall = means.reduce((sum, group) => sum + group.mean, 0) / cylinders;
+  const cycles = Math.min(...groups.map((group) => group.length));
+  const pooled = Math.sqrt(means.reduce((sum, group) => sum + group.sd ** 2, 0) / cylinders);
+  if (cycles >= 2 && pooled > MOST_CHANGE * overall) {
+    return absent(KEY, '%', 'the slow-downs differ more from cycle to cycle than from cylinder to cylinder');
+  }
   const percent = (s: number) => 100 * (s / overall - 1);
   const spanOf = (start: number): Evidence => ({
     from: timeAtDeg(begin + half + start * step),
@@ -76,7 +83,7 @@ export function compressionBalance(speeds: ToothSpeeds, cylinders: number | null
     key: KEY,
     value: means.map((group) => percent(group.mean)),
     unit: '%',
-    n: Math.min(...groups.map((group) => group.length)),
+    n: cycles,
     min: means.map((group) => percent(group.min)),
     max: means.map((group) => percent(group.max)),
     sd: means.map((group) => (100 * group.sd) / overall),

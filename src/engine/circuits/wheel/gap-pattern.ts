@@ -43,7 +43,7 @@ export function findGapPattern(times: Float64Array): PatternResult {
     if (found && (!best || found.rank > best.rank)) best = found;
   }
   if (best) {
-    const pattern = follow(best.laid, best.turn, best.template);
+    const pattern = follow(resized(best), best.turn, best.template);
     if (pattern) return { ok: true, pattern };
   }
   const added = findAdded(placed);
@@ -122,6 +122,36 @@ function laidWith(placed: Placed, sizeOf: (ratio: number) => number): Laid {
     place[k + 1] = place[k]! + size;
     if (size > 1) features.push({ place: place[k]!, size, event: k + 1 });
   }
+  return { placed, place, features };
+}
+
+/**
+ * On a wheel with one gap, a gap misread by a place because of jitter still stands one turn of teeth from its like:
+ * it is given the size of the others.
+ */
+function resized({ laid, template, turn }: Found): Laid {
+  const [gap] = template;
+  if (template.length !== 1 || !gap) return laid;
+  const { placed } = laid;
+  const teeth = turn - gap.size + 1;
+  const good = new Set(laid.features.filter((f) => f.size === gap.size).map((f) => f.event));
+  const usual = median(Array.from(good, (event) => placed.ratio[event - 1]!))!;
+  const sizes = new Map<number, number>();
+  for (const { event, size } of laid.features) {
+    const near = Math.abs(placed.ratio[event - 1]! / usual - 1) < 0.4;
+    if (size !== gap.size && near && (good.has(event - teeth) || good.has(event + teeth)))
+      sizes.set(event, gap.size);
+  }
+  if (sizes.size === 0) return laid;
+  const place = new Int32Array(laid.place.length);
+  for (let k = 1; k < place.length; k += 1) {
+    place[k] = place[k - 1]! + (sizes.get(k) ?? laid.place[k]! - laid.place[k - 1]!);
+  }
+  const features = laid.features.map((f) => ({
+    ...f,
+    place: place[f.event - 1]!,
+    size: sizes.get(f.event) ?? f.size,
+  }));
   return { placed, place, features };
 }
 

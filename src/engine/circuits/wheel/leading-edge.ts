@@ -4,37 +4,58 @@ import type { TwoLevels } from './two-levels.ts';
 
 /** A level held this much longer than its like around it is the gap's. */
 const LONG = 1.5;
+/** The level after it belongs to the gap too when it is, as a rule, held this much longer than its like. */
+const ALSO_LONG = 1.25;
 
 /**
- * Which edge is the tooth event: the one that ends the gap's long level. The level that is now and then held much
- * longer than usual is the gap's; where both are, the one that makes a wheel, and the longer. Without a gap: rising.
+ * Which edge is the tooth event: the one that ends the gap's long level. Where the next level is longer than usual as
+ * well (a pick-up's signal squared by its receiver swings back late in the gap), the gap ends with that one. Where both
+ * edges could be, the one that makes a wheel decides. Without a gap: rising.
  */
 export function chooseEdge(levels: TwoLevels): { readonly rising: boolean } {
   const low = longHolds(levels, 0);
   const high = longHolds(levels, 1);
   if (low.count === 0 && high.count === 0) return { rising: true };
-  if (high.count === 0) return { rising: true };
-  if (low.count === 0) return { rising: !findGapPattern(levels.fallingS).ok };
-  const rises = findGapPattern(levels.risingS).ok;
-  const falls = findGapPattern(levels.fallingS).ok;
-  if (rises !== falls) return { rising: rises };
-  return { rising: !falls || low.longest >= high.longest };
+  // The end of a long low level is a rising edge, that of a long high level after it a falling one.
+  const lowFirst = low.count > 0 && (high.count === 0 || low.longest >= high.longest);
+  let rising = lowFirst ? !(low.after > ALSO_LONG) : high.after > ALSO_LONG;
+  const made = findGapPattern(rising ? levels.risingS : levels.fallingS).ok;
+  if (!made && findGapPattern(rising ? levels.fallingS : levels.risingS).ok) rising = !rising;
+  else if (!made) rising = true;
+  return { rising };
 }
 
-function longHolds(levels: TwoLevels, level: 0 | 1): { count: number; longest: number } {
+interface LongHolds {
+  readonly count: number;
+  /** Middle of how much longer than usual the long ones are. */
+  readonly longest: number;
+  /** Middle of how much longer than usual the opposite level right after them is held. */
+  readonly after: number;
+}
+
+function longHolds(levels: TwoLevels, level: 0 | 1): LongHolds {
   const { edgesS, rising } = levels;
-  const held: number[] = [];
-  for (let k = 0; k + 1 < edgesS.length; k += 1) {
-    // From a rising edge on the signal is high.
-    if (rising[k] === level) held.push(edgesS[k + 1]! - edgesS[k]!);
-  }
+  const held = Float64Array.from(
+    { length: Math.max(0, edgesS.length - 1) },
+    (_, k) => edgesS[k + 1]! - edgesS[k]!,
+  );
+  const overUsual = (k: number) => {
+    const around = [k - 6, k - 4, k - 2, k + 2, k + 4, k + 6]
+      .filter((j) => j >= 0 && j < held.length)
+      .map((j) => held[j]!);
+    return around.length < 2 ? 1 : held[k]! / median(around)!;
+  };
   const ratios: number[] = [];
+  const after: number[] = [];
   for (let k = 1; k + 1 < held.length; k += 1) {
-    const around = [...held.slice(Math.max(0, k - 3), k), ...held.slice(k + 1, k + 4)];
-    const ratio = held[k]! / median(around)!;
-    if (ratio > LONG) ratios.push(ratio);
+    // From a rising edge on the signal is high.
+    if (rising[k] !== level) continue;
+    const ratio = overUsual(k);
+    if (ratio <= LONG) continue;
+    ratios.push(ratio);
+    after.push(overUsual(k + 1));
   }
-  return { count: ratios.length, longest: median(ratios) ?? 0 };
+  return { count: ratios.length, longest: median(ratios) ?? 0, after: median(after) ?? 1 };
 }
 
 /** Width of the pulse that begins at each tooth event, over the middle of the intervals around it. */
@@ -46,9 +67,9 @@ export function pulseWidths(levels: TwoLevels, risingEvents: boolean): Float64Ar
     if ((rising[k] === 1) === risingEvents) widths.push(edgesS[k + 1]! - edgesS[k]!);
   }
   return Float64Array.from(widths, (width, i) => {
-    const from = Math.max(0, i - 6);
     const near: number[] = [];
-    for (let k = from; k < Math.min(events.length - 1, i + 6); k += 1) near.push(events[k + 1]! - events[k]!);
+    for (let k = Math.max(0, i - 6); k < Math.min(events.length - 1, i + 6); k += 1)
+      near.push(events[k + 1]! - events[k]!);
     return width / (median(near) ?? width);
   });
 }
