@@ -1,8 +1,8 @@
 import type { Overlay, Shape, ShapePart } from './types.ts';
 
 /** Parts of the reference's span by which two traces must part, and for how long, before it is said. */
-const APART = 0.3;
-const LEAST_LENGTH = { deg: 1.5, s: 0.00002 } as const;
+const APART = 0.2;
+const LEAST_LENGTH = { deg: 1, s: 0.00002 } as const;
 const MOST_PARTS = 24;
 
 function span(values: readonly (number | null)[]): number {
@@ -16,7 +16,7 @@ function span(values: readonly (number | null)[]): number {
   return high - low;
 }
 
-/** Where two traces on one axis part by more than 30 % of the reference's span, and the root mean square of the difference. */
+/** Where two traces on one axis part by more than a fifth of the reference’s span, and the root mean square of the difference. */
 export function shapeOf(overlay: Overlay | null): Shape {
   if (!overlay) return { difference: null, parts: [] };
   const { here, reference, start, step, axis } = overlay;
