@@ -16,3 +16,17 @@ export const timesKey = (captureId: string, samplesVersion: number) =>
 export const knownGoodSamplesKey = (knownGoodId: string, signal: number) =>
   `known-goods/${knownGoodId}/${signal}.f32`;
 export const knownGoodTimesKey = (knownGoodId: string) => `known-goods/${knownGoodId}/times.f64`;
+
+/** Times at the pyramid's block bounds of an uneven axis: see src/server/storage/pyramid-file.ts. */
+export const timesPyramidKey = (captureId: string, samplesVersion: number) =>
+  `captures/${captureId}/${samplesVersion}/times.pyramid`;
+
+/** Everything made from a capture's original, and its original. */
+export const capturePrefix = (captureId: string) => `captures/${captureId}/`;
+export const originalKey = (captureId: string) => `captures/${captureId}/original`;
+
+/** The samples version that a key belongs to, or null for the original. */
+export function versionOfKey(key: string): number | null {
+  const match = /^captures\/[^/]+\/(\d+)\//.exec(key);
+  return match === null ? null : Number(match[1]);
+}

@@ -1,0 +1,76 @@
+import type { z } from 'zod';
+import { windowQuery } from '../../contract/areas/captures.ts';
+import type { Caller } from '../../server/access.ts';
+import { authorize, type CaptureRecord, openCapture } from '../../server/access.ts';
+import { shareCaller } from '../../server/captures/sharing/share-caller.ts';
+import { captureWindow } from '../../server/captures/window/capture-window.ts';
+import { Fresh } from '../../server/captures/window/fresh.ts';
+import { resolveCaller } from '../../server/http/caller.ts';
+import { limitApi } from '../../server/http/limits.ts';
+import { hashSecret } from '../../server/ids.ts';
+import { readQuery } from '../query.ts';
+import type { FrontRequest } from '../types.ts';
+
+interface Opened {
+  readonly caller: Caller;
+  readonly row: CaptureRecord;
+}
+
+/**
+ * Who is asking and what may be seen, looked up for every request anew; several at the same moment by the same caller for the
+ * same capture share one look-up that began after all of them came.
+ */
+const doors = new Fresh<Opened>();
+
+/** GET /captures/{id}/window */
+export async function windowEndpoint(front: FrontRequest): Promise<void> {
+  const { header, address } = front;
+  const query = readQuery(windowQuery, front.url.searchParams);
+  const id = front.params.id ?? '';
+  const who = hashSecret(`${header('authorization') ?? ''}\n${header('cookie') ?? ''}`);
+  const { caller, row } = await doors.get(`${who} ${id}`, async () => {
+    const asking = await resolveCaller({ header, address });
+    return { caller: asking, row: await openCapture(asking, 'captures.window', id) };
+  });
+  await limitApi(caller, address);
+  await answer(front, row, query, false);
+}
+
+/** GET /shared/{secret}/window: the same, never kept by anybody on the way. */
+export async function sharedWindowEndpoint(front: FrontRequest): Promise<void> {
+  const query = readQuery(windowQuery, front.url.searchParams);
+  const secret = front.params.secret ?? '';
+  const { caller, row } = await doors.get(`share ${hashSecret(secret)}`, async () => {
+    const asking = await shareCaller(secret);
+    authorize('shared.window', asking);
+    return { caller: asking, row: await openCapture(asking, 'shared.window', asking.captureId) };
+  });
+  await limitApi(caller, front.address);
+  await answer(front, row, query, true);
+}
+
+async function answer(
+  { request, response, header }: FrontRequest,
+  row: CaptureRecord,
+  query: z.output<typeof windowQuery>,
+  shared: boolean,
+): Promise<void> {
+  const { headers, body } = await captureWindow(row, query);
+  const etag = `"w${row.samplesVersion}"`;
+  const caching = shared
+    ? { 'Cache-Control': 'no-store' }
+    : query.v === undefined
+      ? { 'Cache-Control': 'private, no-cache', ETag: etag }
+      : { 'Cache-Control': 'private, max-age=31536000, immutable' };
+  if (!shared && query.v === undefined && header('if-none-match') === etag) {
+    response.writeHead(304, caching).end();
+    return;
+  }
+  response.writeHead(200, {
+    'Content-Type': 'application/octet-stream',
+    'Content-Length': body.length,
+    ...headers,
+    ...caching,
+  });
+  response.end(request.method === 'HEAD' ? undefined : body);
+}

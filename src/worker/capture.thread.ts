@@ -1,0 +1,86 @@
+import { parentPort, workerData } from 'node:worker_threads';
+import type { CaptureInput, SignalInput, TimeAxis } from '../engine/capture.ts';
+import { measureCapture } from '../engine/measure.ts';
+import { readTable } from '../engine/reading/read.ts';
+import { ApiError } from '../server/errors.ts';
+import { isStoreAway } from '../server/storage/away.ts';
+import { loadAxis, loadSamples } from '../server/storage/load-samples.ts';
+import { writeSamples, writeTimes } from '../server/storage/write-samples.ts';
+import { draftSignals, requested } from './draft-signals.ts';
+import { storedAxis } from './stored-axis.ts';
+import type { SignalDraft, ThreadMessage, ThreadTask } from './thread-messages.ts';
+import { BadArchive } from './unpack/bad-archive.ts';
+import { openOriginal } from './unpack/open-original.ts';
+
+/**
+ * Reads or measures one capture in a thread of its own, so that the worker stays answerable and can end it at any moment.
+ * It talks to the store only; what it finds goes to the worker as messages, which writes it down.
+ */
+const task = workerData as ThreadTask;
+const tell = (message: ThreadMessage) => parentPort?.postMessage(message);
+
+/** How much of the reading phase the reading itself is; the rest is writing samples. */
+const READING_PART = 0.85;
+
+async function run(): Promise<void> {
+  const input = task.kind === 'read' ? await read() : await load();
+  if (input === null) return;
+  tell({ type: 'progress', phase: 'measuring', part: 0.1 });
+  const { drafts, ...capture } = input;
+  tell({ type: 'measured', findings: measureCapture(capture), signals: drafts });
+}
+
+type Loaded = CaptureInput & { readonly drafts: readonly SignalDraft[] };
+
+async function read(): Promise<Loaded | null> {
+  const { captureId, originalKey, bytes, samplesVersion, needsSha256, unpackedLimitBytes } = task;
+  const original = await openOriginal(originalKey, bytes, { needsSha256, unpackedLimitBytes });
+  const table = await readTable(original.text, {
+    hints: task.hints,
+    onProgress: (taken) => {
+      // Of a packed file the length is not known beforehand: ten to one is usual for text.
+      const part = Math.min(1, taken / Math.max(1, original.packed ? bytes * 10 : bytes));
+      tell({ type: 'progress', phase: 'reading', part: part * READING_PART });
+    },
+  });
+  const sha256 = await original.sha256();
+  if (!table.ok) {
+    tell({ type: 'unreadable', failure: table, sha256 });
+    return null;
+  }
+  const { axis, columns, reading, preview } = table;
+  const drafts = draftSignals(columns, axis, task.signalRequests);
+  await writeTimes(captureId, samplesVersion, axis);
+  for (const [index, { samples }] of columns.entries()) {
+    await writeSamples(captureId, samplesVersion, index, samples);
+    const part = READING_PART + ((1 - READING_PART) * (index + 1)) / columns.length;
+    tell({ type: 'progress', phase: 'reading', part });
+  }
+  const stored = storedAxis(axis);
+  tell({ type: 'read', reading, preview, axis: stored, samples: stored.count, signals: drafts, sha256 });
+  const signals = drafts.map((draft) => signalInput(draft, columns[draft.index]!.samples));
+  return { axis, signals, cylinders: task.cylinders, drafts };
+}
+
+async function load(): Promise<Loaded> {
+  const row = { id: task.captureId, samplesVersion: task.samplesVersion, axis: task.axis };
+  const drafts = task.signals.map((draft) => requested(draft, task.signalRequests));
+  const axis: TimeAxis = await loadAxis(row);
+  const signals: SignalInput[] = [];
+  for (const draft of drafts) signals.push(signalInput(draft, await loadSamples(row, draft.index)));
+  return { axis, signals, cylinders: task.cylinders, drafts };
+}
+
+function signalInput(draft: SignalDraft, samples: Float32Array): SignalInput {
+  const { index, name, circuit, unit, factor, offset, rail } = draft;
+  return { index, name, circuit, unit, factor, offset, samples, ...(rail === null ? {} : { rail }) };
+}
+
+try {
+  await run();
+} catch (error) {
+  if (error instanceof BadArchive) tell({ type: 'unreadable', failure: error.toFailure(), sha256: null });
+  else if (isStoreAway(error) || (error instanceof ApiError && error.code === 'service_away'))
+    tell({ type: 'away', message: error instanceof Error ? error.message : String(error) });
+  else throw error;
+}
