@@ -15,7 +15,7 @@ import { dirname, join } from 'node:path';
 import { setTimeout as sleep } from 'node:timers/promises';
 import { PlainError } from '../scripts/lib/plain-error.mjs';
 import { freePort } from '../scripts/lib/ports.mjs';
-import { identityOf, isRunning, processesIn } from '../scripts/lib/process-identity.mjs';
+import { identityOf, processesIn } from '../scripts/lib/process-identity.mjs';
 import { runAlone } from '../scripts/lib/run-alone.mjs';
 import { runProgram } from '../scripts/lib/run-program.mjs';
 import { recorded } from '../scripts/lib/run-recorded.mjs';
@@ -212,9 +212,9 @@ async function stopServersIn(cluster, say) {
     });
   if (processesIn(folder).length > 0)
     throw new PlainError(`Another database server still works in ${cluster}. Nothing was started.`);
-  // Nobody works here, so a pid file names a process that is long gone, or by now a stranger's.
-  const identity = pid > 0 ? identityOf(pid) : null;
-  if (identity && isRunning(identity)) rmSync(pidFile, { force: true });
+  // Nobody works here, so a pid file names a process that ended and was not yet collected by its parent, or a stranger
+  // with the same number. PostgreSQL would take either for another server.
+  if (pid > 0 && identityOf(pid)) rmSync(pidFile, { force: true });
 }
 
 /** @param {{ instance: Instance, cluster: string, binaries: string, user: User, say: Say }} options */

@@ -36,6 +36,7 @@ export async function build({ say = tellTerminal, run = runProgram } = {}) {
       for (const folder of ['entry', 'worker', 'tools'])
         rmSync(join(dist, folder), { recursive: true, force: true });
       await esbuild.build(bundleOptions(dist, programs()));
+      await esbuild.stop();
       await compressFiles(join(dist, 'client'));
     });
     writeFileAtomically(mark, `${hash}\n`, 0o644);

@@ -47,8 +47,8 @@ export async function prepareCheckout(say, run = runProgram) {
  */
 export async function startCopy({ dataDir, host, port: wanted, origin: given, durable = true, say, onStop }) {
   const instance = await openInstance({ dataDir, say });
-  onStop(instance.stop);
   const port = await claimPort(host, wanted);
+  onStop(instance.stop);
   await prepareCheckout(say, recorded(instance, 'set-up'));
 
   const services = await startServices({ dataDir, say, durable, instance });

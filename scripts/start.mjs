@@ -21,7 +21,11 @@ async function main() {
     origin: process.env.GAPMARK_ORIGIN || undefined,
     say,
     onStop: (given) => {
-      stop = given;
+      stop = async () => {
+        say('- Stopping everything …');
+        await given();
+        say('Stopped.');
+      };
     },
   });
   say(`- Mail that this copy sends is caught here: ${copy.mailPage}`);
@@ -41,11 +45,4 @@ function portFrom(text) {
   throw new PlainError(`PORT is “${text}”; it must be a number from 0 (any) to 65535.`);
 }
 
-await runMain(main, {
-  stop: async () => {
-    say('- Stopping everything …');
-    await stop();
-    say('Stopped.');
-  },
-  stopped: 0,
-});
+await runMain(main, { stop: () => stop(), stopped: 0 });

@@ -27,7 +27,9 @@ export async function installPackages(say, run = runProgram) {
   try {
     if (packagesFit()) return;
     await step(say, 'Installing packages (npm ci), about half a minute', async () => {
-      const { code, output } = await run('npm', ['ci', '--no-audit', '--no-fund'], { cwd: root });
+      const { code, output } = await run('npm', ['ci', '--include=dev', '--no-audit', '--no-fund'], {
+        cwd: root,
+      });
       if (code !== 0) throw new PlainError(`The packages could not be installed:\n${output.trim()}`);
     });
   } finally {
