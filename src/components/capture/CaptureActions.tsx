@@ -1,0 +1,51 @@
+import { lazy, Suspense, useState } from 'react';
+import type { CaptureJson } from '../../contract/areas/captures.ts';
+import { Icon } from '../base/Icon.tsx';
+
+const ShareDialog = lazy(() => import('../share/ShareDialog.tsx').then((m) => ({ default: m.ShareDialog })));
+const KeepDialog = lazy(() => import('./KeepDialog.tsx').then((m) => ({ default: m.KeepDialog })));
+
+/** Share, compare, keep: on a phone share stays in sight and the rest folds into a menu. */
+export function CaptureActions({ capture }: { capture: CaptureJson }) {
+  const [open, setOpen] = useState<'share' | 'keep' | null>(null);
+  const close = () => setOpen(null);
+  return (
+    <>
+      <details className="capture-more">
+        <summary className="button button-icon" aria-label="More">
+          <Icon name="more" />
+        </summary>
+        <div>
+          <button type="button" className="button" onClick={() => setOpen('keep')}>
+            <Icon name="keep" small />
+            Keep as known-good
+          </button>
+          <a className="button" href={`/captures/${capture.id}/compare`}>
+            <Icon name="compare" small />
+            Compare
+          </a>
+          <a className="button" href={`/captures/${capture.id}/reading`}>
+            <Icon name="file" small />
+            How the file was read
+          </a>
+        </div>
+      </details>
+      <button type="button" className="button capture-wide" onClick={() => setOpen('keep')}>
+        <Icon name="keep" small />
+        Keep as known-good
+      </button>
+      <a className="button capture-wide" href={`/captures/${capture.id}/compare`}>
+        <Icon name="compare" small />
+        Compare
+      </a>
+      <button type="button" className="button button-main" onClick={() => setOpen('share')}>
+        <Icon name="share" small />
+        <span className="capture-share-word">Share</span>
+      </button>
+      <Suspense fallback={null}>
+        {open === 'share' && <ShareDialog capture={capture} onClose={close} />}
+        {open === 'keep' && <KeepDialog capture={capture} onClose={close} />}
+      </Suspense>
+    </>
+  );
+}

@@ -1,0 +1,199 @@
+import './capture.css';
+import { lazy, Suspense, useCallback, useMemo, useState } from 'react';
+import type { MarkJson } from '../../contract/areas/marks.ts';
+import { api, sentenceOf } from '../base/api.ts';
+import { Message } from '../base/Message.tsx';
+import { UndoBar } from '../base/UndoBar.tsx';
+import { type MarkPlace, Plot } from '../plot/Plot.tsx';
+import type { ScaleKind } from '../plot/ScaleBar.tsx';
+import type { PlotEvidence } from '../plot/types.ts';
+import { CaptureActions } from './CaptureActions.tsx';
+import { CaptureHead } from './CaptureHead.tsx';
+import { CaptureGone, CaptureSkeleton, CaptureState } from './CaptureState.tsx';
+import { FootLine } from './FootLine.tsx';
+import type { MarkDraft } from './MarkDialog.tsx';
+import { MarksList } from './MarksList.tsx';
+import { type Chosen, Numbers } from './Numbers.tsx';
+import { Sheet } from './Sheet.tsx';
+import { ThumbTools, TraceTools } from './TraceTools.tsx';
+import { isPending, useCapture, useFindings, useMarks } from './use-capture.ts';
+import { usePlotModel, useViewInAddress } from './usePlotModel.ts';
+import { bringIntoView, openingView, viewFromAddress } from './view-of.ts';
+
+const MarkDialog = lazy(() => import('./MarkDialog.tsx').then((m) => ({ default: m.MarkDialog })));
+
+const NO_MARKS: readonly MarkJson[] = [];
+const NARROW = '(width < 40rem)';
+
+/** The capture's first tab: the trace, its numbers and marks. Knows only the id; everything else it asks for. */
+export function CaptureTrace({ id }: { id: string }) {
+  const loaded = useCapture(id);
+  const capture = loaded.data?.data;
+  const { measurements, wheel: wheelAnswer } = useFindings(id, capture);
+  const there = capture !== undefined && capture.samples > 0 && capture.status !== 'failed';
+  const marksAnswer = useMarks(id, there);
+  const marks = marksAnswer.data?.items ?? NO_MARKS;
+  const wheel = wheelAnswer.data ?? null;
+  const wheelKnown =
+    capture?.status !== 'ready' || wheelAnswer.data !== undefined || wheelAnswer.error !== undefined;
+
+  const [hidden, setHidden] = useState<ReadonlySet<number>>(new Set());
+  const [scale, setScale] = useState<ScaleKind>('degrees');
+  const [chosen, setChosen] = useState<Chosen | null>(null);
+  const [step, setStep] = useState(0);
+  const [chosenMark, setChosenMark] = useState<string | null>(null);
+  const [draft, setDraft] = useState<MarkDraft | null>(null);
+  const [deleted, setDeleted] = useState<MarkJson | null>(null);
+  const [trouble, setTrouble] = useState<string | null>(null);
+
+  const model = usePlotModel({
+    capture: there && wheelKnown ? capture : null,
+    address: `/api/v1/captures/${id}/window`,
+    version: capture?.samplesVersion ?? null,
+    opening: () => viewFromAddress(location.search) ?? openingView(wheel, matchMedia(NARROW).matches),
+    onRefused: () => void loaded.mutate(),
+  });
+  useViewInAddress(model);
+
+  const evidence = useMemo<PlotEvidence | null>(
+    () =>
+      chosen === null
+        ? null
+        : { signal: chosen.signal, label: chosen.text || 'shaded', stretches: chosen.evidence },
+    [chosen],
+  );
+  const showStep = (of: Chosen, place: number) => {
+    setStep(place);
+    const stretch = of.evidence[place];
+    if (model !== null && stretch !== undefined) bringIntoView(model, stretch);
+  };
+  const choose = (next: Chosen | null) => {
+    setChosen(next);
+    if (next !== null) showStep(next, 0);
+  };
+  const chooseMark = (mark: MarkJson) => {
+    setChosenMark(mark.id);
+    if (model !== null && mark.kind !== 'level')
+      bringIntoView(model, { from: mark.from, to: mark.to ?? mark.from });
+  };
+  const place = useCallback((at: MarkPlace) => setDraft({ ...at, id: null, etag: null, text: '' }), []);
+  const remove = async (mark: MarkJson) => {
+    setTrouble(null);
+    try {
+      await api(`/marks/${mark.id}`, { method: 'DELETE', etag: mark.etag });
+      setDeleted(mark);
+    } catch (thrown) {
+      setTrouble(`The mark is still there. ${sentenceOf(thrown)}`);
+    }
+    await marksAnswer.mutate();
+  };
+  const undo = async () => {
+    if (deleted === null) return;
+    setDeleted(null);
+    await api(`/marks/${deleted.id}/restore`, { method: 'POST' }).catch((thrown) =>
+      setTrouble(sentenceOf(thrown)),
+    );
+    await marksAnswer.mutate();
+  };
+
+  if (capture === undefined)
+    return loaded.error === undefined ? <CaptureSkeleton /> : <CaptureGone error={loaded.error} />;
+  return (
+    <div className="capture">
+      <CaptureHead
+        capture={capture}
+        tab="trace"
+        hidden={hidden}
+        onToggle={(index) => setHidden((old) => toggled(old, index))}
+        actions={<CaptureActions capture={capture} />}
+        tools={model && <TraceTools model={model} wheel={wheel} scale={scale} onScale={setScale} />}
+      />
+      {!there && <CaptureState capture={capture} onChange={() => void loaded.mutate()} />}
+      {there && model === null && <CaptureSkeleton />}
+      {model !== null && (
+        <div className="capture-body">
+          <div className="capture-trace">
+            <Plot
+              model={model}
+              wheel={wheel}
+              scale={wheel === null ? 'seconds' : scale}
+              marks={marks}
+              chosenMark={chosenMark}
+              evidence={evidence}
+              hidden={hidden}
+              onPlace={place}
+              onChooseMark={(markId) => {
+                const mark = marks.find((each) => each.id === markId);
+                if (mark !== undefined) chooseMark(mark);
+              }}
+            />
+            <FootLine
+              capture={capture}
+              model={model}
+              chosen={chosen}
+              step={step}
+              onStep={(next) => chosen !== null && showStep(chosen, next)}
+            />
+          </div>
+          <Sheet label="Numbers and marks">
+            {trouble !== null && <Message verdict="bad" live="alert" title={trouble} />}
+            {isPending(capture.status) && (
+              <CaptureState capture={capture} onChange={() => void loaded.mutate()} />
+            )}
+            {measurements.data !== undefined && (
+              <Numbers
+                capture={capture}
+                measurements={measurements.data}
+                wheel={wheel}
+                chosen={chosen?.id ?? null}
+                onChoose={choose}
+              />
+            )}
+            {measurements.error !== undefined && (
+              <Message
+                verdict="bad"
+                live="alert"
+                title="The numbers could not be loaded"
+                happened={sentenceOf(measurements.error)}
+              />
+            )}
+            <MarksList
+              marks={marks}
+              wheel={wheel}
+              chosen={chosenMark}
+              onChoose={chooseMark}
+              onEdit={(mark) => setDraft(mark)}
+              onDelete={remove}
+              onMake={() => model.tool.set('mark')}
+            />
+          </Sheet>
+          <ThumbTools model={model} wheel={wheel} />
+        </div>
+      )}
+      {deleted !== null && <UndoBar text="Mark deleted" onUndo={undo} onGone={() => setDeleted(null)} />}
+      <Suspense fallback={null}>
+        {draft !== null && (
+          <MarkDialog
+            key={draft.id ?? 'new'}
+            capture={capture}
+            draft={draft}
+            onClose={() => setDraft(null)}
+            onSaved={() => {
+              setDraft(null);
+              void marksAnswer.mutate();
+            }}
+            reload={async (markId) =>
+              (await marksAnswer.mutate())?.items.find((mark) => mark.id === markId) ?? null
+            }
+          />
+        )}
+      </Suspense>
+    </div>
+  );
+}
+
+function toggled(set: ReadonlySet<number>, index: number): ReadonlySet<number> {
+  const next = new Set(set);
+  if (!next.delete(index)) next.add(index);
+  return next;
+}

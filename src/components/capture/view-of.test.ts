@@ -1,0 +1,49 @@
+import { describe, expect, it } from 'vitest';
+import { createPlotModel } from '../plot/model.ts';
+import { evenWheel } from '../plot/testing.ts';
+import { bringIntoView, openingView, presetOf, samplesIn, viewFromAddress } from './view-of.ts';
+
+const wheel = evenWheel({ rpm: 200, turns: 4, firstMarkS: 0.1 });
+
+describe('viewFromAddress()', () => {
+  it('takes a stretch and ignores what makes no sense', () => {
+    expect(viewFromAddress('?from=0.1&to=0.5')).toEqual({ from: 0.1, to: 0.5 });
+    expect(viewFromAddress('?from=-0.1&to=-0.05')).toEqual({ from: -0.1, to: -0.05 });
+    for (const search of ['', '?from=1', '?from=2&to=1', '?from=x&to=y'])
+      expect(viewFromAddress(search)).toBeNull();
+  });
+});
+
+describe('openingView() and presetOf()', () => {
+  it('open at the second of several turns, and know it as a turn', () => {
+    const view = openingView(wheel, false)!;
+    expect(view.from).toBeCloseTo(0.37, 9);
+    expect(presetOf(view, { from: 0, to: 1.4 }, wheel)).toBe('turn');
+    expect(openingView(null, false)).toBeNull();
+  });
+});
+
+describe('bringIntoView()', () => {
+  it('goes to samples that are out of view and stays where they are well in view', () => {
+    const model = createPlotModel(
+      { startS: 0, durationS: 10, samples: 1001, samplesVersion: 1, axis: 'even', signals: [] },
+      () => new Promise(() => {}),
+      { from: 0, to: 1 },
+    );
+    bringIntoView(model, { from: 0.4, to: 0.6 });
+    expect(model.view.get()).toEqual({ from: 0, to: 1 });
+    bringIntoView(model, { from: 5, to: 6 });
+    expect(model.view.get().from).toBeCloseTo(4.6, 9);
+    bringIntoView(model, { from: 8, to: 8 });
+    expect((model.view.get().from + model.view.get().to) / 2).toBeCloseTo(8, 9);
+  });
+});
+
+describe('samplesIn()', () => {
+  it('counts both ends of an even axis and knows no count on an uneven one', () => {
+    const capture = { samples: 1001, startS: -1, durationS: 10, axis: 'even' as const };
+    expect(samplesIn(capture, { from: 0, to: 0.1 })).toBe(11);
+    expect(samplesIn(capture, { from: -5, to: 50 })).toBe(1001);
+    expect(samplesIn({ ...capture, axis: 'uneven' }, { from: 0, to: 1 })).toBeNull();
+  });
+});
