@@ -126,12 +126,12 @@ export function Plot(props: PlotProps) {
 
   return (
     <div ref={outer} className={narrow ? 'plot plot-narrow' : 'plot'}>
-      {/* biome-ignore lint/a11y/noNoninteractiveTabindex: the plot takes keys of its own while it has focus */}
       <div
         className="plot-focus"
         role="application"
         aria-label={`Trace of ${lines.map((line) => line.signal.name).join(', ')}`}
         aria-describedby={summary}
+        // biome-ignore lint/a11y/noNoninteractiveTabindex: the plot takes keys of its own while it has focus
         tabIndex={0}
         data-own-keys
         onKeyDown={onKeyDown}

@@ -40,7 +40,10 @@ export function lastAtOrBefore(rising: ArrayLike<number>, x: number): number {
 
 function between(xs: readonly number[], ys: readonly number[], x: number): number | null {
   const last = xs.length - 1;
-  if (last < 1 || x < xs[0]! || x > xs[last]!) return null;
-  const i = Math.min(lastAtOrBefore(xs, x), last - 1);
+  if (last < 1) return null;
+  // Rounding must not put the first or last tooth itself outside.
+  const slack = 1e-9 * (xs[last]! - xs[0]!);
+  if (x < xs[0]! - slack || x > xs[last]! + slack) return null;
+  const i = Math.min(Math.max(lastAtOrBefore(xs, x), 0), last - 1);
   return ys[i]! + ((x - xs[i]!) * (ys[i + 1]! - ys[i]!)) / (xs[i + 1]! - xs[i]!);
 }
