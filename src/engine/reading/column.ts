@@ -1,10 +1,10 @@
 import { GrowingSamples } from './segments.ts';
 
-/** Cells of one signal that said "over range", by side. */
+/** Cells of one signal that said "over range" on one side. */
 export interface RailCells {
   count: number;
-  firstLine: number;
-  word: string;
+  readonly firstLine: number;
+  readonly word: string;
 }
 
 /**
@@ -13,78 +13,83 @@ export interface RailCells {
  */
 export class GrowingColumn {
   private readonly samples = new GrowingSamples();
-  lowest = Number.POSITIVE_INFINITY;
-  highest = Number.NEGATIVE_INFINITY;
   holes = 0;
   /** Numbers too large for a float32; they are holes. */
   tooLarge = 0;
   high: RailCells | null = null;
   low: RailCells | null = null;
-  private first = Number.NaN;
-  private second = Number.NaN;
-  /** True while no more than two different values have come. */
+  /** The values seen, while there are no more than two. */
+  private readonly values: number[] = [];
   isTwoValued = true;
+  private hasClean = false;
 
-  /** Takes the next block of doubles; `scratch` is at least as long. */
-  append(block: Float64Array, scratch: Float32Array): void {
-    let { lowest, highest, holes } = this;
-    const count = block.length;
-    for (let i = 0; i < count; i++) {
-      const value = Math.fround(block[i]!);
-      scratch[i] = value;
-      if (value < lowest && value !== Number.NEGATIVE_INFINITY) lowest = value;
-      if (value > highest && value !== Number.POSITIVE_INFINITY) highest = value;
-      if (value - value !== 0) holes += this.odd(block[i]!, i, scratch);
+  /** Takes the next block of doubles. `isOdd` false promises that all of them are ordinary numbers. */
+  append(block: Float64Array, isOdd: boolean): void {
+    if (this.isTwoValued) this.compareValues(block);
+    if (isOdd) this.samples.append(this.checked(block));
+    else {
+      this.hasClean = true;
+      this.samples.append(block);
     }
-    this.lowest = lowest;
-    this.highest = highest;
-    this.holes = holes;
-    if (this.isTwoValued) this.compareValues(scratch, count);
-    this.samples.append(scratch.subarray(0, count));
+  }
+
+  /** True when the column has two values and no more. */
+  get isLogic(): boolean {
+    return this.isTwoValued && this.values.length === 2;
+  }
+
+  get hasNumbers(): boolean {
+    return this.hasClean;
   }
 
   /** The samples, with cells over range set to the highest or lowest number of the column, and the rails so used. */
   finish() {
     const samples = this.samples.finish();
-    const rail = {
-      low: this.low !== null && Number.isFinite(this.lowest) ? this.lowest : null,
-      high: this.high !== null && Number.isFinite(this.highest) ? this.highest : null,
-    };
-    if (this.low !== null || this.high !== null) {
-      for (let i = 0; i < samples.length; i++) {
-        if (samples[i] === Number.POSITIVE_INFINITY) samples[i] = rail.high ?? Number.NaN;
-        else if (samples[i] === Number.NEGATIVE_INFINITY) samples[i] = rail.low ?? Number.NaN;
+    if (this.low === null && this.high === null) return { samples, rail: null };
+    let lowest = Number.POSITIVE_INFINITY;
+    let highest = Number.NEGATIVE_INFINITY;
+    for (let i = 0; i < samples.length; i++) {
+      const value = samples[i]!;
+      if (value < lowest && value !== Number.NEGATIVE_INFINITY) lowest = value;
+      if (value > highest && value !== Number.POSITIVE_INFINITY) highest = value;
+    }
+    const low = this.low !== null && Number.isFinite(lowest) ? lowest : null;
+    const high = this.high !== null && Number.isFinite(highest) ? highest : null;
+    for (let i = 0; i < samples.length; i++) {
+      if (samples[i] === Number.POSITIVE_INFINITY) samples[i] = high ?? Number.NaN;
+      else if (samples[i] === Number.NEGATIVE_INFINITY) samples[i] = low ?? Number.NaN;
+    }
+    return { samples, rail: low === null && high === null ? null : { low, high } };
+  }
+
+  private checked(block: Float64Array): Float64Array {
+    return block.map((value) => {
+      if (Number.isNaN(value)) {
+        this.holes++;
+        return value;
       }
-    }
-    return { samples, rail: rail.low === null && rail.high === null ? null : rail };
+      if (Number.isFinite(value) && !Number.isFinite(Math.fround(value))) {
+        this.tooLarge++;
+        this.holes++;
+        return Number.NaN;
+      }
+      if (Number.isFinite(value)) this.hasClean = true;
+      return value;
+    });
   }
 
-  get hasNumbers(): boolean {
-    return this.lowest <= this.highest;
-  }
-
-  private odd(value: number, i: number, scratch: Float32Array): number {
-    if (value === Number.POSITIVE_INFINITY || value === Number.NEGATIVE_INFINITY) return 0;
-    if (!Number.isNaN(value)) {
-      this.tooLarge++;
-      scratch[i] = Number.NaN;
-    }
-    return 1;
-  }
-
-  private compareValues(block: Float32Array, count: number): void {
-    let { first, second } = this;
-    for (let i = 0; i < count; i++) {
+  private compareValues(block: Float64Array): void {
+    const { values } = this;
+    let [first, second] = values;
+    for (let i = 0; i < block.length; i++) {
       const value = block[i]!;
-      if (value === first || value === second || value !== value) continue;
-      if (first !== first) first = value;
-      else if (second !== second) second = value;
-      else {
+      if (value === first || value === second || Number.isNaN(value)) continue;
+      if (values.length === 2) {
         this.isTwoValued = false;
         return;
       }
+      values.push(value);
+      [first, second] = values;
     }
-    this.first = first;
-    this.second = second;
   }
 }

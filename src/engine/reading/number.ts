@@ -1,7 +1,8 @@
 /** Exact powers of ten: 10^22 is the last that a double holds exactly. */
 export const POWERS_OF_TEN = Float64Array.from({ length: 23 }, (_, n) => Number(`1e${n}`));
 
-const EXACT_MANTISSA = 2 ** 53;
+/** Whole numbers up to here are exact doubles. */
+export const EXACT_MANTISSA = 2 ** 53;
 
 /**
  * The double that `Number()` gives for the same text with `decimal` read as the point and `shift` places taken off:

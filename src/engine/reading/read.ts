@@ -70,39 +70,31 @@ function run(start: Start): Running {
     end() {
       if (goesOn) goesOn = feeder.push(start.head.end()) && feeder.end();
     },
-    rows: () => scanner.rows,
+    rows: () => scanner.stage.rows,
     finish: () => finish(start, scanner),
   };
 }
 
 function finish(start: Start, scanner: Scanner): ReadOutcome {
-  scanner.finish();
+  scanner.keeper.finish();
   return timeFailure(start, scanner) ?? finishTable(start, scanner);
 }
 
 /** Times that start again, or that fall too often for single damaged rows. */
-function timeFailure(start: Start, scanner: Scanner): ReadFailure | null {
-  const preview = makePreview(start.layout);
+function timeFailure(start: Start, { keeper, stage }: Scanner): ReadFailure | null {
+  const { stop, timeRejected, firstTimeRejected: first } = keeper;
   const hint = 'Export each recording into a file of its own. If another column holds the time, choose it.';
-  if (scanner.stop?.why === 'time backwards') {
-    const { line, found } = scanner.stop;
-    return failure(
-      'time_backwards',
-      `The time goes backwards at line ${line}: ${found}, and goes on from there.`,
-      hint,
-      preview,
-      line,
+  const fail = (message: string, line: number | null) =>
+    failure('time_backwards', message, hint, makePreview(start.layout), line);
+  if (stop?.why === 'time backwards') {
+    return fail(
+      `The time goes backwards at line ${stop.line}: ${stop.found}, and goes on from there.`,
+      stop.line,
     );
   }
-  if (scanner.timeRejected > 10 && scanner.timeRejected > 0.1 * scanner.rows) {
-    const line = scanner.rejected.find(({ expected }) => expected === 'times that rise')?.line ?? null;
-    return failure(
-      'time_backwards',
-      `The time goes backwards in ${scanner.timeRejected} of ${scanner.rows} rows${line === null ? '' : `, first at line ${line}`}.`,
-      hint,
-      preview,
-      line,
-    );
-  }
-  return null;
+  if (timeRejected <= 10 || timeRejected <= 0.1 * stage.rows) return null;
+  return fail(
+    `The time goes backwards in ${timeRejected} of ${stage.rows} rows, first at line ${first}.`,
+    first,
+  );
 }

@@ -1,6 +1,7 @@
 import type { Layout } from './layout.ts';
 import type { Scanner } from './scanner.ts';
 import type { Timing } from './timing.ts';
+import type { ReadColumn } from './types.ts';
 
 /** Sentences about what was found and what was made of it: what happened, where, what was kept, what to do. */
 export function makeRemarks(
@@ -8,12 +9,13 @@ export function makeRemarks(
   scanner: Scanner,
   timing: Timing,
   leftForTime: readonly number[],
+  rails: readonly ReadColumn['rail'][],
 ): string[] {
   const { header, roles, dialect } = layout;
   const named = (column: number) =>
     header.names[column] ? `“${header.names[column]}”` : `column ${column + 1}`;
   const remarks: string[] = [];
-  const { stop, footer } = scanner;
+  const { stop, footer } = scanner.keeper;
 
   if (stop?.why === 'second table') {
     remarks.push(
@@ -28,8 +30,8 @@ export function makeRemarks(
     remarks.push(
       'The file names no unit for the time. It was read as seconds; correct the unit if that is wrong.',
     );
-  if (layout.timeUnit === 'clock' && scanner.firstClockText !== null) {
-    remarks.push(`The time column holds clock times. 0 s stands for ${scanner.firstClockText}.`);
+  if (layout.timeUnit === 'clock' && scanner.cells.firstClockText !== null) {
+    remarks.push(`The time column holds clock times. 0 s stands for ${scanner.cells.firstClockText}.`);
   }
   if (dialect.groupsInDoubt) {
     remarks.push(
@@ -50,11 +52,11 @@ export function makeRemarks(
     );
   }
   if (timing.kept !== null) {
-    const gone = scanner.rows - timing.kept.length;
+    const gone = scanner.stage.rows - timing.kept.length;
     remarks.push(`${count(gone, 'row')} without a readable time ${gone === 1 ? 'was' : 'were'} left out.`);
   }
   roles.otherTimes.forEach((column, i) => {
-    const off = scanner.otherTimeOffBy[i] ?? 0;
+    const off = scanner.stage.otherTimeOffBy[i] ?? 0;
     const lost = leftForTime.filter(
       (signal) => signal > column && !roles.otherTimes.some((c) => c > column && c < signal),
     );
@@ -72,16 +74,17 @@ export function makeRemarks(
   if (unread.length > 0 && unread.length <= 8)
     remarks.push(`Left out, as they hold no signal: ${unread.map(named).join(', ')}.`);
 
-  scanner.columns.forEach((column, i) => {
+  scanner.stage.columns.forEach((column, i) => {
     const name = cap(named(roles.signals[i]!));
     for (const [cells, side, extreme] of [
-      [column.high, 'highest', column.highest],
-      [column.low, 'lowest', column.lowest],
+      [column.high, 'highest', rails[i]?.high ?? null],
+      [column.low, 'lowest', rails[i]?.low ?? null],
     ] as const) {
       if (cells === null) continue;
-      const kept = Number.isFinite(extreme)
-        ? `They were set to ${Number(extreme.toPrecision(6))}, the ${side} number of the column, as the input's limit: the true value lies beyond.`
-        : 'They are holes, since the column has no number to tell the limit.';
+      const kept =
+        extreme !== null
+          ? `They were set to ${Number(extreme.toPrecision(6))}, the ${side} number of the column, as the input's limit: the true value lies beyond.`
+          : 'They are holes, since the column has no number to tell the limit.';
       remarks.push(
         `${name} was over range in ${count(cells.count, 'row')} (“${cells.word}”, first at line ${cells.firstLine}). ${kept}`,
       );
@@ -92,9 +95,9 @@ export function makeRemarks(
     if (column.tooLarge > 0)
       remarks.push(`${name} has ${count(column.tooLarge, 'number')} beyond 3.4e38; they are holes.`);
   });
-  if (scanner.repeatedNames > 0)
+  if (scanner.keeper.repeatedNames > 0)
     remarks.push(
-      `The line of names stands ${count(scanner.repeatedNames, 'more time')} inside the table; the rows were joined, since time goes on.`,
+      `The line of names stands ${count(scanner.keeper.repeatedNames, 'more time')} inside the table; the rows were joined, since time goes on.`,
     );
   if (footer !== null) {
     const last = footer.from + footer.count - 1;

@@ -1,46 +1,51 @@
 const FIRST_SAMPLES = 4096;
 const MOST_SAMPLES = 1 << 18;
+/** Up to here pieces are plain buffers, whose memory the allocator can use again for the next capture. */
+const PLAIN_SAMPLES = 1 << 22;
 
 /**
- * A float32 column that grows without ever holding its samples twice: it is kept in pieces, and `finish` gives each
- * piece's memory back at once (a resizable buffer shrunk to nothing) as soon as it has been copied.
+ * A float32 column that grows without ever holding many of its samples twice: it is kept in pieces that go one by one
+ * into the final array. Pieces of a long column are resizable buffers, so that each gives its memory back at once,
+ * without waiting for the collector, when it is shrunk to nothing.
  */
 export class GrowingSamples {
   private readonly full: Float32Array[] = [];
-  private piece = newPiece(FIRST_SAMPLES);
+  private piece = newPiece(FIRST_SAMPLES, 0);
   private used = 0;
   length = 0;
 
-  append(block: Float32Array): void {
+  append(block: Float64Array): void {
     let from = 0;
     while (from < block.length) {
       if (this.used === this.piece.length) {
         this.full.push(this.piece);
-        this.piece = newPiece(Math.min(2 * this.piece.length, MOST_SAMPLES));
+        this.piece = newPiece(Math.min(2 * this.piece.length, MOST_SAMPLES), this.length);
         this.used = 0;
       }
       const count = Math.min(block.length - from, this.piece.length - this.used);
       this.piece.set(block.subarray(from, from + count), this.used);
       this.used += count;
       from += count;
+      this.length += count;
     }
-    this.length += block.length;
   }
 
   /** All samples in one array of their own. The column is empty afterwards. */
   finish(): Float32Array {
     const all = new Float32Array(this.length);
+    this.full.push(this.piece.subarray(0, this.used));
     let at = 0;
-    for (const piece of [...this.full, this.piece.subarray(0, this.used)]) {
+    for (const piece of this.full) {
       all.set(piece, at);
       at += piece.length;
-      if (piece.buffer instanceof ArrayBuffer) piece.buffer.resize(0);
+      if (piece.buffer instanceof ArrayBuffer && piece.buffer.resizable) piece.buffer.resize(0);
     }
     this.full.length = 0;
     return all;
   }
 }
 
-function newPiece(samples: number): Float32Array {
+function newPiece(samples: number, before: number): Float32Array {
+  if (before < PLAIN_SAMPLES) return new Float32Array(samples);
   return new Float32Array(new ArrayBuffer(4 * samples, { maxByteLength: 4 * samples }), 0, samples);
 }

@@ -2,8 +2,8 @@ import { failure } from './failure.ts';
 import { type Head, openHead } from './head.ts';
 import { findLayout, type Layout } from './layout.ts';
 import { notText } from './notText.ts';
+import type { Plan } from './plan.ts';
 import { makePreview, plainPreview } from './preview.ts';
-import type { Plan } from './scanner.ts';
 import type { ReadFailure, ReadingHints } from './types.ts';
 
 /** More columns than this are refused; the widest logic recorders in use stay well below. */

@@ -11,7 +11,7 @@ export function finishTable({ layout, head, plan }: Start, scanner: Scanner): Re
   const { dialect, header, roles, preamble } = layout;
   const preview = makePreview(layout);
   const first = plan.firstLine;
-  if (!scanner.columns.some((column) => column.hasNumbers)) {
+  if (!scanner.stage.columns.some((column) => column.hasNumbers)) {
     return failure(
       'no_numbers',
       `From line ${first} on no cell of a signal holds a number.`,
@@ -31,11 +31,17 @@ export function finishTable({ layout, head, plan }: Start, scanner: Scanner): Re
     );
   }
   const left = signalsOfOtherTimes(scanner, plan.otherTimes, plan.signals, timing);
-  const remarks = makeRemarks(layout, scanner, timing, left);
+  const finished = scanner.stage.columns.map((column) => column.finish());
+  const remarks = makeRemarks(
+    layout,
+    scanner,
+    timing,
+    left,
+    finished.map(({ rail }) => rail),
+  );
   const columns: ReadColumn[] = [];
-  scanner.columns.forEach((column, i) => {
+  finished.forEach(({ samples, rail }, i) => {
     const place = plan.signals[i]!;
-    const { samples, rail } = column.finish();
     if (left.includes(place)) return;
     const unit = header.units[place] ?? null;
     columns.push({
@@ -47,19 +53,19 @@ export function finishTable({ layout, head, plan }: Start, scanner: Scanner): Re
       rail,
     });
   });
-  const clock = layout.timeUnit === 'clock' ? scanner.firstClockText : null;
+  const clock = layout.timeUnit === 'clock' ? scanner.cells.firstClockText : null;
   return {
     ok: true,
     reading: {
       encoding: head.encoding,
       delimiter: dialect.delimiter,
-      decimal: scanner.decimal,
+      decimal: scanner.cells.decimal,
       timeUnit: layout.timeUnit,
       timeColumn: roles.time,
       headerLine: header.namesAt === null ? null : layout.lines[header.namesAt]!.line,
-      rows: timing.kept?.length ?? scanner.rows,
-      rejectedRows: scanner.rejected,
-      rejectedCount: scanner.rejectedCount,
+      rows: timing.kept?.length ?? scanner.stage.rows,
+      rejectedRows: scanner.keeper.rejections.first,
+      rejectedCount: scanner.keeper.rejections.count,
       recordedAt: preamble.recordedAt ?? clock,
       remarks,
     },
@@ -79,10 +85,10 @@ function signalsOfOtherTimes(
   const { axis } = timing;
   const span =
     axis.kind === 'even' ? axis.stepS * axis.count : (axis.timesS.at(-1) ?? 0) - (axis.timesS[0] ?? 0);
-  const step = span / Math.max(1, scanner.rows);
+  const step = span / Math.max(1, scanner.stage.rows);
   const left: number[] = [];
   others.forEach((column, i) => {
-    if ((scanner.otherTimeOffBy[i] ?? 0) <= step / 2) return;
+    if ((scanner.stage.otherTimeOffBy[i] ?? 0) <= step / 2) return;
     const next = others[i + 1] ?? Number.POSITIVE_INFINITY;
     left.push(...signals.filter((signal) => signal > column && signal < next));
   });

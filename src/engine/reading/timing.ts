@@ -26,15 +26,13 @@ export function findTiming(scanner: Scanner, layout: Layout): Timing | null {
       kind: 'even',
       startS: layout.preamble.startS ?? 0,
       stepS: layout.intervalS!,
-      count: scanner.rows,
+      count: scanner.stage.rows,
     } as const;
     return { axis, kept: null, printedToS: null, isChangesOnly: false };
   }
-  const { times, rows } = scanner;
-  const isLogic =
-    scanner.columns.every((column) => column.isTwoValued) &&
-    scanner.columns.some((column) => column.lowest < column.highest);
-  const isChangesOnly = isLogic && rows >= 4 && scanner.changedRows >= CHANGES_SHARE * rows;
+  const { times, rows, columns, changedRows } = scanner.stage;
+  const isLogic = columns.every((column) => column.isTwoValued) && columns.some((column) => column.isLogic);
+  const isChangesOnly = isLogic && rows >= 4 && changedRows >= CHANGES_SHARE * rows;
   const inPlace = isChangesOnly ? null : findEven(times);
   if (inPlace !== null) return even(inPlace, rows, null);
 
