@@ -99,10 +99,11 @@ export function multipart(store) {
     complete: async (uploadId, bucket, key, wanted, { onlyIfNew }) => {
       const { headers } = await belonging(uploadId, bucket, key);
       if (wanted.length === 0) throw new S3Error('MalformedXML', 'At least one part must be named.');
+      if (wanted.some(({ number }, i) => i > 0 && number <= (wanted[i - 1]?.number ?? 0))) {
+        throw new S3Error('InvalidPartOrder', 'The parts are not in ascending order.');
+      }
       const md5 = createHash('md5');
       for (const [i, { number, etag }] of wanted.entries()) {
-        if (i > 0 && number <= (wanted[i - 1]?.number ?? 0))
-          throw new S3Error('InvalidPartOrder', 'The parts are not in ascending order.');
         const found = Number.isInteger(number) ? await describeStored(partPath(uploadId, number)) : null;
         if (!found || unquoted(found.etag) !== unquoted(etag))
           throw new S3Error('InvalidPart', `Part ${number} was not found as named.`);
