@@ -1,7 +1,7 @@
 import type { TimeAxis } from '../../capture.ts';
 import { crossings } from '../../signal/crossings.ts';
 import { highestIn, rangeMedian } from '../../signal/range.ts';
-import { timeAt } from '../../signal/time.ts';
+import { indexAtOrAfter, timeAt } from '../../signal/time.ts';
 import type { LoadStates } from './states.ts';
 
 /**
@@ -24,6 +24,8 @@ export interface OnPeriodOptions {
 
 /** Interruptions shorter than this are pick-up from other circuits, not a release. Common practice, no source. */
 const GLITCH_S = 25e-6;
+/** From the feed to the kick takes no longer than this. Common practice, no source. */
+const FLANK_S = 30e-6;
 
 /**
  * Stretches in which the driver holds the load near its on level. Short swings through zero (a ringing load) are left
@@ -102,11 +104,12 @@ function release(
   const limitS = timeAt(axis, at) + 0.03;
   for (let i = Math.ceil(at); i < values.length && timeAt(axis, i) < limitS; i += 1) {
     const value = values[i]!;
-    if (value > jump) {
-      const before = values[i - 1]!;
-      return i - at <= 1 || before >= rest ? at : i - 1 + (rest - before) / (value - before);
-    }
-    if (value > climbed || value < on + 0.2 * span) return at;
+    if (value < on + 0.2 * span) return at;
+    if (value <= climbed) continue;
+    const ahead = indexAtOrAfter(axis, timeAt(axis, i) + FLANK_S);
+    if (i - at <= 1 || !(values[highestIn(values, i, Math.max(i, ahead) + 1)]! > jump)) return at;
+    const before = values[i - 1]!;
+    return i - 1 + (before < climbed ? (climbed - before) / (value - before) : 0);
   }
   return at;
 }
