@@ -5,10 +5,12 @@ import { Superseded } from '../server/captures/work/superseded.ts';
 import { sweep } from '../server/captures/work/sweep.ts';
 import { ApiError } from '../server/errors.ts';
 import { isServiceAway } from '../server/http/service-away.ts';
+import { giveUpComparisons } from '../server/library/give-up-comparisons.ts';
+import { runComparison } from '../server/library/run-comparison.ts';
 import { log } from '../server/log.ts';
 import { failJob } from '../server/queue/fail-job.ts';
 import { giveBack } from '../server/queue/give-back.ts';
-import { captureJob, QUEUES } from '../server/queue/names.ts';
+import { captureJob, comparisonJob, QUEUES } from '../server/queue/names.ts';
 import { StaleAttempt } from '../server/queue/own-job.ts';
 import type { TakenJob } from '../server/queue/take-job.ts';
 import { remeasureCapture } from './remeasure-capture.ts';
@@ -37,6 +39,9 @@ async function work(job: TakenJob, signal: AbortSignal): Promise<void> {
   switch (job.name) {
     case QUEUES.read:
       return workOnCapture(job, signal);
+    case QUEUES.compare:
+      await runComparison(comparisonJob.parse(job.data).comparisonId);
+      return endJob(job);
     case QUEUES.remeasure:
       return remeasureCapture(job, signal);
     case QUEUES.dropSamples:
@@ -62,4 +67,5 @@ async function settle(job: TakenJob, error: unknown, about: object): Promise<voi
   log.error({ ...about, err: error }, 'attempt failed');
   await failJob(job);
   await giveUpFailed();
+  await giveUpComparisons();
 }

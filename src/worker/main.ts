@@ -55,7 +55,13 @@ async function lane(): Promise<void> {
   }
 }
 
-const ORDER: readonly QueueName[] = [QUEUES.read, QUEUES.dropSamples, QUEUES.sweep, QUEUES.remeasure];
+const ORDER: readonly QueueName[] = [
+  QUEUES.compare,
+  QUEUES.read,
+  QUEUES.dropSamples,
+  QUEUES.sweep,
+  QUEUES.remeasure,
+];
 
 async function next() {
   if (stopping || lock.number === null) return null;

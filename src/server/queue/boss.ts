@@ -32,6 +32,7 @@ async function start(supervise: boolean): Promise<PgBoss> {
   await boss.start();
   const options = { retryLimit: RETRIES, retryDelay: 1, retryBackoff: true, expireInHours: EXPIRE_HOURS };
   await boss.createQueue(QUEUES.read, { name: QUEUES.read, ...options });
+  await boss.createQueue(QUEUES.compare, { name: QUEUES.compare, ...options });
   await boss.createQueue(QUEUES.remeasure, { name: QUEUES.remeasure, policy: 'short', ...options });
   await boss.createQueue(QUEUES.dropSamples, { name: QUEUES.dropSamples, policy: 'short', ...options });
   await boss.createQueue(QUEUES.sweep, { name: QUEUES.sweep, policy: 'short', ...options });

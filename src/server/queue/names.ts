@@ -4,6 +4,8 @@ import { z } from 'zod';
 export const QUEUES = {
   /** Read a capture's original and measure it, or only measure it again. */
   read: 'read-capture',
+  /** Compare a signal with its references. */
+  compare: 'compare',
   /** Measure again what an older engine measured; after everything that a person waits for. */
   remeasure: 'remeasure-capture',
   /** Remove samples that no row names any more. */
@@ -20,5 +22,7 @@ export const readJob = z.object({
   kind: z.enum(['read', 'measure']),
 });
 export type ReadJob = z.infer<typeof readJob>;
+
+export const comparisonJob = z.object({ comparisonId: z.string() });
 
 export const captureJob = z.object({ captureId: z.string() });
