@@ -69,20 +69,20 @@ export function readPreamble(lines: readonly string[], delimiter: Delimiter, dec
 function entriesOf(text: string, delimiter: Delimiter): Entry[] {
   const bare = text.replace(/^[\s#%;/"'*!]+/, '');
   const inOne = /^([^:=]{1,60}?)\s*[:=]\s*(.*)$/.exec(bare);
-  const cells = splitCells(bare, delimiter === ' ' ? '\t' : delimiter);
   const entries: Entry[] = [];
   if (inOne !== null)
     entries.push({
       key: inOne[1]!.replace(/["']$/, ''),
       value: inOne[2]!.replace(/^["'\s,;]+|["'\s,;]+$/g, ''),
     });
-  for (let i = 0; i + 1 < cells.length; i++) {
-    const key = cells[i]!.replace(/\s*[:=]$/, '');
-    if (/[A-Za-zΔ∆]/.test(key))
-      entries.push({
-        key,
-        value: `${cells[i + 1]} ${parseUnit(cells[i + 2] ?? '') === null ? '' : cells[i + 2]}`.trim(),
-      });
+  // The lines above a table of one column need not use its delimiter.
+  for (const mark of new Set<Delimiter>([delimiter === ' ' ? '\t' : delimiter, ';', '\t', ','])) {
+    const cells = splitCells(bare, mark);
+    for (let i = 0; i + 1 < cells.length; i++) {
+      const key = cells[i]!.replace(/\s*[:=]$/, '');
+      const unit = parseUnit(cells[i + 2] ?? '') === null ? '' : ` ${cells[i + 2]}`;
+      if (/[A-Za-zΔ∆]/.test(key)) entries.push({ key, value: `${cells[i + 1]}${unit}` });
+    }
   }
   const spaced = /^([A-Za-z][A-Za-z _-]*?)\s+([-+]?\d.*)$/.exec(bare);
   if (entries.length === 0 && spaced !== null) entries.push({ key: spaced[1]!, value: spaced[2]! });

@@ -23,6 +23,7 @@ interface Shape {
   readonly filled: number;
   /** Never falls and rises at least once. */
   readonly rises: boolean;
+  readonly mostlyUp: boolean;
   /** Rises by the same step all along, within 2 %. */
   readonly even: boolean;
 }
@@ -44,8 +45,11 @@ export function findRoles(
     const shape = shapes[column]!;
     const name = header.names[column] ?? '';
     if (shape.clocks > 0 && shape.clocks >= shape.numbers) return true;
-    if (shape.numbers === 0 || (!shape.rises && rows.length > 1)) return false;
-    return header.units[column]?.unit === 's' || isTimeName(name);
+    if (shape.numbers === 0) return false;
+    // A column called time is one even where it falls, so that the fall can be told; a bare "x" or "t" must rise.
+    if (isTimeName(name))
+      return shape.mostlyUp || rows.length === 1 || /time|zeit|temps|tiempo|tempo/i.test(name);
+    return header.units[column]?.unit === 's' && (shape.rises || rows.length === 1);
   };
   const columns = shapes.map((_, column) => column);
   let times = columns.filter(isTime);
@@ -109,6 +113,7 @@ function shapeOf(rows: readonly (readonly string[])[], column: number, dialect: 
     clocks,
     texts,
     filled,
+    mostlyUp: up > 0.5 * steps.length,
     rises: up > 0 && falls <= 0.05 * steps.length,
     even: middle > 0 && near >= 0.9 * steps.length,
   };
