@@ -203,7 +203,7 @@ export const SAMPLES: readonly Sample[] = [
   {
     file: 'coil-primary-amperes.csv',
     title: 'Coil primary current',
-    text: 'Simulated. The curve of a sound coil charging to about seven amperes.',
+    text: 'Simulated. The curve of a sound coil charging to about nine amperes.',
     cylinders: 4,
     csv: coilAmperesCsv,
   },
