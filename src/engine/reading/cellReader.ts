@@ -102,7 +102,7 @@ export class CellReader {
     const use = this.uses[column]!;
     if (use !== 'clock') {
       const value = parseNumber(bytes, from, to, this.decimalByte, this.stage.shifts[column]!);
-      if (!Number.isNaN(value)) return value;
+      if (!Number.isNaN(value) && (Number.isFinite(value) || use === 'signal')) return finite(value);
     }
     const text = decodeText(bytes, from, Math.min(to, from + LONGEST_CELL), this.plan.encoding);
     const word = use === 'clock' ? this.clock(text) : this.word(text, column, use === 'signal', line);
@@ -154,4 +154,9 @@ export class CellReader {
       clock.day !== null && this.firstClock.day !== null ? clock.day - this.firstClock.day : this.clockDay;
     return (days * NS_PER_DAY + clock.ns - this.firstClock.ns) / 1e9;
   }
+}
+
+/** Infinity stands for "over range" in the stage; a number beyond doubles is told from it by being finite. */
+function finite(value: number): number {
+  return Math.min(Math.max(value, -Number.MAX_VALUE), Number.MAX_VALUE);
 }
