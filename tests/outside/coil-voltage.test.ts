@@ -1,7 +1,8 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { measureCoilPrimaryVoltage } from '../../src/engine/circuits/coil-primary-voltage.ts';
-import { burnTimeOf, burnTimeOf, COIL, COIL, coilVolts, coilVolts, every, type Recording, type Recording, record, record } from './fixtures/simulate.ts';
+import { burnTimeOf, COIL, coilVolts, every, type Recording, record } from './fixtures/simulate.ts';
+import { codesOf, numberOf, valueOf } from './fixtures/values.ts';
 
 const clean: Recording = { rateHz: 500_000, durationS: 0.35, noise: 0.1, seed: 3 };
 const offs = every(5, 0.06, 0.05);
