@@ -42,8 +42,10 @@ export function CaptureHead({ capture, tab, hidden, onToggle, actions, tools }: 
         <a className="capture-back" href="/captures" aria-label="All captures">
           <Icon name="left" />
         </a>
-        <h1>{capture.title}</h1>
-        <Verdict verdict={verdict} word={word} />
+        <div className="capture-name">
+          <h1>{capture.title}</h1>
+          <Verdict verdict={verdict} word={word} />
+        </div>
         {capture.signals.length > 0 && (
           <div className="capture-chips">
             {capture.signals.map((signal) => (

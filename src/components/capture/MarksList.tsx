@@ -1,8 +1,7 @@
 import type { MarkJson } from '../../contract/areas/marks.ts';
 import { Icon } from '../base/Icon.tsx';
-import { degreesAt, turnAt } from '../plot/degrees.ts';
-import { fixed } from '../plot/format.ts';
 import type { PlotWheel } from '../plot/types.ts';
+import { whereOf } from './where-of.ts';
 
 interface MarksListProps {
   marks: readonly MarkJson[];
@@ -70,16 +69,4 @@ export function MarksList({ marks, wheel, chosen, onChoose, onEdit, onDelete, on
       </ol>
     </section>
   );
-}
-
-/** Where a mark stands, in the way a technician says it: "turn 2 at 132°", else seconds. */
-export function whereOf(mark: Pick<MarkJson, 'kind' | 'from' | 'to'>, wheel: PlotWheel | null): string {
-  const turn = wheel === null ? null : turnAt(wheel, mark.from);
-  const degrees = wheel === null ? null : degreesAt(wheel, mark.from);
-  const start =
-    turn !== null && degrees !== null
-      ? `turn ${turn + 1} at ${fixed(degrees % 360, 0)}°`
-      : `${fixed(mark.from, 4)} s`;
-  if (mark.kind === 'level') return 'level';
-  return mark.to === null ? start : `${start}, ${fixed((mark.to - mark.from) * 1e3, 1)} ms long`;
 }

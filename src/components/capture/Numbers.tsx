@@ -50,14 +50,14 @@ export function Numbers({ capture, measurements, wheel, chosen, onChoose }: Numb
           {count} {count === 1 ? 'value' : 'values'}
           {measurements.stale && ', being measured again'}
         </span>
-        {groups.length > 1 && groups.length < 4 && (
+        {groups.length > 1 && capture.signals.length < 3 && (
           <div className="numbers-only">
             <Segmented
               label="Whose numbers"
               value={only}
               onChange={setOnly}
               options={[
-                ...groups.map((group) => ({ value: group.id, text: group.name })),
+                ...groups.map((group) => ({ value: group.id, text: group.signal === null ? 'Both' : group.name })),
                 { value: 'all', text: 'All' },
               ]}
             />

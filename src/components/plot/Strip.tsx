@@ -87,6 +87,7 @@ export function Strip({ model, lines, marks, wheel }: StripProps) {
   return (
     <div className="plot-strip">
       <div ref={box} className="strip-box" onPointerDown={jump}>
+        <i className="strip-lit" style={{ left: `${left}%`, right: `${right}%` }} />
         <canvas ref={canvas} className="strip-canvas" />
         {wheel?.marksS.length !== undefined &&
           wheel.marksS.length < 60 &&

@@ -91,8 +91,8 @@ export function createTraceCanvas(host: HTMLElement, model: PlotModel, options: 
     }
     const { apartPx, crowded } = spacing(data, view.from, view.to, model.widthPx.get());
     dots = best?.layout === 'samples' && apartPx > DOTS_FROM_PX;
-    // One device pixel is the fast path of every canvas; a few points bear a line that is easier to see.
-    chart.series[1]!.width = crowded ? 1 / devicePixelRatio : 1.25;
+    // A line of about a pixel is the fast path of every canvas; a few points bear one that is easier to see.
+    chart.series[1]!.width = crowded ? Math.max(1 / devicePixelRatio, 0.8) : 1.25;
     if (fresh) chart.setData([data.xs, data.ys], false);
     chart.setScale('x', { min: view.from, max: view.to });
     chart.redraw(true, false);
