@@ -22,6 +22,9 @@ const DELIMITERS: readonly Delimiter[] = [',', ';', '\t', '|', ' '];
 /** Lines that are looked at; a preamble longer than this is not expected. */
 export const MOST_SNIFFED_LINES = 1500;
 
+/** Lines that mostly suffice. */
+const FEW_LINES = 400;
+
 interface Tried extends Dialect {
   readonly score: number;
 }
@@ -33,7 +36,12 @@ interface Tried extends Dialect {
  * more columns, no thousands marks.
  */
 export function detectDialect(lines: readonly HeadLine[], hints: ReadingHints): Dialect {
-  const delimiters = hints.delimiter === undefined ? DELIMITERS : [hints.delimiter];
+  const few = detectIn(lines.slice(0, FEW_LINES), hints);
+  return few.rows.length >= 20 || lines.length <= FEW_LINES ? few : detectIn(lines, hints);
+}
+
+function detectIn(lines: readonly HeadLine[], hints: ReadingHints): Dialect {
+  const delimiters = hints.delimiter === undefined ? delimitersIn(lines) : [hints.delimiter];
   const decimals: readonly Decimal[] = hints.decimal === undefined ? ['.', ','] : [hints.decimal];
   const pairs = delimiters
     .flatMap((delimiter) => decimals.map((decimal) => ({ delimiter, decimal })))
@@ -50,6 +58,13 @@ export function detectDialect(lines: readonly HeadLine[], hints: ReadingHints): 
   const best = isEnough ? strict : (bestOf(true) ?? strict);
   const none = { cells: 0, decimalKnown: false, firstRow: null, rows: [], groupsInDoubt: false };
   return best ?? { ...none, delimiter: hints.delimiter ?? ',', decimal: hints.decimal ?? '.' };
+}
+
+/** The delimiters that occur, and one that does not: it stands for a table of one column. */
+function delimitersIn(lines: readonly HeadLine[]): Delimiter[] {
+  const occurs = (delimiter: Delimiter) => lines.some(({ text }) => text.includes(delimiter));
+  const absent = DELIMITERS.find((delimiter) => !occurs(delimiter));
+  return DELIMITERS.filter((delimiter) => delimiter === absent || occurs(delimiter));
 }
 
 function tryDialect(
