@@ -27,7 +27,7 @@ export function measureCrankHall(
   const edge = chooseEdge(levels);
   const timesS = edge.rising ? levels.risingS : levels.fallingS;
   const result = findPattern(timesS, pulseWidths(levels, edge.rising), context.camEdgesS);
-  const found = wheelFindings({ timesS, swing: null }, result, context);
+  const found = wheelFindings({ timesS, swing: null, height: null, halfWidth: null }, result, context);
   const notices: Notice[] = [...found.notices, ...levelNotices(signal, levels)];
   if (result.ok && result.pattern.gaps.length === 0) {
     notices.push({

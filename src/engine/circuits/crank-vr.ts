@@ -43,6 +43,8 @@ export function measureCrankPickup(signal: MeasuredSignal, context: CrankContext
   const train = {
     timesS: Float64Array.from(passages.at, (at) => timeAt(signal.axis, at)),
     swing: passages.swing,
+    height: passages.height,
+    halfWidth: passages.halfWidth,
   };
   const result = findPattern(train.timesS, null, context.camEdgesS);
   const found = wheelFindings(train, result, context);

@@ -26,7 +26,7 @@ export function findPattern(
   if (spacing?.ok) return spacing;
   if (camEdgesS && camEdgesS.length > 1) {
     const withCam = findCamPattern(timesS, camEdgesS);
-    if (withCam.ok || gaps.evenly) return withCam;
+    if (withCam.ok) return withCam;
   }
   if (spacing && !spacing.ok && spacing.reason.includes('cam')) return spacing;
   return gaps;

@@ -6,8 +6,14 @@ import { layOnPlaces, type Placed, SINGLE_MOST } from './places.ts';
 const MOST_SCATTER = 0.24;
 /** Share of the gaps that must find their like one turn on. */
 const LEAST_MATCH = 0.75;
+/** With fewer gaps than this in the train, every one must find its like. */
+const FEWEST_GAPS = 6;
+/** Share of the train that must be followed when its ends are left out. */
+const LEAST_SPAN = 0.6;
 /** Two teeth a turn or fewer repeat too easily: the pattern might be there several times in a turn. */
 const FEWEST_TEETH = 3;
+/** With fewer gaps than this share of the intervals, the rest is an even division. */
+const MOST_GAPS = 0.2;
 /** The pattern is searched in this many gaps; the whole train is then followed with it. */
 const SEARCHED_GAPS = 2000;
 
@@ -50,14 +56,17 @@ export function findGapPattern(times: Float64Array): PatternResult {
   if (added) return { ok: true, pattern: added };
   const gaps = placed.ratio.reduce((count, r) => count + (r >= SINGLE_MOST ? 1 : 0), 0);
   if (gaps === 0 && placed.extras.length === 0) {
-    return { ok: false, evenly: true, reason: 'evenly spaced teeth without a gap: nothing marks the turn' };
+    return no('evenly spaced teeth without a gap: nothing marks the turn', true);
   }
-  if (gaps <= 1)
-    return no('no complete turn: fewer than two gaps with a tooth on both sides are in the capture');
-  return no('the gaps do not come back in a repeating pattern');
+  // Mostly single places: an evenly divided wheel, whose gaps were not seen often or well enough.
+  const evenly = gaps < MOST_GAPS * placed.ratio.length;
+  if (gaps <= 1) {
+    return no('no complete turn: fewer than two gaps with a tooth on both sides are in the capture', evenly);
+  }
+  return no('the gaps do not come back in a repeating pattern', evenly);
 }
 
-const no = (reason: string): PatternResult => ({ ok: false, reason, evenly: false });
+const no = (reason: string, evenly = false): PatternResult => ({ ok: false, reason, evenly });
 
 /**
  * Leaves out events at the ends where the shaft starts or stops: with a neighbour on one side only, an interval long
@@ -170,13 +179,27 @@ function findTurn(laid: Laid): Found | null {
   const template = commonTemplate(features, turn, end);
   if (!template) return null;
   const missing = template.reduce((sum, gap) => sum + gap.size - 1, 0);
-  if (turn - missing < FEWEST_TEETH) return null;
+  if (turn - missing < FEWEST_TEETH || nearlyShorter(template, turn)) return null;
   // Wheels are divided into a whole number of degrees or halves; this decides only where a gap's length is open.
   const natural = 360 % turn === 0 || 720 % turn === 0;
   const nearness = median(
     laid.features.slice(0, 200).map((f) => Math.abs(laid.placed.ratio[f.event - 1]! - f.size)),
   )!;
   return { laid, turn, template, rank: (natural ? 1 : 0) - nearness };
+}
+
+/**
+ * True when gaps of one size stand nearly, but not quite, a fixed number of places apart: one wheel with one gap, of
+ * which a tooth or a gap was missed, looks so. Nothing is said then.
+ */
+function nearlyShorter(template: readonly PatternGap[], turn: number): boolean {
+  if (template.length < 2 || template.some((gap) => gap.size !== template[0]!.size)) return false;
+  const starts = template.map((gap) => gap.after);
+  const steps = starts.map(
+    (start, i) => (start - starts[(i + starts.length - 1) % starts.length]! + turn) % turn || turn,
+  );
+  const least = Math.min(...steps);
+  return least >= 6 && steps.every((step) => Math.abs(step - least * Math.round(step / least)) <= 2);
 }
 
 function smallestTurn(features: readonly Feature[], end: number): number | null {
@@ -189,16 +212,30 @@ function smallestTurn(features: readonly Feature[], end: number): number | null 
     if (lags.size > 400) break;
   }
   for (const lag of Array.from(lags).sort((a, b) => a - b)) {
-    let matched = 0;
-    let missed = 0;
-    for (const { place, size } of features) {
-      for (const other of [place + lag, place - lag]) {
-        if (other < 0 || other + size > end) continue;
-        if (sizeAt.get(other) === size) matched += 1;
-        else missed += 1;
+    const has = (place: number, size: number) => sizeAt.get(place) === size;
+    const partnered = features.filter((f) => has(f.place + lag, f.size) || has(f.place - lag, f.size));
+    const first = partnered[0]?.place;
+    const last = partnered.at(-1)?.place;
+    if (first === undefined || last === undefined) continue;
+    if (comesBack(0, end)) return lag;
+    // At either end the shaft may have stood, or the signal been too weak: then the rest must be most of the train.
+    if (partnered.length >= FEWEST_GAPS && last - first > LEAST_SPAN * end && comesBack(first, last + 1))
+      return lag;
+
+    function comesBack(from: number, to: number): boolean {
+      let matched = 0;
+      let missed = 0;
+      for (const { place, size } of features) {
+        if (place < from || place > to) continue;
+        for (const other of [place + lag, place - lag]) {
+          if (other < from || other + size > Math.min(end, to + size)) continue;
+          if (has(other, size)) matched += 1;
+          else missed += 1;
+        }
       }
+      const few = features.length < FEWEST_GAPS;
+      return matched >= 2 && (few ? missed === 0 : matched >= LEAST_MATCH * (matched + missed));
     }
-    if (matched >= 2 && matched >= LEAST_MATCH * (matched + missed)) return lag;
   }
   return null;
 }

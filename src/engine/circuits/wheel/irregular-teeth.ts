@@ -1,4 +1,4 @@
-import { mean, median } from '../../signal/statistics.ts';
+import { mean, median, spread } from '../../signal/statistics.ts';
 import { absent, type Evidence, type IrregularTooth, type Value } from '../../value.ts';
 import { type FoundWheel, stretchStarts, toothNumbers } from './train.ts';
 
@@ -8,8 +8,8 @@ const OFF_DEGREES = 0.2;
 /** In this share of the turns. */
 const SHARE = 0.8;
 const MOST_TURNS = 200;
-/** Neighbours looked at on either side. */
-const REACH = 3;
+/** Neighbours are looked for within so many places. */
+const REACH = 4;
 
 export interface Irregular {
   readonly value: Value;
@@ -23,8 +23,8 @@ export interface Irregular {
  * and falls with compression shifts nothing. The worst tooth is taken out first and its neighbours judged without it.
  * The teeth beside a gap are not held against neighbours: a pick-up's last and first swing differ there by nature.
  */
-export function irregularTeeth(wheel: FoundWheel): Irregular {
-  const { pattern, timesS, swing } = wheel;
+export function irregularTeeth(wheel: FoundWheel, gaps: Value): Irregular {
+  const { pattern, timesS, height, halfWidth } = wheel;
   const { places, teeth } = pattern;
   const none = new Array<number>(teeth).fill(0);
   if (places === null || pattern.marks.length < 3) {
@@ -45,6 +45,13 @@ export function irregularTeeth(wheel: FoundWheel): Irregular {
       beside.add(number[k]!);
     }
   }
+
+  // The teeth beside a gap that is no whole number of periods long are shifted by the sensor: no measure for others.
+  const ratio = typeof gaps.value === 'number' ? [gaps.value] : ((gaps.value ?? []) as readonly number[]);
+  const trusted = ratio.length > 0 && ratio.every((value) => Math.abs(value - Math.round(value)) < 0.05);
+  const strange = trusted ? new Set<number>() : beside;
+  // Speed swings up to four times a turn (eight cylinders) bend the curve by this share of what they bend the line.
+  const curveError = Math.min(1, 8 * ((2 * Math.PI) / places) ** 2);
 
   const flagged = new Set<number>();
   const found: Array<IrregularTooth & { off: number }> = [];
@@ -86,25 +93,37 @@ export function irregularTeeth(wheel: FoundWheel): Irregular {
   function worstTooth(): (IrregularTooth & { off: number }) | null {
     const heights: number[][] = Array.from({ length: teeth + 1 }, () => []);
     const offsets: number[][] = Array.from({ length: teeth + 1 }, () => []);
+    const doubts: number[][] = Array.from({ length: teeth + 1 }, () => []);
     for (let k = 1; k + 1 < most; k += 1) {
       const tooth = number[k]!;
       if (flagged.has(tooth) || beside.has(tooth)) continue;
       const near = neighbours(k);
-      const height = swing ? heightRatio(k, near) : null;
-      if (height !== null) heights[tooth]!.push(height);
+      const ratio = height ? heightRatio(k, near) : null;
+      if (ratio !== null) heights[tooth]!.push(ratio);
       const off = offset(k, near);
-      if (off !== null) offsets[tooth]!.push(off);
+      if (off === null) continue;
+      offsets[tooth]!.push(off.degrees);
+      doubts[tooth]!.push(off.doubt);
     }
-    const middles = offsets.map((list) => (list.length > 0 ? Math.abs(median(list)!) : Number.NaN));
-    // What all teeth are off by is the curve's own error, or noise: stay clear of it.
-    const limit = Math.max(OFF_DEGREES, 3 * (median(middles) ?? 0));
+    const heightNoise = pooledDeviation(heights);
+    const offNoise = pooledDeviation(offsets);
+    // What all teeth are off by comes from the curve, from hum in step with the turn or the like, not from a tooth.
+    const usualOff =
+      3 * (median(offsets.filter((list) => list.length > 0).map((list) => Math.abs(mean(list)!))) ?? 0);
+    const usualHeight =
+      3 * (median(heights.filter((list) => list.length > 0).map((list) => Math.abs(mean(list)! - 1))) ?? 0);
     let worst: (IrregularTooth & { off: number }) | null = null;
     let badness = 1;
     for (let tooth = 1; tooth <= teeth; tooth += 1) {
-      const height = consistent(heights[tooth]!, (ratio) => (ratio < LOW ? -1 : ratio > HIGH ? 1 : 0));
-      const off = consistent(offsets[tooth]!, (degrees) => (degrees < -limit ? -1 : degrees > limit ? 1 : 0));
+      const limit = Math.max(OFF_DEGREES, usualOff) + (median(doubts[tooth]!) ?? 0);
+      const ratio = consistent(heights[tooth]!, heightNoise, 1, (value) =>
+        value < Math.min(LOW, 1 - usualHeight) ? -1 : value > Math.max(HIGH, 1 + usualHeight) ? 1 : 0,
+      );
+      const off = consistent(offsets[tooth]!, offNoise, 0, (value) =>
+        value < -limit ? -1 : value > limit ? 1 : 0,
+      );
       const bad = Math.max(
-        height === null ? 0 : 1 + Math.abs(Math.log(height)) / 0.16,
+        ratio === null ? 0 : 1 + Math.abs(Math.log(ratio)) / 0.16,
         off === null ? 0 : 1 + Math.abs(off) / limit,
       );
       if (bad > badness) {
@@ -120,13 +139,17 @@ export function irregularTeeth(wheel: FoundWheel): Irregular {
     return worst;
   }
 
+  /** The two nearest teeth that are not flagged on either side, at most four places away. */
   function neighbours(k: number): number[] {
     const out: number[] = [];
-    for (let j = k - REACH; j <= k + REACH; j += 1) {
-      if (j < 0 || j >= most || j === k) continue;
-      if (flagged.has(number[j]!) || Math.abs(place[j]! - place[k]!) > REACH + 1) continue;
-      if (crossesBreak(j, k)) continue;
-      out.push(j);
+    for (const by of [-1, 1]) {
+      let taken = 0;
+      for (let j = k + by; j >= 0 && j < most && taken < 2; j += by) {
+        if (Math.abs(place[j]! - place[k]!) > REACH) break;
+        if (flagged.has(number[j]!) || crossesBreak(j, k)) continue;
+        out.push(j);
+        taken += 1;
+      }
     }
     return out;
   }
@@ -136,31 +159,59 @@ export function irregularTeeth(wheel: FoundWheel): Irregular {
     return false;
   }
 
+  /** Over the mean of its neighbours, and over a cubic through them where they lie on a bend: the one nearer to 1. */
   function heightRatio(k: number, near: readonly number[]): number | null {
-    const usable = near.filter((j) => !beside.has(number[j]!) && Math.abs(j - k) <= 2 && swing![j]! > 0);
-    if (!usable.some((j) => j < k) && !usable.some((j) => j > k)) return null;
-    const around = mean(usable.map((j) => swing![j]!));
-    return around ? swing![k]! / around : null;
+    const usable = near.filter((j) => !beside.has(number[j]!) && halfWidth![j] === halfWidth![k]);
+    if (!usable.some((j) => j < k) || !usable.some((j) => j > k)) return null;
+    const around = mean(usable.map((j) => height![j]!));
+    if (!around) return null;
+    const plain = height![k]! / around;
+    if (usable.length < 4) return plain;
+    const bent =
+      height![k]! /
+      interpolated(
+        usable.map((j) => place[j]! - place[k]!),
+        usable.map((j) => height![j]!),
+        0,
+      );
+    return Math.abs(bent - 1) < Math.abs(plain - 1) ? bent : plain;
   }
 
-  /** Degrees by which tooth k comes late, against a cubic (or the line, where neighbours are few) through its neighbours. */
-  function offset(k: number, near: readonly number[]): number | null {
-    const usable = near.filter((j) => !beside.has(number[j]!));
-    const before = usable.filter((j) => j < k).length;
-    const after = usable.length - before;
-    if (before < 1 || after < 1 || usable.length < 4) return null;
+  /**
+   * Degrees by which tooth k comes late, against the cubic through its four neighbours' times. What the curve itself
+   * may be wrong by is judged from how far it is from the straight line through the two nearest.
+   */
+  function offset(k: number, near: readonly number[]): { degrees: number; doubt: number } | null {
+    const usable = near.filter((j) => !strange.has(number[j]!));
+    const before = usable.filter((j) => j < k);
+    const after = usable.filter((j) => j > k);
+    if (before.length < 2 || after.length < 2) return null;
     const x = usable.map((j) => place[j]! - place[k]!);
     const y = usable.map((j) => timesS[j]! - timesS[k]!);
-    const degree = usable.length >= 5 ? 3 : 2;
-    const fit = polynomial(x, y, degree);
-    if (!fit || !(fit[1]! > 0)) return null;
-    // The curve says when place 0 is due; fit[1] is seconds a place there.
-    return ((-fit[0]! / fit[1]!) * 360) / places!;
+    const due = interpolated(x, y, 0);
+    const b = before[0]!;
+    const a = after[0]!;
+    const line = interpolated(
+      [place[b]! - place[k]!, place[a]! - place[k]!],
+      [timesS[b]! - timesS[k]!, timesS[a]! - timesS[k]!],
+      0,
+    );
+    const perPlace = (timesS[a]! - timesS[b]!) / (place[a]! - place[b]!);
+    const toDegrees = 360 / places! / perPlace;
+    return { degrees: -due * toDegrees, doubt: Math.abs(line - due) * toDegrees * curveError };
   }
 }
 
-/** Mean of the values when at least 80 % of them lie on one side (by `side`), at least two; else null. */
-function consistent(values: readonly number[], side: (value: number) => number): number | null {
+/**
+ * Mean of the values when at least 80 % of them lie on one side (by `side`), at least two, and the mean is clear of
+ * chance: four deviations of the mean away from `usual`. Else null.
+ */
+function consistent(
+  values: readonly number[],
+  noise: number,
+  usual: number,
+  side: (value: number) => number,
+): number | null {
   if (values.length < 2) return null;
   let above = 0;
   let below = 0;
@@ -169,28 +220,31 @@ function consistent(values: readonly number[], side: (value: number) => number):
     if (where > 0) above += 1;
     if (where < 0) below += 1;
   }
-  return Math.max(above, below) >= SHARE * values.length ? mean(values) : null;
+  if (Math.max(above, below) < SHARE * values.length) return null;
+  const middle = mean(values)!;
+  return Math.abs(middle - usual) > (4 * noise) / Math.sqrt(values.length) ? middle : null;
 }
 
-/** Least-squares polynomial through few points, coefficients from the constant up; normal equations, Gauss with pivots. */
-function polynomial(x: readonly number[], y: readonly number[], degree: number): number[] | null {
-  const n = degree + 1;
-  const rows = Array.from({ length: n }, (_, r) => {
-    const row = Array.from({ length: n }, (_, c) => x.reduce((sum, value) => sum + value ** (r + c), 0));
-    row.push(x.reduce((sum, value, i) => sum + value ** r * y[i]!, 0));
-    return row;
-  });
-  for (let c = 0; c < n; c += 1) {
-    let pivot = c;
-    for (let r = c + 1; r < n; r += 1) if (Math.abs(rows[r]![c]!) > Math.abs(rows[pivot]![c]!)) pivot = r;
-    [rows[c], rows[pivot]] = [rows[pivot]!, rows[c]!];
-    const head = rows[c]![c]!;
-    if (Math.abs(head) < 1e-12) return null;
-    for (let r = 0; r < n; r += 1) {
-      if (r === c) continue;
-      const factor = rows[r]![c]! / head;
-      for (let i = c; i <= n; i += 1) rows[r]![i]! -= factor * rows[c]![i]!;
-    }
+/** Deviation of a tooth from turn to turn, over all teeth. */
+function pooledDeviation(lists: readonly (readonly number[])[]): number {
+  let squares = 0;
+  let count = 0;
+  for (const list of lists) {
+    const all = spread(list);
+    if (!all || all.n < 2) continue;
+    squares += all.sd ** 2 * (all.n - 1);
+    count += all.n - 1;
   }
-  return rows.map((row, r) => row[n]! / row[r]!);
+  return count > 0 ? Math.sqrt(squares / count) : Infinity;
+}
+
+/** Value at `at` of the polynomial through all points (Lagrange). */
+function interpolated(x: readonly number[], y: readonly number[], at: number): number {
+  let sum = 0;
+  for (let i = 0; i < x.length; i += 1) {
+    let weight = 1;
+    for (let j = 0; j < x.length; j += 1) if (j !== i) weight *= (at - x[j]!) / (x[i]! - x[j]!);
+    sum += weight * y[i]!;
+  }
+  return sum;
 }

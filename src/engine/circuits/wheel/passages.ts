@@ -1,4 +1,5 @@
 import type { Pickup } from './pickup.ts';
+import type { BlockMeans } from './scale.ts';
 
 /** Zero crossings of one direction, and how high the signal swings about each. */
 export interface Passages {
@@ -7,6 +8,8 @@ export interface Passages {
   readonly at: Float64Array;
   /** Highest less lowest value about the crossing, in the signal's unit. */
   readonly swing: Float64Array;
+  /** Answer of the tooth filter: as the swing, but without spikes and noise. Comparable where the half-width is one. */
+  readonly height: Float64Array;
   /** Half-width of the tooth filter there, in samples. */
   readonly halfWidth: Float64Array;
 }
@@ -56,7 +59,7 @@ export function placePassages(pickup: Pickup, kind: 'falling' | 'rising'): Passa
     const baseline = length > 0 ? sum / length : 0;
     const height = Math.abs(swings.height[chosen[k]!]!);
     const smooth = smoothing(width, noise, height);
-    at[k] = crossing(samples, centre[k]!, width, smooth, baseline, sign);
+    at[k] = crossing(means, centre[k]!, width, smooth, baseline, sign);
   }
   for (let k = 0; k < count; k += 1) {
     // No further than half-way to the neighbours, whose lobes would be taken for this tooth's.
@@ -72,7 +75,8 @@ export function placePassages(pickup: Pickup, kind: 'falling' | 'rising'): Passa
       smoothing(halfWidth[k]!, noise, Math.abs(swings.height[chosen[k]!]!)),
     );
   }
-  return { count, at, swing, halfWidth };
+  const height = Float64Array.from(chosen, (k) => Math.abs(swings.height[k]!));
+  return { count, at, swing, height, halfWidth };
 }
 
 /** Odd number of samples to average: none needed when noise is under a hundredth of the swing. */
@@ -83,39 +87,98 @@ function smoothing(width: number, noise: number, height: number): number {
   return samples % 2 === 1 ? samples : samples - 1;
 }
 
-/** Crossing in the wanted direction nearest to `centre`, of the running mean; `centre` itself when there is none. */
+/**
+ * Crossing of the baseline on the largest fall (times `sign`) about `centre`: from the lobe before the tooth's centre to
+ * the lobe after it, never in the flat stretch beside them. Found in block means with a running median, which no spike
+ * passes, then placed among the samples. `centre` itself when there is none.
+ */
 function crossing(
-  samples: Float32Array,
+  means: BlockMeans,
   centre: number,
   width: number,
   smooth: number,
   baseline: number,
   sign: number,
 ): number {
-  const reach = Math.max(2, Math.ceil(width * 0.9));
-  const arm = (smooth - 1) / 2;
-  const from = Math.max(arm, Math.floor(centre) - reach);
-  const to = Math.min(samples.length - 1 - arm, Math.ceil(centre) + reach);
+  const octave = Math.max(0, Math.log2(width) - 3);
+  const level = means.levels[octave]!;
+  const size = 2 ** octave;
+  const reach = Math.max(2, Math.ceil((width * 1.2) / size));
+  const middle = Math.round((centre + 0.5) / size - 0.5);
+  const from = Math.max(0, middle - reach);
+  const to = Math.min(level.length - 1, middle + reach);
   if (to <= from) return centre;
+  const medianArm = width >= 8 ? 2 : width >= 4 ? 1 : 0;
+  let previous = sign * (localMedian(level, from, medianArm) - baseline);
+  let peak = previous;
+  let crossed = Number.NaN;
+  let best = Number.NaN;
+  let deepest = 0;
+  for (let i = from + 1; i <= to; i += 1) {
+    const here = sign * (localMedian(level, i, medianArm) - baseline);
+    if (here > peak) {
+      peak = here;
+      crossed = Number.NaN;
+    }
+    if (previous > 0 && here <= 0) crossed = i - 1 + previous / (previous - here);
+    if (peak - here > deepest && !Number.isNaN(crossed)) {
+      deepest = peak - here;
+      best = crossed;
+    }
+    previous = here;
+  }
+  if (Number.isNaN(best)) return centre;
+  const coarse = (best + 0.5) * size - 0.5;
+  return among(means.levels[0]!, coarse, size, smooth, baseline, sign);
+}
+
+/** The crossing of the samples' running mean nearest to `coarse`, at most one block away; else `coarse`. */
+function among(
+  samples: Float32Array,
+  coarse: number,
+  size: number,
+  smooth: number,
+  baseline: number,
+  sign: number,
+): number {
+  const arm = (smooth - 1) / 2;
+  const from = Math.max(arm, Math.floor(coarse) - size - 1);
+  const to = Math.min(samples.length - 1 - arm, Math.ceil(coarse) + size + 1);
+  if (to <= from) return coarse;
   let sum = 0;
   for (let i = from - arm; i <= from + arm; i += 1) sum += samples[i]!;
-  let best = centre;
-  let nearest = Infinity;
+  let best = coarse;
+  let nearest = size + 1;
   let previous = sign * (sum / smooth - baseline);
   for (let i = from + 1; i <= to; i += 1) {
     sum += samples[i + arm]! - samples[i - arm - 1]!;
     const here = sign * (sum / smooth - baseline);
     if (previous > 0 && here <= 0) {
       const place = i - 1 + previous / (previous - here);
-      const distance = Math.abs(place - centre);
-      if (distance < nearest) {
-        nearest = distance;
+      if (Math.abs(place - coarse) < nearest) {
+        nearest = Math.abs(place - coarse);
         best = place;
       }
     }
     previous = here;
   }
   return best;
+}
+
+/** Median of the block at `index` and its `arm` neighbours on either side, the ends going on. */
+function localMedian(level: Float32Array, index: number, arm: number): number {
+  if (arm === 0) return level[index]!;
+  const last = level.length - 1;
+  const at = (i: number) => level[i < 0 ? 0 : i > last ? last : i]!;
+  const here = at(index);
+  const b = at(index - 1);
+  const d = at(index + 1);
+  if (arm === 1) return Math.max(Math.min(b, d), Math.min(here, Math.max(b, d)));
+  const a = at(index - 2);
+  const e = at(index + 2);
+  const low = Math.max(Math.min(a, b), Math.min(d, e));
+  const high = Math.min(Math.max(a, b), Math.max(d, e));
+  return Math.max(Math.min(low, high), Math.min(here, Math.max(low, high)));
 }
 
 /** Highest less lowest of the running mean within `reach` samples of the crossing. */

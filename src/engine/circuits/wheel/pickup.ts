@@ -45,7 +45,7 @@ export function findPickup(values: Float32Array): Pickup | null {
   const heightOf = localHeights(swings);
   for (let k = 0; k < swings.count; k += 1) {
     const height = swings.height[k]!;
-    if (Math.abs(height) < LOCAL_SHARE * heightOf[k]!) continue;
+    if (height === 0 || Math.abs(height) < LOCAL_SHARE * heightOf[k]!) continue;
     (height > 0 ? falling : rising).push(k);
   }
   if (falling.length + rising.length < 4) return null;

@@ -7,6 +7,8 @@ const MOST_SCATTER = 0.12;
 const MOST_SHARE = 0.35;
 /** Neighbouring intervals must differ at least so much: compression alone makes up to 1.45 on a wheel with few teeth. */
 const LEAST_RATIO = 1.45;
+/** Likeness (correlation) of each turn with the next. */
+const LEAST_LIKENESS = 0.9;
 /** Likeness of the two halves of a turn (correlation) above which the true turn may be half as long. */
 const HALF_LIKENESS = 0.3;
 
@@ -28,6 +30,7 @@ export function findSpacingPattern(times: Float64Array): PatternResult {
     const variation = deviation(shares);
     const scatter = laggedDeviation(shares, teeth);
     if (scatter > MOST_SCATTER || scatter > MOST_SHARE * variation) continue;
+    if (correlation(shares, teeth) < LEAST_LIKENESS || !stepsComeBack(shares, teeth)) continue;
     if (teeth === 2 || (teeth % 2 === 0 && correlation(shares, teeth / 2) > HALF_LIKENESS)) {
       return no(
         `the spacing comes back every ${teeth} teeth, but that may be half a turn, a turn or two: a cam signal beside it tells`,
@@ -62,6 +65,21 @@ function largestStep(shares: Float64Array): number {
   for (let k = 1; k < shares.length; k += 1) steps[k - 1] = Math.abs(shares[k]! - shares[k - 1]!);
   // Every turn must show such a step; one odd interval must not.
   return steps.sort()[Math.max(0, Math.floor(steps.length * (1 - 1 / MOST_TEETH)) - 1)] ?? 0;
+}
+
+/** Every large step from interval to interval must be there again one turn on. */
+function stepsComeBack(shares: Float64Array, teeth: number): boolean {
+  const large = Math.log(LEAST_RATIO);
+  let matched = 0;
+  let missed = 0;
+  for (let k = 1; k + teeth < shares.length; k += 1) {
+    const here = shares[k]! - shares[k - 1]!;
+    const there = shares[k + teeth]! - shares[k + teeth - 1]!;
+    if (Math.max(Math.abs(here), Math.abs(there)) < large) continue;
+    if (Math.sign(here) === Math.sign(there) && Math.abs(here - there) < 0.5 * large) matched += 1;
+    else missed += 1;
+  }
+  return matched >= 2 && missed <= 0.2 * matched;
 }
 
 function deviation(values: Float64Array): number {

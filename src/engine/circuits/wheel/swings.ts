@@ -55,7 +55,11 @@ function filterStretch(
   const from = Math.max(0, Math.floor(begin / size) - blocks - 2);
   const to = Math.min(level.length, Math.ceil(end / size) + blocks + 2);
   const clean =
-    blocks >= 8 ? medians5(level, from, to) : blocks >= 4 ? medians3(level, from, to) : level.slice(from, to);
+    blocks >= 8
+      ? medians5(cut(level, from, to))
+      : blocks >= 4
+        ? medians3(cut(level, from, to))
+        : cut(level, from, to);
 
   let before = 0;
   let after = 0;
@@ -71,39 +75,37 @@ function filterStretch(
   }
 }
 
+function cut(level: Float32Array, from: number, to: number): Float32Array {
+  if (from >= 0 && to <= level.length) return level.subarray(from, to);
+  return Float32Array.from(
+    { length: to - from },
+    (_, i) => level[Math.min(level.length - 1, Math.max(0, from + i))]!,
+  );
+}
+
 /** Running median of five: a spike shorter than two blocks leaves no trace, an edge stays where it is. */
-function medians5(level: Float32Array, from: number, to: number): Float32Array {
-  const out = level.slice(from, to);
-  for (let i = from + 2; i + 2 < to; i += 1) {
-    let a = level[i - 2]!;
-    let b = level[i - 1]!;
-    const c = level[i]!;
-    let d = level[i + 1]!;
-    let e = level[i + 2]!;
-    if (a > b) [a, b] = [b, a];
-    if (d > e) [d, e] = [e, d];
-    // The lowest and the highest of the four cannot be the middle of the five: median of what is left.
-    const low = a > d ? a : d;
-    const high = b < e ? b : e;
-    const floor = low < high ? low : high;
-    const ceiling = low < high ? high : low;
-    out[i - from] = c < floor ? floor : c > ceiling ? ceiling : c;
+function medians5(level: Float32Array): Float32Array {
+  const out = level.slice();
+  for (let i = 2; i + 2 < level.length; i += 1) {
+    const a = level[i - 2]!;
+    const b = level[i - 1]!;
+    const d = level[i + 1]!;
+    const e = level[i + 2]!;
+    // The lowest and the highest of the four cannot be the middle of the five: median of the rest.
+    const low = Math.max(Math.min(a, b), Math.min(d, e));
+    const high = Math.min(Math.max(a, b), Math.max(d, e));
+    out[i] = middle(level[i]!, low, high);
   }
   return out;
 }
 
-function medians3(level: Float32Array, from: number, to: number): Float32Array {
-  const out = level.slice(from, to);
-  for (let i = from + 1; i + 1 < to; i += 1) {
-    const a = level[i - 1]!;
-    const b = level[i]!;
-    const c = level[i + 1]!;
-    const low = a < c ? a : c;
-    const high = a < c ? c : a;
-    out[i - from] = b < low ? low : b > high ? high : b;
-  }
+function medians3(level: Float32Array): Float32Array {
+  const out = level.slice();
+  for (let i = 1; i + 1 < level.length; i += 1) out[i] = middle(level[i]!, level[i - 1]!, level[i + 1]!);
   return out;
 }
+
+const middle = (a: number, b: number, c: number) => Math.max(Math.min(a, b), Math.min(Math.max(a, b), c));
 
 /** Follows the filter's output and keeps an extreme once it has turned away from it by more than the floor. */
 export class SwingList {

@@ -4,6 +4,9 @@ import type { Pattern } from './pattern.ts';
 export interface ToothTrain {
   readonly timesS: Float64Array;
   readonly swing: Float64Array | null;
+  /** Answer of the tooth filter and its half-width, for comparing teeth. */
+  readonly height: Float64Array | null;
+  readonly halfWidth: Float64Array | null;
 }
 
 /** A pattern joined with its times: what every turn-based value is computed from. */
@@ -12,17 +15,22 @@ export interface FoundWheel {
   /** Time of each of `pattern.events`, seconds. */
   readonly timesS: Float64Array;
   readonly swing: Float64Array | null;
+  readonly height: Float64Array | null;
+  readonly halfWidth: Float64Array | null;
   /** Times of the reference marks. */
   readonly marksS: Float64Array;
 }
 
 export function joinWheel(train: ToothTrain, pattern: Pattern): FoundWheel {
   const timesS = Float64Array.from(pattern.events, (event) => train.timesS[event]!);
-  const swing = train.swing;
+  const pick = (source: Float64Array | null) =>
+    source ? Float64Array.from(pattern.events, (event) => source[event]!) : null;
   return {
     pattern,
     timesS,
-    swing: swing ? Float64Array.from(pattern.events, (event) => swing[event]!) : null,
+    swing: pick(train.swing),
+    height: pick(train.height),
+    halfWidth: pick(train.halfWidth),
     marksS: Float64Array.from(pattern.marks, (position) => timesS[position]!),
   };
 }

@@ -37,7 +37,8 @@ export function wheelFindings(
     ? markSpans(completeTurns(wheel))
     : [{ from: wheel.timesS[0]!, to: wheel.timesS.at(-1)! }];
   const speeds = toothSpeeds(wheel);
-  const irregular = irregularTeeth(wheel);
+  const gaps = gapRatio(wheel);
+  const irregular = irregularTeeth(wheel, gaps);
   return {
     values: [
       {
@@ -49,7 +50,7 @@ export function wheelFindings(
       },
       { key: 'teeth_present', value: pattern.teeth, unit: '1', evidence: spans },
       { key: 'teeth_missing', value: pattern.missing, unit: '1', evidence: spans },
-      gapRatio(wheel),
+      gaps,
       ...turnValues(wheel),
       instantSpeed(speeds),
       speedRipple(speeds, hasMark),

@@ -6,6 +6,8 @@ const FEWEST_TEETH = 6;
 const MOST_TEETH = 80;
 /** Wide pulses are at least this much longer than narrow ones; between the two there is an empty stretch. */
 const LEAST_RATIO = 1.6;
+/** Each width makes at least this share of the pulses: a gap is no wide pulse. */
+const LEAST_SHARE = 0.2;
 
 /**
  * Finds a wheel whose slots are told apart by wide and narrow pulses (24 slots, each edge of one kind 15 degrees apart):
@@ -27,6 +29,10 @@ export function findWidthPattern(times: Float64Array, widths: Float64Array): Pat
   const narrowMiddle = median(widths.filter((width) => width <= split))!;
   const wideMiddle = median(widths.filter((width) => width > split))!;
   if (wideMiddle < LEAST_RATIO * narrowMiddle) return no('the pulses are all of one width');
+
+  const wides = wide.reduce((sum, w) => sum + w, 0);
+  if (Math.min(wides, wide.length - wides) < LEAST_SHARE * wide.length)
+    return no('the pulses are all of one width');
 
   for (let teeth = FEWEST_TEETH; teeth <= MOST_TEETH; teeth += 1) {
     const overlap = wide.length - teeth;
