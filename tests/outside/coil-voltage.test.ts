@@ -2,7 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { measureCoilPrimaryVoltage } from '../../src/engine/circuits/coil-primary-voltage.ts';
 import { burnTimeOf, COIL, coilVolts, every, type Recording, record } from './fixtures/simulate.ts';
-import { codesOf, numberOf, valueOf } from './fixtures/values.ts';
+import { codesOf, numberOf, valueFor } from './fixtures/values.ts';
 
 const clean: Recording = { rateHz: 500_000, durationS: 0.35, noise: 0.1, seed: 3 };
 const offs = every(5, 0.06, 0.05);
@@ -49,8 +49,8 @@ describe('measureCoilPrimaryVoltage()', () => {
     const found = measure(clean, { ...COIL, burnS: 0, kick: 380, flatS: 60e-6 });
     expect(numberOf(found, 'firing_count')).toBe(5);
     expect(numberOf(found, 'dwell')).toBeCloseTo(4.2, 1);
-    expect(valueOf(found, 'burn_time')).toMatchObject({ value: null, reason: 'no burn line' });
-    expect(valueOf(found, 'burn_level')).toMatchObject({ value: null, reason: 'no burn line' });
+    expect(valueFor(found, 'burn_time')).toMatchObject({ value: null, reason: 'no burn line' });
+    expect(valueFor(found, 'burn_level')).toMatchObject({ value: null, reason: 'no burn line' });
     expect(Math.abs(numberOf(found, 'kick_peak') - 380)).toBeLessThan(3.8);
     expect(codesOf(found)).toEqual(expect.arrayContaining(['kick-flat-top', 'no-burn-line']));
     expect(numberOf(found, 'ring_count')).toBeGreaterThan(8);
@@ -75,11 +75,11 @@ describe('measureCoilPrimaryVoltage()', () => {
   it('leaves out what the ends of the capture cut', () => {
     const cutStart = measure({ ...clean, startS: 0.048 });
     expect(numberOf(cutStart, 'firing_count')).toBe(5);
-    expect(valueOf(cutStart, 'dwell').n).toBe(4);
-    expect(valueOf(cutStart, 'burn_time').n).toBe(5);
+    expect(valueFor(cutStart, 'dwell').n).toBe(4);
+    expect(valueFor(cutStart, 'burn_time').n).toBe(5);
     const cutEnd = measure({ ...clean, durationS: 0.2905 });
     expect(numberOf(cutEnd, 'firing_count')).toBe(5);
-    expect(valueOf(cutEnd, 'burn_time').n).toBe(4);
+    expect(valueFor(cutEnd, 'burn_time').n).toBe(4);
     expect(numberOf(measure({ ...clean, durationS: 0.289 }), 'firing_count')).toBe(4);
   });
 
@@ -88,8 +88,8 @@ describe('measureCoilPrimaryVoltage()', () => {
     expect(numberOf(found, 'firing_count')).toBe(1);
     expect(Math.abs(numberOf(found, 'dwell') - 4.2)).toBeLessThan(0.01);
     expect(Math.abs(numberOf(found, 'supply_level') - 12.2)).toBeLessThan(0.12);
-    expect(valueOf(found, 'firing_interval').value).toBeNull();
-    expect(valueOf(found, 'missed_firings').value).toBeNull();
+    expect(valueFor(found, 'firing_interval').value).toBeNull();
+    expect(valueFor(found, 'missed_firings').value).toBeNull();
   });
 
   it('keeps times and says so where a probe factor is forgotten', () => {
@@ -101,8 +101,8 @@ describe('measureCoilPrimaryVoltage()', () => {
 
   it('gives no level from an AC-coupled input, but times', () => {
     const found = measure({ ...clean, offset: -12.6 });
-    expect(valueOf(found, 'supply_level').value).toBeNull();
-    expect(valueOf(found, 'kick_peak').value).toBeNull();
+    expect(valueFor(found, 'supply_level').value).toBeNull();
+    expect(valueFor(found, 'kick_peak').value).toBeNull();
     expect(Math.abs(numberOf(found, 'dwell') - 4.2)).toBeLessThan(0.01);
     expect(codesOf(found)).toContain('ac-coupled');
   });
@@ -133,7 +133,7 @@ describe('measureCoilPrimaryVoltage()', () => {
       );
       expect(numberOf(found, 'firing_count')).toBe(0);
       expect(numberOf(found, 'supply_level')).toBeCloseTo(level, 1);
-      expect(valueOf(found, 'dwell').reason).toBeTruthy();
+      expect(valueFor(found, 'dwell').reason).toBeTruthy();
       expect(codesOf(found)).toEqual(['flat-line']);
     }
   });
@@ -191,8 +191,8 @@ describe('measureCoilPrimaryVoltage()', () => {
           for (const key of ['supply_level', 'on_level', 'kick_peak', 'burn_level']) {
             expect(numberOf(moved, key) / scale).toBeCloseTo(numberOf(plain, key), 3);
           }
-          expect(valueOf(moved, 'dwell').evidence[0]!.from - shiftS).toBeCloseTo(
-            valueOf(plain, 'dwell').evidence[0]!.from,
+          expect(valueFor(moved, 'dwell').evidence[0]!.from - shiftS).toBeCloseTo(
+            valueFor(plain, 'dwell').evidence[0]!.from,
             6,
           );
         },

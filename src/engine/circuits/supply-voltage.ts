@@ -3,6 +3,7 @@ import { evenMeans } from '../signal/even-means.ts';
 import { highestIn, lowestIn, rangeMedian } from '../signal/range.ts';
 import { indexAtOrAfter } from '../signal/time.ts';
 import { absent, type Value } from '../value.ts';
+import { partOf } from './events/part-of.ts';
 import { stretch, whole } from './events/whole.ts';
 import { momentsOf } from './other/moments.ts';
 import { findCrankingDip } from './supply-voltage/cranking-dip.ts';
@@ -34,7 +35,7 @@ export function measureSupplyVoltage(signal: MeasuredSignal): Findings {
   const plateau = dip ? ([indexOf(dip.plateau), indexOf(dip.to)] as const) : null;
   const cranking =
     plateau && plateau[1] - plateau[0] > 2
-      ? momentsOf(values.subarray(...plateau), part(axis, plateau))
+      ? momentsOf(values.subarray(...plateau), partOf(axis, plateau[0], plateau[1] - plateau[0]))
       : null;
   const lowest: Value = { key: 'lowest', value: values[low]!, unit, evidence: [stretch(axis, low, low)] };
   return {
@@ -59,11 +60,4 @@ export function measureSupplyVoltage(signal: MeasuredSignal): Findings {
       values[highestIn(values, 0, values.length)]!,
     ),
   };
-}
-
-/** The time axis of a part of the samples. */
-function part(axis: MeasuredSignal['axis'], [from, to]: readonly [number, number]): MeasuredSignal['axis'] {
-  return axis.kind === 'even'
-    ? { ...axis, startS: axis.startS + from * axis.stepS, count: to - from }
-    : { ...axis, timesS: axis.timesS.subarray(from, to) };
 }

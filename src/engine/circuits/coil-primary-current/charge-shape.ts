@@ -1,7 +1,9 @@
 import { type ExponentialFit, fitExponential } from '../../signal/exponential-fit.ts';
 import { fitLine } from '../../signal/line-fit.ts';
-import { rangeMean } from '../../signal/range.ts';
+import { rangeMean, rangeMedian } from '../../signal/range.ts';
+import { robustDeviation } from '../../signal/statistics.ts';
 import { timeAt } from '../../signal/time.ts';
+import { partOf } from '../events/part-of.ts';
 import type { Charge } from './charges.ts';
 import type { CurrentTrace } from './trace.ts';
 
@@ -34,10 +36,11 @@ export function chargeShape(trace: CurrentTrace, charge: Charge): ChargeShape {
   const from = charge.first ?? 0;
   const { last } = charge;
   const endS = timeAt(axis, last);
-  const tail = last - 0.1 * (last - from);
-  const held = rangeMean(amperes, tail, last + 1) ?? amperes[last]!;
-  const slope = fitLine(amperes, axis, tail, last + 1);
-  const tailS = endS - timeAt(axis, tail);
+  const tailFrom = Math.ceil(last - 0.1 * (last - from));
+  const tail = withoutOutliers(amperes.subarray(tailFrom, last + 1));
+  const held = rangeMean(tail, 0, tail.length) ?? amperes[last]!;
+  const slope = fitLine(tail, partOf(axis, tailFrom, tail.length), 0, tail.length);
+  const tailS = endS - timeAt(axis, tailFrom);
   const drift = slope ? Math.abs(slope.slope) * tailS : Number.POSITIVE_INFINITY;
   const flat =
     drift < 0.01 * held || (slope !== null && drift < 0.015 * held && drift < 2 * slope.slopeError * tailS);
@@ -46,7 +49,13 @@ export function chargeShape(trace: CurrentTrace, charge: Charge): ChargeShape {
   const fit = fitPart(trace, from, to);
   const good = fit !== null && fit.residual < Math.max(2 * noise, 0.012 * held) && fit.slope > 0;
   const originS = timeAt(axis, from);
-  const peak = flat ? held : good ? fit.at(endS - originS) : lineAt(trace, tail, last, held);
+  const peak = flat
+    ? held
+    : good
+      ? fit.at(endS - originS)
+      : slope
+        ? slope.middle + slope.slope * (endS - slope.middleS)
+        : held;
   const footS = charge.first === null ? null : footOf(trace, charge.first, peak);
   const zeroS = good && fit.zeroS !== null ? originS + fit.zeroS : null;
   const lengthS = endS - originS;
@@ -80,7 +89,7 @@ function kneeOf(amperes: Float32Array, from: number, last: number, level: number
   return last;
 }
 
-/** Fit over at most 600 means of neighbouring samples, times from sample `from` on. */
+/** Fit over at most 600 means of neighbouring samples, times from sample `from` on; what lies far off is left out and the rest fitted again. */
 function fitPart(trace: CurrentTrace, from: number, to: number): ExponentialFit | null {
   const { amperes, axis } = trace;
   const size = Math.max(1, Math.ceil((to - from + 1) / MOST_POINTS));
@@ -93,7 +102,17 @@ function fitPart(trace: CurrentTrace, from: number, to: number): ExponentialFit 
     timesS.push(timeAt(axis, i + (size - 1) / 2) - originS);
     means.push(value);
   }
-  return fitExponential(Float64Array.from(timesS), Float64Array.from(means));
+  const first = fitExponential(Float64Array.from(timesS), Float64Array.from(means));
+  if (!first) return null;
+  const off = timesS.map((timeS, k) => means[k]! - first.at(timeS));
+  const reach =
+    5 * Math.max(robustDeviation(off) ?? 0, 1e-6 * Math.abs(first.at(timesS[timesS.length - 1]!)));
+  const kept = timesS.map((_, k) => k).filter((k) => Math.abs(off[k]!) <= reach);
+  if (kept.length === timesS.length || kept.length < 0.8 * timesS.length) return first;
+  return fitExponential(
+    Float64Array.from(kept, (k) => timesS[k]!),
+    Float64Array.from(kept, (k) => means[k]!),
+  );
 }
 
 /** Where the trace itself leaves zero: the passage of 4 % of the peak just before the first sample with current. */
@@ -114,7 +133,10 @@ function startOfLine(trace: CurrentTrace, from: number, to: number, footS: numbe
   return Math.abs(zeroS - footS) < 0.15 * (timeAt(trace.axis, to) - footS) ? zeroS : footS;
 }
 
-function lineAt(trace: CurrentTrace, from: number, last: number, otherwise: number): number {
-  const line = fitLine(trace.amperes, trace.axis, from, last + 1);
-  return line ? line.middle + line.slope * (timeAt(trace.axis, last) - line.middleS) : otherwise;
+/** A copy in which what lies far from the rest (pick-up at the switch-off) is a hole. */
+function withoutOutliers(values: Float32Array): Float32Array {
+  const middle = rangeMedian(values, 0, values.length);
+  const reach = 6 * (robustDeviation(values) ?? 0);
+  if (middle === null || !(reach > 0)) return values;
+  return values.map((value) => (Math.abs(value - middle) <= reach ? value : Number.NaN));
 }

@@ -3,6 +3,7 @@ import { rangeMedian } from '../../signal/range.ts';
 import { timeAt } from '../../signal/time.ts';
 import type { Charge } from '../coil-primary-current/charges.ts';
 import type { CurrentTrace } from '../coil-primary-current/trace.ts';
+import { partOf } from '../events/part-of.ts';
 import { findHump } from '../injector-voltage/hump.ts';
 
 export interface InjectorCurrentPulse {
@@ -28,10 +29,7 @@ export function pulseShape(trace: CurrentTrace, charge: Charge): InjectorCurrent
   const tail = rangeMedian(amperes, last - 0.33 * (last - from), last + 1);
   const rise = from + top;
   const mirrored = amperes.subarray(from, rise + 1).map((value) => -value);
-  const axisPart =
-    axis.kind === 'even'
-      ? { ...axis, startS: timeAt(axis, from), count: mirrored.length }
-      : { ...axis, timesS: axis.timesS.subarray(from, rise + 1) };
+  const axisPart = partOf(axis, from, mirrored.length);
   const dent = charge.first === null ? null : findHump(mirrored, axisPart, 0, mirrored.length, -peak, noise);
   return {
     startS: charge.first === null ? null : timeAt(axis, charge.first),
