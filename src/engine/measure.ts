@@ -6,13 +6,19 @@ import type {
   SignalInput,
   Wheel,
 } from './capture.ts';
+import type { Circuit } from './circuit.ts';
 import { type CamEdges, measureCam } from './circuits/cam.ts';
 import { measureCoilCommand } from './circuits/coil-command.ts';
 import { measureCoilPrimaryCurrent } from './circuits/coil-primary-current.ts';
 import { measureCoilPrimaryVoltage } from './circuits/coil-primary-voltage.ts';
 import { measureCrankHall } from './circuits/crank-hall.ts';
 import { measureCrankPickup } from './circuits/crank-vr.ts';
+import { measureFuelPumpCurrent } from './circuits/fuel-pump-current.ts';
+import { measureInjectorCurrent } from './circuits/injector-current.ts';
+import { measureInjectorVoltage } from './circuits/injector-voltage.ts';
 import { measureOther } from './circuits/other.ts';
+import { measureStarterCurrent } from './circuits/starter-current.ts';
+import { measureSupplyVoltage } from './circuits/supply-voltage.ts';
 import type { MeasuredSignal } from './circuits/types.ts';
 import { relate } from './relations/index.ts';
 import { ENGINE_VERSION } from './version.ts';
@@ -35,18 +41,19 @@ export function measureCapture(input: CaptureInput): CaptureFindings {
   }
   const [cam] = cams.values();
   for (const signal of input.signals) {
-    if (findings.has(signal.index)) continue;
-    if (signal.circuit === 'crank-vr' || signal.circuit === 'crank-hall') {
-      const measureCrank = signal.circuit === 'crank-vr' ? measureCrankPickup : measureCrankHall;
+    const { index, circuit } = signal;
+    if (circuit === 'cam-hall' || circuit === 'cam-vr') continue;
+    if (circuit === 'crank-vr' || circuit === 'crank-hall') {
+      const measureCrank = circuit === 'crank-vr' ? measureCrankPickup : measureCrankHall;
       const { wheel: found, ...rest } = measureCrank(measured(signal, input), {
-        index: signal.index,
+        index,
         cylinders: input.cylinders,
         camEdgesS: cam?.risingS ?? cam?.fallingS ?? null,
       });
-      findings.set(signal.index, rest);
+      findings.set(index, rest);
       wheel ??= found;
     } else {
-      findings.set(signal.index, measureByCircuit(measured(signal, input), input.cylinders));
+      findings.set(index, measureByCircuit(measured(signal, input), circuit, input.cylinders));
     }
   }
   const signals: SignalFindings[] = input.signals.map(({ index, circuit }) => ({
@@ -57,15 +64,31 @@ export function measureCapture(input: CaptureInput): CaptureFindings {
   return { engine: ENGINE_VERSION, signals, relations: relate(wheel, signals, cams), wheel };
 }
 
-function measureByCircuit(signal: MeasuredSignal, _cylinders: number | null): Findings {
-  switch (signal.circuit) {
+type MeasuredAlone = Exclude<Circuit, 'crank-vr' | 'crank-hall' | 'cam-vr' | 'cam-hall'>;
+
+function measureByCircuit(
+  signal: MeasuredSignal,
+  circuit: MeasuredAlone,
+  cylinders: number | null,
+): Findings {
+  switch (circuit) {
     case 'coil-primary-voltage':
       return measureCoilPrimaryVoltage(signal);
     case 'coil-primary-current':
       return measureCoilPrimaryCurrent(signal);
     case 'coil-command':
       return measureCoilCommand(signal);
-    default:
+    case 'injector-voltage':
+      return measureInjectorVoltage(signal);
+    case 'injector-current':
+      return measureInjectorCurrent(signal);
+    case 'starter-current':
+      return measureStarterCurrent(signal, cylinders);
+    case 'supply-voltage':
+      return measureSupplyVoltage(signal);
+    case 'fuel-pump-current':
+      return measureFuelPumpCurrent(signal);
+    case 'other':
       return measureOther(signal);
   }
 }

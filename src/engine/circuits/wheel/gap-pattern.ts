@@ -6,6 +6,8 @@ import { layOnPlaces, type Placed, SINGLE_MOST } from './places.ts';
 const MOST_SCATTER = 0.24;
 /** Share of the gaps that must find their like one turn on. */
 const LEAST_MATCH = 0.75;
+/** Fewer teeth a gap than this are few. */
+const FEW_TEETH = 16;
 /** With fewer gaps than this in the train, every one must find its like. */
 const FEWEST_GAPS = 6;
 /** Share of the train that must be followed when its ends are left out. */
@@ -98,6 +100,7 @@ function trimmed(times: Float64Array, placed: Placed): Placed {
 /** Ways to read the gaps' lengths in whole places: a pick-up's gap may measure 3.5 periods where three are meant. */
 function sizings(placed: Placed): Array<(ratio: number) => number> {
   const gaps = Array.from(placed.ratio.filter((r) => r >= SINGLE_MOST)).sort((a, b) => a - b);
+  const intervals = placed.ratio.length;
   const jump = Math.max(0.25, 3 * placed.scatter);
   const clusters: number[][] = [];
   for (const gap of gaps) {
@@ -112,7 +115,9 @@ function sizings(placed: Placed): Array<(ratio: number) => number> {
     const wide = to - cluster[0]! > Math.max(1.4, 0.5 * middle);
     const nearest = Math.max(2, Math.round(middle));
     const other = middle > nearest ? nearest + 1 : nearest - 1;
-    const open = !wide && Math.abs(middle - nearest) > 0.2 && other >= 2 && ways.length < 8;
+    // A long gap among few teeth lasts a good part of the turn, in which the speed swings: its length is open too.
+    const long = middle > 2.6 && intervals < FEW_TEETH * gaps.length;
+    const open = !wide && (long || Math.abs(middle - nearest) > 0.2) && other >= 2 && ways.length < 8;
     const sizes = wide ? [0] : open ? [nearest, other] : [nearest];
     ways = ways.flatMap((way) => sizes.map((size) => [...way, { to, size }]));
   }
@@ -179,6 +184,9 @@ function findTurn(laid: Laid): Found | null {
   const template = commonTemplate(features, turn, end);
   if (!template) return null;
   const missing = template.reduce((sum, gap) => sum + gap.size - 1, 0);
+  // Several gaps seen over no more than one turn could be anything: only an ordinary division is believed.
+  const ordinary = (360 % turn === 0 || 720 % turn === 0) && template.length <= 3;
+  if (template.length > 1 && !ordinary && end < 2 * turn + missing) return null;
   if (turn - missing < FEWEST_TEETH || nearlyShorter(template, turn)) return null;
   // Wheels are divided into a whole number of degrees or halves; this decides only where a gap's length is open.
   const natural = 360 % turn === 0 || 720 % turn === 0;

@@ -8,6 +8,8 @@ const OFF_DEGREES = 0.2;
 /** In this share of the turns. */
 const SHARE = 0.8;
 const MOST_TURNS = 200;
+/** With fewer places the speed swings too much from tooth to tooth to say where one is due. */
+const FEWEST_PLACES = 20;
 /** Neighbours are looked for within so many places. */
 const REACH = 4;
 
@@ -174,7 +176,9 @@ export function irregularTeeth(wheel: FoundWheel, gaps: Value): Irregular {
         usable.map((j) => height![j]!),
         0,
       );
-    return Math.abs(bent - 1) < Math.abs(plain - 1) ? bent : plain;
+    const nearer = Math.abs(bent - 1) < Math.abs(plain - 1) ? bent : plain;
+    // With few teeth the two differ widely: what lies between them is no fault of the tooth.
+    return places! < FEWEST_PLACES && Math.abs(bent - plain) > 0.1 ? null : nearer;
   }
 
   /**
@@ -182,6 +186,7 @@ export function irregularTeeth(wheel: FoundWheel, gaps: Value): Irregular {
    * may be wrong by is judged from how far it is from the straight line through the two nearest.
    */
   function offset(k: number, near: readonly number[]): { degrees: number; doubt: number } | null {
+    if (places! < FEWEST_PLACES) return null;
     const usable = near.filter((j) => !strange.has(number[j]!));
     const before = usable.filter((j) => j < k);
     const after = usable.filter((j) => j > k);
