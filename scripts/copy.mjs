@@ -42,13 +42,13 @@ export async function prepareCheckout(say, run = runProgram) {
 /**
  * Starts one copy. How to stop it is handed over before anything runs, so that it can be ended at any moment.
  * @param {{ dataDir: string, host: string, port: number, origin?: string | undefined, durable?: boolean,
- *   say: import('./lib/say.mjs').Say, onStop: (stop: () => Promise<void>) => void }} options `port` 0: any that is free
+ *   say: import('./lib/say.mjs').Say, onStop: (stop: () => Promise<void>, instance: import('./lib/instance.mjs').Instance) => void }} options `port` 0: any that is free
  * @returns {Promise<Copy>}
  */
 export async function startCopy({ dataDir, host, port: wanted, origin: given, durable = true, say, onStop }) {
   const instance = await openInstance({ dataDir, say });
   const port = await claimPort(host, wanted);
-  onStop(instance.stop);
+  onStop(instance.stop, instance);
   await prepareCheckout(say, recorded(instance, 'set-up'));
 
   const services = await startServices({ dataDir, say, durable, instance });

@@ -1,0 +1,133 @@
+// @ts-check
+import { existsSync, mkdtempSync, readdirSync, readFileSync, rmSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { runChecks } from './check.mjs';
+import { prepareCheckout } from './copy.mjs';
+import { installChromium } from './lib/install-debian.mjs';
+import { root } from './lib/root.mjs';
+import { runMain } from './lib/run-main.mjs';
+import { runProgram } from './lib/run-program.mjs';
+import { say } from './lib/say.mjs';
+import { startTestCopy } from './lib/test-copy.mjs';
+
+/**
+ * `npm test`: everything that a change must pass, in one run. It ends with one line, `N passed, N failed, N skipped`.
+ *
+ * @typedef {import('./lib/vitest-counts.mjs').Counts} Counts
+ */
+
+/** The whole run stays under this; what has not finished by then has failed. */
+const WHOLE_RUN_MS = 14.5 * 60_000;
+const deadline = Date.now() + WHOLE_RUN_MS;
+
+/** @type {Counts} */
+const total = { passed: 0, failed: 0, skipped: [] };
+/** @type {() => Promise<unknown>} */
+let stopCopy = async () => {};
+
+const counts = mkdtempSync(join(tmpdir(), 'gapmark-counts-'));
+process.on('exit', () => rmSync(counts, { recursive: true, force: true }));
+
+/** @param {string} title @param {() => Promise<void>} work */
+async function stage(title, work) {
+  say(`\n== ${title}`);
+  const began = Date.now();
+  try {
+    await work();
+  } catch (error) {
+    total.failed += 1;
+    say(`✗ ${title}: ${error instanceof Error ? error.message : String(error)}`);
+  }
+  say(`   ${title}: ${Math.round((Date.now() - began) / 1000)} s`);
+}
+
+/**
+ * @param {string} config
+ * @param {{ limitMs: number, env?: Record<string, string> }} options
+ */
+async function vitest(config, { limitMs, env = {} }) {
+  const file = join(counts, `${config}.json`);
+  const { code, output } = await runProgram(
+    process.execPath,
+    // biome-ignore format: one option and its value a line
+    [
+      join(root, 'node_modules/vitest/vitest.mjs'), 'run', '--config', config,
+      '--reporter', join(root, 'scripts/lib/vitest-counts.mjs'), '--reporter', 'dot', '--silent=passed-only',
+    ],
+    {
+      cwd: root,
+      env: { ...process.env, ...env, TEST_COUNTS: file, CI: '1', NO_COLOR: '1', FORCE_COLOR: '0' },
+      show: true,
+      limitMs: Math.max(1000, Math.min(limitMs, deadline - Date.now())),
+    },
+  );
+  if (!existsSync(file)) {
+    const hung = output.includes('\nEnded: it had not finished');
+    throw new Error(
+      hung
+        ? `ended after ${Math.round(limitMs / 1000)} s: something in it hangs`
+        : `vitest ended with code ${code}`,
+    );
+  }
+  /** @type {Counts} */
+  const found = JSON.parse(readFileSync(file, 'utf8'));
+  total.passed += found.passed;
+  total.failed += found.failed;
+  total.skipped.push(...found.skipped);
+  if (code !== 0 && found.failed === 0) throw new Error(`vitest ended with code ${code}`);
+}
+
+/** @param {string} folder */
+const hasTests = (folder) =>
+  existsSync(join(root, folder)) &&
+  readdirSync(join(root, folder), { recursive: true, encoding: 'utf8' }).some((name) =>
+    /\.test\.tsx?$/.test(name),
+  );
+
+async function main() {
+  await prepareCheckout(say);
+  await installChromium(say);
+
+  await stage('Types, lint and import rules', async () => {
+    const { passed, failed } = await runChecks();
+    total.passed += passed;
+    total.failed += failed;
+  });
+  await stage('Unit tests and outside checks', () => vitest('vitest.config.ts', { limitMs: 6 * 60_000 }));
+
+  /** @type {Record<string, string>} */
+  let env = {};
+  await stage('A copy to test against', async () => {
+    const copy = await startTestCopy(say, (stop) => {
+      stopCopy = stop;
+    });
+    env = copy.env;
+  });
+  if (env.GAPMARK_TEST_ORIGIN !== undefined) {
+    if (hasTests('tests/api'))
+      await stage('API tests', () => vitest('vitest.api.config.ts', { limitMs: 6 * 60_000, env }));
+    if (hasTests('tests/browser')) {
+      await stage('Browser tests', () => vitest('vitest.browser.config.ts', { limitMs: 7 * 60_000, env }));
+    }
+    await stage('Nothing is left running', async () => {
+      const left = await stopCopy();
+      stopCopy = async () => {};
+      if (Array.isArray(left) && left.length > 0) throw new Error(`still there: ${left.join(', ')}`);
+      total.passed += 1;
+    });
+  }
+  conclude();
+}
+
+function conclude() {
+  say('');
+  for (const { title, reason } of total.skipped) say(`skipped: ${title}: ${reason || 'NO REASON GIVEN'}`);
+  // A skip must say why; one that does not is a test that somebody switched off.
+  total.failed += total.skipped.filter(({ reason }) => reason === '').length;
+  if (total.passed + total.failed === 0) total.failed = 1;
+  say(`${total.passed} passed, ${total.failed} failed, ${total.skipped.length} skipped`);
+  process.exit(total.failed > 0 ? 1 : 0);
+}
+
+await runMain(main, { stop: async () => void (await stopCopy()) });
