@@ -57,7 +57,10 @@ export function Numbers({ capture, measurements, wheel, chosen, onChoose }: Numb
               value={only}
               onChange={setOnly}
               options={[
-                ...groups.map((group) => ({ value: group.id, text: group.signal === null ? 'Both' : group.name })),
+                ...groups.map((group) => ({
+                  value: group.id,
+                  text: group.signal === null ? 'Both' : group.name,
+                })),
                 { value: 'all', text: 'All' },
               ]}
             />

@@ -7,21 +7,25 @@ import { createWindowLoader, type WindowLoader } from './window-loader.ts';
 /** What a pointer on the lanes does. */
 export type Tool = 'move' | 'span' | 'mark';
 
-/**
- * One plot's state outside React: the view, the cursor, the span, the samples. Pieces watch what they draw, so a moved
- * cursor redraws no trace and a moved view renders nothing but the plot.
- */
-export interface PlotModel {
-  readonly capture: PlotCapture;
+/** What pointers and keys move: a view on one axis, with cursor, span and tool. */
+export interface ViewModel {
   readonly bounds: Bounds;
   readonly view: Store<View>;
   readonly cursorS: Store<number | null>;
   readonly span: Store<View | null>;
   readonly tool: Store<Tool>;
+  show(view: View): void;
+}
+
+/**
+ * One plot's state outside React: the view, the cursor, the span, the samples. Pieces watch what they draw, so a moved
+ * cursor redraws no trace and a moved view renders nothing but the plot.
+ */
+export interface PlotModel extends ViewModel {
+  readonly capture: PlotCapture;
   /** Width of the lanes in CSS pixels; 0 before they were laid out. */
   readonly widthPx: Store<number>;
   readonly loader: WindowLoader;
-  show(view: View): void;
   devicePixels(): number;
   close(): void;
 }
@@ -35,7 +39,8 @@ export function createPlotModel(
   initial: View | null,
 ): PlotModel {
   const bounds = boundsOf(capture.startS, capture.durationS, capture.samples);
-  const view = createStore<View>(initial === null ? bounds.whole : clampView(initial, bounds));
+  const viewModel = createViewModel(bounds, initial);
+  const { view } = viewModel;
   const widthPx = createStore(0);
   const loader = createWindowLoader(bounds.whole, fetchWindow);
   const devicePixels = () =>
@@ -45,17 +50,17 @@ export function createPlotModel(
   };
   view.subscribe(ask);
   widthPx.subscribe(ask);
+  return { ...viewModel, capture, widthPx, loader, devicePixels, close: () => loader.close() };
+}
+
+export function createViewModel(bounds: Bounds, initial: View | null = null): ViewModel {
+  const view = createStore<View>(initial === null ? bounds.whole : clampView(initial, bounds));
   return {
-    capture,
     bounds,
     view,
     cursorS: createStore<number | null>(null),
     span: createStore<View | null>(null),
     tool: createStore<Tool>('move'),
-    widthPx,
-    loader,
     show: (next) => view.set(clampView(next, bounds)),
-    devicePixels,
-    close: () => loader.close(),
   };
 }

@@ -1,5 +1,5 @@
 import { type RefObject, useEffect } from 'react';
-import type { PlotModel, Tool } from './model.ts';
+import type { Tool, ViewModel } from './model.ts';
 import type { View } from './types.ts';
 import { panBy, pinch, timeAtShare, zoomAt } from './view.ts';
 
@@ -30,7 +30,7 @@ const DOUBLE_TAP_MS = 320;
 /** Wheel zooms at the pointer, drag moves, two fingers pinch, a double tap shows all; the span and mark tools draw. */
 export function useLaneGestures(
   stage: RefObject<HTMLElement | null>,
-  model: PlotModel,
+  model: ViewModel,
   onPlace: (placed: Placed) => void,
 ): void {
   useEffect(() => {
