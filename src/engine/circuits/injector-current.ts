@@ -10,6 +10,9 @@ import { whole } from './events/whole.ts';
 import { type InjectorCurrentPulse, pulseShape } from './injector-current/pulse-shape.ts';
 import type { MeasuredSignal } from './types.ts';
 
+/** A hold is a quarter of the peak (TI LM1949: 3.85 A and 0.94 A); half of that tells it from nothing. */
+const HOLD_SHARE = 0.12;
+
 const NONE = 'no pulse with both ends in the capture';
 
 /**
@@ -21,7 +24,7 @@ export function measureInjectorCurrent(signal: MeasuredSignal): Findings {
   const trace = currentTrace(signal.values, axis);
   if (!trace) return nothing(signal, 'no samples to measure', null);
   if (!(trace.top > 8 * trace.noise)) return nothing(signal, 'no pulse in the capture', trace.zero);
-  const pulses = findCharges(trace).map((charge) => pulseShape(trace, charge));
+  const pulses = findCharges(trace, HOLD_SHARE).map((charge) => pulseShape(trace, charge));
   const complete = pulses.flatMap((pulse) =>
     pulse.startS === null ? [] : [{ ...pulse, startS: pulse.startS }],
   );

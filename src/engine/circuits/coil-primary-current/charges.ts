@@ -14,10 +14,14 @@ export interface Charge {
 
 const SHORTEST_S = 0.1e-3;
 
-/** Charges whose switch-off is in the capture. Spikes (a fifth of the longest charge, or under 0.1 ms) are not charges. */
-export function findCharges(trace: CurrentTrace): Charge[] {
+/**
+ * Charges whose switch-off is in the capture. Spikes (a fifth of the longest charge, or under 0.1 ms) are not charges.
+ *
+ * @param share of the top at which a charge is told from nothing; low for a current that is brought down to a hold.
+ */
+export function findCharges(trace: CurrentTrace, share = 0.35): Charge[] {
   const { amperes, axis, top, noise } = trace;
-  const found = crossings(amperes, { level: 0.35 * top, hysteresis: 0.3 * top });
+  const found = crossings(amperes, { level: share * top, hysteresis: 0.8 * share * top });
   const charges: Charge[] = [];
   let rise: number | null = null;
   for (let k = 0; k < found.count; k += 1) {

@@ -9,11 +9,13 @@ export interface Hump {
 }
 
 const POINTS = 240;
+/** Points averaged on either side; the ends, where that cannot be done evenly, are left out. */
+const REACH = 3;
 
 /**
  * A decaying voltage bends upwards everywhere (it is convex), so whatever stands above the lower convex hull of the decay
- * is not part of it. The hump is the place that stands furthest above, if that is more than five times what noise leaves
- * after averaging, and more than 1.2 % of the height of the decay.
+ * is not part of it. The hump is the place that stands furthest above, if that is more than nine times what noise leaves
+ * after averaging (the hull runs along its lowest points), and more than 1.2 % of the height of the decay.
  *
  * @param from first sample of the decay (the clamp's end); `to` first sample after it.
  */
@@ -35,29 +37,29 @@ export function findHump(
     ys.push(y);
   }
   if (xs.length < 20) return null;
-  const smooth = ys.map((_, k) => meanAround(ys, k, 3));
-  const hull = lowerHull(xs, smooth);
+  const times = xs.slice(REACH, -REACH);
+  const smooth = times.map((_, k) => meanOf(ys, k, k + 2 * REACH + 1));
+  const hull = lowerHull(times, smooth);
   let best = -1;
   let height = 0;
   let corner = 0;
-  for (let k = 0; k < xs.length; k += 1) {
+  for (let k = 0; k < times.length; k += 1) {
     while (corner + 1 < hull.length - 1 && hull[corner + 1]! <= k) corner += 1;
     const a = hull[corner]!;
     const b = hull[corner + 1]!;
-    const chord = smooth[a]! + ((smooth[b]! - smooth[a]!) * (xs[k]! - xs[a]!)) / (xs[b]! - xs[a]!);
+    const chord =
+      smooth[a]! + ((smooth[b]! - smooth[a]!) * (times[k]! - times[a]!)) / (times[b]! - times[a]!);
     if (smooth[k]! - chord > height) {
       height = smooth[k]! - chord;
       best = k;
     }
   }
-  const left = noise / Math.sqrt(7 * size);
-  const enough = Math.max(5 * left + 0.3 * noise, 0.012 * (smooth[0]! - rest));
-  return best > 0 && height > enough ? { atS: xs[best]!, height } : null;
+  const left = noise / Math.sqrt((2 * REACH + 1) * size);
+  const enough = Math.max(9 * left, 0.012 * (smooth[0]! - rest));
+  return best > 0 && height > enough ? { atS: times[best]!, height } : null;
 }
 
-function meanAround(ys: readonly number[], at: number, reach: number): number {
-  const from = Math.max(0, at - reach);
-  const to = Math.min(ys.length, at + reach + 1);
+function meanOf(ys: readonly number[], from: number, to: number): number {
   let sum = 0;
   for (let k = from; k < to; k += 1) sum += ys[k]!;
   return sum / (to - from);

@@ -11,10 +11,14 @@ export interface Compressions {
 
 /** The inrush takes this long to die away; only for the first look. Common practice, no source. */
 const INRUSH_S = 0.25;
+/** The end of cranking is found on a trace smoothed over 30 ms; the hump that it cuts is no compression. */
+const RELEASE_S = 0.02;
 
 /** null: no compression stands out from the noise (an engine without compression, or one that does not turn). */
 export function findCompressions(cranking: Cranking): Compressions | null {
-  const { means, startSeen, to } = cranking;
+  const { means, startSeen } = cranking;
+  const released = cranking.to < means.values.length;
+  const to = cranking.to - (released ? Math.round(RELEASE_S / means.stepS) : 0);
   const skip = startSeen
     ? Math.min(Math.round(INRUSH_S / means.stepS), Math.floor(0.35 * (to - cranking.from)))
     : 0;
@@ -22,7 +26,8 @@ export function findCompressions(cranking: Cranking): Compressions | null {
   const firstLook = spectralRate(means, from, to);
   if (firstLook === null) return null;
   const first = cranking.from + (startSeen ? Math.round(0.02 / means.stepS) : 0);
-  const all = findHumps(means, first, to, firstLook);
+  const period = 1 / (firstLook * means.stepS);
+  const all = findHumps(means, first, to, firstLook).filter(({ at }) => !released || at < to - 0.4 * period);
   const humps = startSeen ? all.slice(2) : all;
   if (humps.length < 3) return null;
   const start = humps[0]!;
