@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { isUnderWay, rowVerdict, sureness } from './words.ts';
+import { firstSentence, isUnderWay, rowVerdict, sureness } from './words.ts';
 
 const none = { watch: 0, bad: 0, first: null };
 
@@ -17,6 +17,15 @@ describe('rowVerdict()', () => {
       word: 'measuring',
     });
     expect(rowVerdict({ status: 'failed', notices: none })?.verdict).toBe('bad');
+  });
+});
+
+describe('firstSentence()', () => {
+  it('stops at the first full stop before a capital, not inside a number or an abbreviation', () => {
+    expect(firstSentence('Tooth 23 is at 0.31 of its neighbours, e.g. chipped. Look at the wheel.')).toBe(
+      'Tooth 23 is at 0.31 of its neighbours, e.g. chipped.',
+    );
+    expect(firstSentence('One')).toBe('One');
   });
 });
 

@@ -24,9 +24,12 @@ export function rowVerdict(
   const { bad, watch, first } = row.notices;
   if (bad + watch === 0) return null;
   const others = bad + watch - 1;
-  const text = first ?? 'see its notices';
+  const text = first === null ? 'see its notices' : firstSentence(first);
   return { verdict: bad > 0 ? 'bad' : 'watch', word: others > 0 ? `${text} and ${others} more` : text };
 }
+
+/** A notice says what was measured first; what it usually means and what to check is on the capture's own page. */
+export const firstSentence = (text: string): string => text.split(/(?<=[.!?])\s+(?=\p{Lu})/u)[0] ?? text;
 
 /** How sure the program is of a circuit, in a word. The limits are ours: no source. */
 export function sureness(confidence: number): { verdict: VerdictName; word: string } {

@@ -28,7 +28,7 @@ export function WheelDrawing({
   const teeth = places - missing;
   const firstDeg = ((missing + 1) / 2) * pitch;
   const toothDeg = (index: number) => firstDeg + index * pitch;
-  const half = pitch * 0.2;
+  const half = pitch * 0.25;
   const outline = Array.from({ length: teeth }, (_, index) => {
     const deg = toothDeg(index);
     const tip = index + 1 === shortTooth ? 78 : 94;
@@ -43,7 +43,7 @@ export function WheelDrawing({
     .join('');
   return (
     <svg
-      viewBox={dimensioned ? '-116 -120 232 240' : '-98 -98 196 196'}
+      viewBox={dimensioned ? '-114 -116 228 232' : '-98 -98 196 196'}
       className={className}
       role="img"
       aria-label={label}
@@ -61,7 +61,7 @@ export function WheelDrawing({
           <circle r="100" className="stroke-ink" strokeWidth="0.4" />
           <path d={ticks} className="stroke-ink" strokeWidth="0.5" />
           <path
-            d="M0-112V112M-112 0H112"
+            d="M0-98V112M-112 0H112"
             className="stroke-accent"
             strokeWidth="0.4"
             strokeDasharray="12 2 2 2"
