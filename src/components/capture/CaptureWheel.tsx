@@ -61,16 +61,16 @@ export function CaptureWheel({ id }: { id: string }) {
   );
 }
 
-const valueOf = (measurements: MeasurementsJson | undefined, signal: number, key: string) =>
+const valueUnder = (measurements: MeasurementsJson | undefined, signal: number, key: string) =>
   measurements?.signals.find((each) => each.index === signal)?.values.find((value) => value.key === key);
 
 function irregularOf(measurements: MeasurementsJson | undefined, signal: number): readonly IrregularTooth[] {
-  const value = valueOf(measurements, signal, 'irregular_teeth')?.value;
+  const value = valueUnder(measurements, signal, 'irregular_teeth')?.value;
   return Array.isArray(value) ? value.filter((each) => typeof each === 'object' && each !== null) : [];
 }
 
 function speedOf(measurements: MeasurementsJson | undefined, signal: number): string | null {
-  const value = valueOf(measurements, signal, 'rpm_mean')?.value;
+  const value = valueUnder(measurements, signal, 'rpm_mean')?.value;
   return typeof value === 'number' ? `${fixed(value, 1)} rpm` : null;
 }
 

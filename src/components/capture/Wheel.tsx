@@ -185,7 +185,6 @@ function Bars({ teeth, of, chosen, onChoose }: BarsProps) {
           full height {of === 'height' ? `± ${fixed(reach, 2)} ×` : `± ${fixed(reach, 2)}°`}
         </span>
       </figcaption>
-      {/* biome-ignore lint/a11y/useKeyWithClickEvents: the stepper above chooses by keys */}
       <svg
         viewBox="0 0 480 60"
         preserveAspectRatio="none"

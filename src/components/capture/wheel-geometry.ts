@@ -1,7 +1,8 @@
 import type { WheelJson } from '../../contract/areas/captures.ts';
 import { lastAtOrBefore } from '../plot/degrees.ts';
+import type { PlotWheel } from '../plot/types.ts';
 
-type Wheel = NonNullable<WheelJson>;
+type Wheel = Readonly<Omit<NonNullable<WheelJson>, 'marksS' | 'teethS' | 'teethDeg'>> & PlotWheel;
 
 export interface WheelTooth {
   /** Tooth 1 is the reference mark. */
