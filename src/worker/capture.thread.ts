@@ -1,4 +1,4 @@
-import { parentPort, workerData } from 'node:worker_threads';
+import { parentPort } from 'node:worker_threads';
 import type { CaptureInput, SignalInput, TimeAxis } from '../engine/capture.ts';
 import { measureCapture } from '../engine/measure.ts';
 import { readTable } from '../engine/reading/read.ts';
@@ -10,20 +10,19 @@ import { draftSignals, requested } from './draft-signals.ts';
 import { storedAxis } from './stored-axis.ts';
 import type { SignalDraft, ThreadMessage, ThreadTask } from './thread-messages.ts';
 import { BadArchive } from './unpack/bad-archive.ts';
-import { openOriginal } from './unpack/open-original.ts';
+import { hashOf, openOriginal } from './unpack/open-original.ts';
 
 /**
  * Reads or measures one capture in a thread of its own, so that the worker stays answerable and can end it at any moment.
  * It talks to the store only; what it finds goes to the worker as messages, which writes it down.
  */
-const task = workerData as ThreadTask;
 const tell = (message: ThreadMessage) => parentPort?.postMessage(message);
 
 /** How much of the reading phase the reading itself is; the rest is writing samples. */
 const READING_PART = 0.85;
 
-async function run(): Promise<void> {
-  const input = task.kind === 'read' ? await read() : await load();
+async function run(task: ThreadTask): Promise<void> {
+  const input = task.kind === 'read' ? await read(task) : await load(task);
   if (input === null) return;
   tell({ type: 'progress', phase: 'measuring', part: 0.1 });
   const { drafts, ...capture } = input;
@@ -32,7 +31,7 @@ async function run(): Promise<void> {
 
 type Loaded = CaptureInput & { readonly drafts: readonly SignalDraft[] };
 
-async function read(): Promise<Loaded | null> {
+async function read(task: ThreadTask): Promise<Loaded | null> {
   const { captureId, originalKey, bytes, samplesVersion, needsSha256, unpackedLimitBytes } = task;
   const original = await openOriginal(originalKey, bytes, { needsSha256, unpackedLimitBytes });
   const table = await readTable(original.text, {
@@ -62,7 +61,7 @@ async function read(): Promise<Loaded | null> {
   return { axis, signals, cylinders: task.cylinders, drafts };
 }
 
-async function load(): Promise<Loaded> {
+async function load(task: ThreadTask): Promise<Loaded> {
   const row = { id: task.captureId, samplesVersion: task.samplesVersion, axis: task.axis };
   const drafts = task.signals.map((draft) => requested(draft, task.signalRequests));
   const axis: TimeAxis = await loadAxis(row);
@@ -76,11 +75,19 @@ function signalInput(draft: SignalDraft, samples: Float32Array): SignalInput {
   return { index, name, circuit, unit, factor, offset, samples, ...(rail === null ? {} : { rail }) };
 }
 
-try {
-  await run();
-} catch (error) {
-  if (error instanceof BadArchive) tell({ type: 'unreadable', failure: error.toFailure(), sha256: null });
-  else if (isStoreAway(error) || (error instanceof ApiError && error.code === 'service_away'))
-    tell({ type: 'away', message: error instanceof Error ? error.message : String(error) });
-  else throw error;
+/** Faults that are not the file's and not the store's end the thread: the worker counts the attempt as failed. */
+async function take(task: ThreadTask): Promise<void> {
+  try {
+    await run(task);
+  } catch (error) {
+    if (error instanceof BadArchive) {
+      const sha256 = await hashOf(task.originalKey, task.needsSha256);
+      tell({ type: 'unreadable', failure: error.toFailure(), sha256 });
+    } else if (isStoreAway(error) || (error instanceof ApiError && error.code === 'service_away'))
+      tell({ type: 'away', message: error instanceof Error ? error.message : String(error) });
+    else throw error;
+  }
+  tell({ type: 'done' });
 }
+
+parentPort?.on('message', (task: ThreadTask) => void take(task));

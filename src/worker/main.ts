@@ -10,6 +10,7 @@ import { takeBackFromDead } from '../server/queue/take-back.ts';
 import { takeJob } from '../server/queue/take-job.ts';
 import { ensureBucket } from '../server/storage/ensure-bucket.ts';
 import { handleJob } from './handle-job.ts';
+import { warmThreads } from './run-thread.ts';
 import { Running } from './running.ts';
 import { Wakeup } from './wakeup.ts';
 import { WorkerLock } from './worker-lock.ts';
@@ -129,6 +130,7 @@ for (const name of ['SIGTERM', 'SIGINT'] as const) process.on(name, () => void s
 await whenThere(() => queue(true), 'the database');
 await whenThere(ensureBucket, 'the store');
 await whenThere(() => lock.session.open(), 'the database');
+warmThreads(LANES);
 log.info({ worker: lock.number }, 'worker ready');
 every(TAKE_BACK_MS, takeBack);
 every(HOUSEKEEPING_MS, housekeeping);

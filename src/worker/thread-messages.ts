@@ -42,5 +42,7 @@ export type ThreadMessage =
       readonly signals: readonly SignalDraft[];
     }
   | { readonly type: 'unreadable'; readonly failure: ReadFailure; readonly sha256: string | null }
+  /** The task is over; the thread waits for another. */
+  | { readonly type: 'done' }
   /** The store is away: try again later, nothing is wrong with the file. */
   | { readonly type: 'away'; readonly message: string };

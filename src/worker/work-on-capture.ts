@@ -48,6 +48,8 @@ export async function workOnCapture(job: TakenJob, signal: AbortSignal): Promise
           sha256: message.sha256,
         });
       }
+      case 'done':
+        return;
       case 'away':
         throw new ApiError('service_away', { cause: new Error(message.message) });
     }

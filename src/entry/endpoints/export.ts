@@ -14,10 +14,16 @@ export async function exportEndpoint(front: FrontRequest): Promise<void> {
   const row = await openCapture(caller, 'captures.export', front.params.id ?? '');
   const { from, to } = readQuery(ENDPOINTS['captures.export'].query, front.url.searchParams);
   const lines = await exportCsv(row, { from, to });
+  const first = await lines.next();
   front.response.writeHead(200, {
     'Content-Type': 'text/csv; charset=utf-8',
     'Content-Disposition': attachment(`${row.title || 'capture'}.csv`),
     'Cache-Control': 'private, no-store',
   });
+  if (first.done) {
+    front.response.end();
+    return;
+  }
+  front.response.write(first.value);
   await pipeline(Readable.from(lines), front.response).catch(() => front.response.destroy());
 }

@@ -5,7 +5,7 @@ import { findUpload, type UploadRecord } from '../../server/captures/uploads/fin
 import { ApiError } from '../../server/errors.ts';
 import { call } from '../call.ts';
 import { checkCreation } from '../tus/check-creation.ts';
-import { finish, tus } from '../tus/tus-server.ts';
+import { beginsAs, finish, tus } from '../tus/tus-server.ts';
 import type { FrontRequest } from '../types.ts';
 
 type UploadsId = Extract<EndpointId, `uploads.${string}`>;
@@ -27,7 +27,7 @@ export const uploadsEndpoint =
     }
     if (id === 'uploads.create') {
       const { length, metadata } = checkCreation(header);
-      request.headers['gapmark-upload-id'] = await beginUpload(caller, length, metadata);
+      beginsAs(request, await beginUpload(caller, length, metadata));
       return handle(front);
     }
     const row = await findUpload(caller, params.id ?? '');

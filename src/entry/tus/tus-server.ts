@@ -1,3 +1,4 @@
+import type { IncomingMessage } from 'node:http';
 import { Server, type Upload } from '@tus/server';
 import { finishUpload } from '../../server/captures/uploads/finish-upload.ts';
 import { config } from '../../server/config.ts';
@@ -14,6 +15,12 @@ export interface Tus {
   readonly store: UploadStore;
   readonly locker: UploadLocker;
 }
+
+/** The id of the row that was made for a request that begins an upload. */
+const begun = new WeakMap<object, string>();
+
+/** Tells the package under which id the upload of this request begins. */
+export const beginsAs = (request: IncomingMessage, id: string) => void begun.set(request, id);
 
 let made: Tus | undefined;
 
@@ -36,8 +43,7 @@ function make(): Tus {
     maxSize: config().uploadLimitBytes,
     disableTerminationForFinishedUploads: true,
     lockDrainTimeout: 1_000,
-    // The row was made before, and the request carries its id.
-    namingFunction: (request) => request.headers.get('gapmark-upload-id') ?? '',
+    namingFunction: (request) => begun.get(request.runtime?.node?.req ?? {}) ?? '',
     onUploadFinish: async (_request, upload) => ({
       headers: { 'Gapmark-Capture': await finish(store, upload) },
     }),

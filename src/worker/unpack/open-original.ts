@@ -52,7 +52,7 @@ export async function openOriginal(
 }
 
 /** Reads the whole original once more: an archive is not read from end to end while it is unpacked. */
-async function hashOf(key: string, needed: boolean): Promise<string | null> {
+export async function hashOf(key: string, needed: boolean): Promise<string | null> {
   if (!needed) return null;
   const hash = createHash('sha256');
   const { body } = await getObject(key);

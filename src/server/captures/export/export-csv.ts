@@ -47,7 +47,9 @@ export async function exportCsv(
   }
 
   return (async function* lines() {
-    yield `${['Time (s)', ...names].join(',')}\n`;
+    // The names go out with the first rows, so that a store that is away is told by status and not by half a file.
+    let text = `${['Time (s)', ...names].join(',')}\n`;
+    if (from >= to) yield text;
     for (let start = from; start < to; start += ROWS_AT_A_TIME) {
       const end = Math.min(to, start + ROWS_AT_A_TIME);
       const timeOf = await times(start, end);
@@ -56,13 +58,13 @@ export async function exportCsv(
         const key = samplesKey(row.id, samplesVersion, index);
         columns.push(asFloat32(await getBytes(key, { from: start * 4, to: end * 4 })));
       }
-      let text = '';
       for (let index = start; index < end; index += 1) {
         text += String(timeOf(index));
         for (const column of columns) text += `,${shortestFloat32(column[index - start]!)}`;
         text += '\n';
       }
       yield text;
+      text = '';
     }
   })();
 }
