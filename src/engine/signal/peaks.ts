@@ -44,7 +44,7 @@ function localMaxima(values: Float32Array | Float64Array): number[] {
   return found;
 }
 
-/** From the highest down, each peak removes those nearer than `distance`; of equal heights the later one goes first. */
+/** From the highest down, each peak removes those nearer than `distance`; of equal heights the earlier one goes (SciPy leaves that open). */
 function keepApart(
   values: Float32Array | Float64Array,
   maxima: readonly number[],
