@@ -2,7 +2,7 @@ import { cellKind } from './cellKind.ts';
 import { splitCells } from './cells.ts';
 import type { Dialect } from './dialect.ts';
 import type { HeadLine } from './lines.ts';
-import { splitName } from './names.ts';
+import { isTimeName, splitName } from './names.ts';
 import { isPreambleLine } from './preamble.ts';
 import type { ReadingHints } from './types.ts';
 import { parseUnit, type Unit } from './units.ts';
@@ -73,7 +73,9 @@ function isNames(text: string, cells: readonly string[], dialect: Dialect): bool
   const { cells: width, delimiter, decimal } = dialect;
   const filled = cells.filter((cell) => cell !== '');
   const words = filled.filter((cell) => cellKind(cell, decimal) === 'text');
-  if (words.length === 0 || words.length * 2 < filled.length - 1) return false;
+  if (words.length === 0) return false;
+  // Channels may be named by numbers alone, after a heading for the time.
+  if (words.length * 2 < filled.length - 1 && !isTimeName(cells[0]!)) return false;
   const trimmed = cells.findLastIndex((cell) => cell !== '') + 1;
   if (width === 1) return trimmed === 1 && !isPreambleLine(text, delimiter) && text.length <= 60;
   if (trimmed < 2 || trimmed > width + 1 || cells.length < width - 1) return false;

@@ -1,7 +1,7 @@
 import { splitCells } from './cells.ts';
 import { type Dialect, detectDialect, MOST_SNIFFED_LINES } from './dialect.ts';
 import { findHeader, type Header } from './header.ts';
-import { type HeadLine, splitLines } from './lines.ts';
+import { type HeadLine, joinHeadings, splitLines } from './lines.ts';
 import { type Preamble, readPreamble } from './preamble.ts';
 import { findRoles, type Roles } from './roles.ts';
 import type { Delimiter, Encoding, ReadingHints, TimeUnit } from './types.ts';
@@ -27,7 +27,7 @@ export function findLayout(
   isWholeFile: boolean,
   said: ReadingHints,
 ): Layout {
-  const lines = splitLines(head, encoding, isWholeFile, MOST_SNIFFED_LINES);
+  const lines = joinHeadings(splitLines(head, encoding, isWholeFile, MOST_SNIFFED_LINES));
   const named = /^\s*"?sep=(.)"?\s*$/i.exec(lines[0]?.text ?? '')?.[1];
   const hints = said.delimiter === undefined && isDelimiter(named) ? { ...said, delimiter: named } : said;
   const dialect = detectDialect(lines, hints);

@@ -34,3 +34,27 @@ export function splitLines(
   }
   return lines;
 }
+
+/** Lines among which headings with a line end inside their quotes are looked for. */
+const HEADING_LINES = 60;
+
+/**
+ * Joins headings that were broken inside quotes, as "Time<line end>(s)" is: a line with a quote left open, letters in
+ * it, and the line within the next three that closes it. Only headings: rows of numbers are never joined.
+ */
+export function joinHeadings(lines: readonly HeadLine[]): HeadLine[] {
+  const joined: HeadLine[] = [];
+  const isOpen = (text: string) => text.split('"').length % 2 === 0;
+  for (let i = 0; i < lines.length; i++) {
+    const line = lines[i]!;
+    const near = i < HEADING_LINES && /[A-Za-z]/.test(line.text) && isOpen(line.text);
+    const close = near ? lines.slice(i + 1, i + 4).findIndex(({ text }) => isOpen(text)) : -1;
+    const parts = lines.slice(i, i + 2 + close);
+    if (close < 0 || !parts.every(({ text }) => /[A-Za-z]/.test(text))) joined.push(line);
+    else {
+      joined.push({ ...line, text: parts.map(({ text }) => text).join(' ') });
+      i += close + 1;
+    }
+  }
+  return joined;
+}

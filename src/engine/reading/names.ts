@@ -17,7 +17,8 @@ const FORMS: readonly RegExp[] = [
 
 /** Splits a heading into name and unit. What stands in brackets and is no unit stays part of the name. */
 export function splitName(heading: string): ColumnName {
-  const text = unguard(heading.trim());
+  // A comment sign before the line of names is no part of the first.
+  const text = unguard(heading.trim().replace(/^[#%]+\s*(?=[A-Za-z])/, ''));
   for (const form of FORMS) {
     const match = form.exec(text);
     const unit = match === null ? null : parseUnit(match[2]!);
@@ -29,7 +30,7 @@ export function splitName(heading: string): ColumnName {
 const TIME =
   /^(time|times|time ?stamp|elapsed|elapsed time|rel(ative)?\.? time|time axis|x|x[- ]?axis|x[- ]?value|t|zeit|temps|tiempo|tempo|tijd|tid|czas|aika|время)\b/i;
 const COUNTER =
-  /^(#|no\.?|nr\.?|n|i|index|idx|samples?|sample ?(no\.?|nr\.?|number|index|#)|points?|row|record|num|number|count|messpunkt|lfd\.? ?nr\.?)$/i;
+  /^(#|no\.?|nr\.?|index|idx|samples?|sample ?(no\.?|nr\.?|number|index|#)|points?|row|record|num|number|count|messpunkt|lfd\.? ?nr\.?)$/i;
 
 /** True for headings that name a time axis. */
 export const isTimeName = (name: string): boolean => TIME.test(name);

@@ -30,12 +30,11 @@ interface Entry {
 
 /** True for a line that says something about the recording, so that it cannot be the line of names. */
 export function isPreambleLine(text: string, delimiter: Delimiter): boolean {
-  return entriesOf(text, delimiter).some(
-    ({ key, value }) =>
-      value !== '' &&
-      (/\d/.test(value) || TIME_UNIT.test(key)) &&
-      (INTERVAL.test(key) || RATE.test(key) || START.test(key) || DATE.test(key)),
-  );
+  return entriesOf(text, delimiter).some(({ key, value }) => {
+    if (DATE.test(key) && DATE_VALUE.test(value)) return true;
+    if (TIME_UNIT.test(key)) return value !== '';
+    return /\d/.test(value) && (INTERVAL.test(key) || RATE.test(key) || START.test(key));
+  });
 }
 
 /** Reads sample interval or rate, start, date and time unit from the lines above the table; the first of each counts. */

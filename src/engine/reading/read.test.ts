@@ -333,6 +333,38 @@ test('readTable() lets hints override what it would find', async () => {
   expect(second.reading.headerLine).toBe(1);
 });
 
+test('readTable() joins headings that a line end inside quotes has broken', async () => {
+  const { columns, reading } = await readGood('"Time\n(ms)","Crank\n(V)"\n0,1\n1,2\n2,3\n');
+  expect(reading).toMatchObject({ timeUnit: 'ms', headerLine: 1, rows: 3 });
+  expect(columns[0]).toMatchObject({ name: 'Crank', unit: 'V' });
+});
+
+test('readTable() takes numbers for names where they follow a heading for the time', async () => {
+  const { columns, reading } = await readGood('Time,1,2,3\n0,7,8,9\n1,7,8,9\n2,7,8,9\n');
+  expect(reading.headerLine).toBe(1);
+  expect(columns.map(({ name }) => name)).toEqual(['1', '2', '3']);
+});
+
+test('readTable() leaves out a column in which nothing was recorded, unless it was asked for', async () => {
+  const text = 'Time,U,Note\n0,1,\n1,2,\n2,3,\n';
+  expect((await readGood(text)).columns.map(({ name }) => name)).toEqual(['U']);
+  expect((await readGood(text, { columns: [1, 2] })).columns).toHaveLength(2);
+});
+
+test('readTable() uses a counter of samples only with a known interval', async () => {
+  expect(await readBad('Sample,U (V)\n0,1.5\n1,2.5\n2,3.5\n')).toMatchObject({ code: 'interval_needed' });
+  const { axis, columns } = await readGood('Sample rate: 1 kHz\nSample,U (V)\n0,1.5\n1,2.5\n2,3.5\n');
+  expect(axis).toMatchObject({ kind: 'even', stepS: 0.001 });
+  expect(columns.map(({ name }) => name)).toEqual(['U']);
+});
+
+test('readTable() refuses a time that stands still or can hardly ever be read', async () => {
+  expect(await readBad('Time,U\n5,1\n5,2\n5,3\n5,4\n')).toMatchObject({ code: 'interval_needed', line: 2 });
+  expect(await readBad(`Time;U\n${rows(20, (i) => `${i === 0 ? 0 : `0.${i}`};${i},5`)}\n`)).toMatchObject({
+    code: 'no_numbers',
+  });
+});
+
 test('readTable() shows the first lines with what it made of them', async () => {
   const { preview } = await readGood('Bench\n\nTime,U\n(s),(V)\n0,1\n1,x\n2,3\n3,4\n');
   expect(preview.map(({ line, role }) => [line, role])).toEqual([

@@ -4,13 +4,17 @@ import type { Timing } from './timing.ts';
 import type { ReadColumn } from './types.ts';
 
 /** Sentences about what was found and what was made of it: what happened, where, what was kept, what to do. */
-export function makeRemarks(
-  layout: Layout,
-  scanner: Scanner,
-  timing: Timing,
-  leftForTime: readonly number[],
-  rails: readonly ReadColumn['rail'][],
-): string[] {
+export function makeRemarks(about: {
+  readonly layout: Layout;
+  readonly scanner: Scanner;
+  readonly timing: Timing;
+  /** Signals left out because they belong to another time column. */
+  readonly leftForTime: readonly number[];
+  /** Columns left out because they hold nothing. */
+  readonly silent: readonly number[];
+  readonly rails: readonly ReadColumn['rail'][];
+}): string[] {
+  const { layout, scanner, timing, leftForTime, silent, rails } = about;
   const { header, roles, dialect } = layout;
   const named = (column: number) =>
     header.names[column] ? `“${header.names[column]}”` : `column ${column + 1}`;
@@ -70,11 +74,12 @@ export function makeRemarks(
       );
     } else remarks.push(`${cap(named(column))} repeats the time and was left out.`);
   });
-  const unread = roles.leftOut.filter((column) => header.names[column]);
+  const unread = [...roles.leftOut, ...silent].filter((column) => header.names[column]);
   if (unread.length > 0 && unread.length <= 8)
     remarks.push(`Left out, as they hold no signal: ${unread.map(named).join(', ')}.`);
 
   scanner.stage.columns.forEach((column, i) => {
+    if (silent.includes(roles.signals[i]!)) return;
     const name = cap(named(roles.signals[i]!));
     for (const [cells, side, extreme] of [
       [column.high, 'highest', rails[i]?.high ?? null],
@@ -99,7 +104,7 @@ export function makeRemarks(
     remarks.push(
       `The line of names stands ${count(scanner.keeper.repeatedNames, 'more time')} inside the table; the rows were joined, since time goes on.`,
     );
-  if (footer !== null) {
+  if (footer !== null && stop === null) {
     const last = footer.from + footer.count - 1;
     remarks.push(
       footer.count === 1

@@ -54,7 +54,11 @@ export function findRoles(
   const columns = shapes.map((_, column) => column);
   let times = columns.filter(isTime);
   const counters = columns.filter(
-    (column) => isCounterName(header.names[column] ?? '') && shapes[column]!.rises && !times.includes(column),
+    (column) =>
+      isCounterName(header.names[column] ?? '') &&
+      (header.units[column] ?? null) === null &&
+      shapes[column]!.rises &&
+      !times.includes(column),
   );
   if (times.length === 0 && dialect.cells > 1) {
     const first = columns.find((column) => !counters.includes(column) && shapes[column]!.filled > 0);

@@ -14,6 +14,8 @@ export interface Start {
   readonly head: Head;
   readonly layout: Layout;
   readonly plan: Plan;
+  /** True when a person said which columns to read. */
+  readonly isChosen: boolean;
   /** Where the first row begins in the head's bytes. */
   readonly firstRowAt: number;
 }
@@ -117,7 +119,7 @@ export function startReading(
     firstLine: first.line,
     blankIsHole: dialect.cells === 1 && blank * 5 < dialect.rows.length,
   };
-  return { ok: true, head, layout, plan, firstRowAt: first.from };
+  return { ok: true, head, layout, plan, isChosen: hints.columns !== undefined, firstRowAt: first.from };
 }
 
 /** "0,001,1,5" under two names: commas that separate and commas in numbers cannot be told apart. */

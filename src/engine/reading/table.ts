@@ -7,7 +7,7 @@ import { findTiming, type Timing } from './timing.ts';
 import type { ReadColumn, ReadOutcome } from './types.ts';
 
 /** Makes the outcome from what the scanner holds; the scanner is empty afterwards. */
-export function finishTable({ layout, head, plan }: Start, scanner: Scanner): ReadOutcome {
+export function finishTable({ layout, head, plan, isChosen }: Start, scanner: Scanner): ReadOutcome {
   const { dialect, header, roles, preamble } = layout;
   const preview = makePreview(layout);
   const first = plan.firstLine;
@@ -30,19 +30,41 @@ export function finishTable({ layout, head, plan }: Start, scanner: Scanner): Re
       first,
     );
   }
+  const unread = scanner.stage.rows - (timing.kept?.length ?? scanner.stage.rows);
+  if (2 * unread > scanner.stage.rows) {
+    return failure(
+      'no_numbers',
+      `The time cannot be read in ${unread} of ${scanner.stage.rows} rows from line ${first} on.`,
+      'Check the decimal mark, the unit of time and which column holds the time.',
+      preview,
+      scanner.keeper.rejections.first[0]?.line ?? first,
+    );
+  }
+  const { axis } = timing;
+  if (axis.kind === 'uneven' && axis.timesS.length > 2 && axis.timesS[0] === axis.timesS.at(-1)) {
+    return failure(
+      'interval_needed',
+      `The time is the same in all rows from line ${first} on, so it cannot tell when the samples were taken.`,
+      'Enter the sample interval, or choose another column for the time.',
+      preview,
+      first,
+    );
+  }
   const left = signalsOfOtherTimes(scanner, plan.otherTimes, plan.signals, timing);
+  const silent = silentColumns(scanner, plan.signals, isChosen);
   const finished = scanner.stage.columns.map((column) => column.finish());
-  const remarks = makeRemarks(
+  const remarks = makeRemarks({
     layout,
     scanner,
     timing,
-    left,
-    finished.map(({ rail }) => rail),
-  );
+    leftForTime: left,
+    silent,
+    rails: finished.map(({ rail }) => rail),
+  });
   const columns: ReadColumn[] = [];
   finished.forEach(({ samples, rail }, i) => {
     const place = plan.signals[i]!;
-    if (left.includes(place)) return;
+    if (left.includes(place) || silent.includes(place)) return;
     const unit = header.units[place] ?? null;
     columns.push({
       column: place,
@@ -94,4 +116,13 @@ function signalsOfOtherTimes(
   });
   // Were all signals to go, the choice of the time column is what is wrong; they are kept and the remark tells.
   return left.length === signals.length ? [] : left;
+}
+
+/** Columns in which nothing was recorded: no number, nothing over range. What a person chose is kept even so. */
+function silentColumns(scanner: Scanner, signals: readonly number[], isChosen: boolean): number[] {
+  if (isChosen) return [];
+  return signals.filter((_, i) => {
+    const column = scanner.stage.columns[i]!;
+    return !column.hasNumbers && column.high === null && column.low === null;
+  });
 }
