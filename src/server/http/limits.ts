@@ -92,13 +92,26 @@ async function tryOnce(backoff: Backoff, key: string): Promise<void> {
 
 /** Before a sign-in: per account and per address, with growing delay. */
 export async function limitSignIn(email: string, address: string): Promise<void> {
-  await tryOnce(ADDRESS, keyOf(addressGroup(address)));
-  await tryOnce(ACCOUNT, keyOf(email));
+  const ofAddress = keyOf(addressGroup(address));
+  await tryOnce(ADDRESS, ofAddress);
+  try {
+    await tryOnce(ACCOUNT, keyOf(email));
+  } catch (refusal) {
+    await ADDRESS.tries().reward(ofAddress, 1);
+    throw refusal;
+  }
 }
 
-/** After a right password the account's tries are forgotten; the address's stay, or one's own account would reset them. */
-export async function forgetSignInTries(email: string): Promise<void> {
-  await Promise.all([ACCOUNT.tries().delete(keyOf(email)), ACCOUNT.gate().delete(keyOf(email))]);
+/**
+ * After a right password the account's tries are forgotten. Of the address's only this one is: they count what failed, and
+ * signing in to one's own account must not buy new tries at others.
+ */
+export async function forgetSignInTries(email: string, address: string): Promise<void> {
+  await Promise.all([
+    ACCOUNT.tries().delete(keyOf(email)),
+    ACCOUNT.gate().delete(keyOf(email)),
+    ADDRESS.tries().reward(keyOf(addressGroup(address)), 1),
+  ]);
 }
 
 const signUps = once(() => shared('signup', 20, 3600));

@@ -40,7 +40,7 @@ export async function signIn(request: SignInRequest): Promise<{ personId: string
     }
     throw new ApiError('wrong_sign_in');
   }
-  await forgetSignInTries(request.email);
+  await forgetSignInTries(request.email, request.address);
   const cookie = await startSession(found.id, request.cookieHeader);
   await recordAudit({ ...whoOf(found), action: 'signed in', subject: '', address: request.address });
   return { personId: found.id, cookie };
