@@ -6,10 +6,13 @@ import { absent, type Notice, type Value } from '../value.ts';
 import { measureCrankHall } from './crank-hall.ts';
 import type { MeasuredSignal } from './types.ts';
 import { findPattern } from './wheel/find-pattern.ts';
-import { placePassages } from './wheel/passages.ts';
-import { findPickup } from './wheel/pickup.ts';
+import { gapRatio } from './wheel/gap-ratio.ts';
+import { type Passages, placePassages } from './wheel/passages.ts';
+import type { PatternResult } from './wheel/pattern.ts';
+import { findPickup, type Pickup } from './wheel/pickup.ts';
 import { pickupNotices } from './wheel/pickup-notices.ts';
-import { tellPolarity } from './wheel/polarity.ts';
+import { type Polarity, tellPolarity } from './wheel/polarity.ts';
+import { joinWheel, type ToothTrain } from './wheel/train.ts';
 import { type CrankContext, wheelFindings, withoutWheel } from './wheel/wheel-findings.ts';
 
 export interface CrankFindings extends Findings {
@@ -37,37 +40,71 @@ export function measureCrankPickup(signal: MeasuredSignal, context: CrankContext
       wheel: null,
     };
   }
-  const polarity = tellPolarity(pickup);
-  const kinds = polarity === 'inverted' ? (['rising'] as const) : (['falling', 'rising'] as const);
-  const passages = placePassages(pickup, kinds[0]);
-  const train = {
-    timesS: Float64Array.from(passages.at, (at) => timeAt(signal.axis, at)),
-    swing: passages.swing,
-    height: passages.height,
-    halfWidth: passages.halfWidth,
-  };
-  const result = findPattern(train.timesS, null, context.camEdgesS);
+  const reading = readTeeth(signal, pickup, context);
+  const { passages, train, result, polarity } = reading;
   const found = wheelFindings(train, result, context);
-  const told = polarity !== null && result.ok;
-  const polarityValue: Value = told
-    ? {
-        key: 'polarity',
-        value: polarity,
-        unit: '1',
-        evidence: found.wheel
-          ? gapSpans(found.wheel)
-          : [{ from: train.timesS[0]!, to: train.timesS.at(-1)! }],
-      }
-    : absent(
-        'polarity',
-        '1',
-        result.ok ? 'no gap whose flanks could tell the polarity' : 'no wheel was found',
-      );
+  const polarityValue: Value =
+    polarity !== null && result.ok
+      ? {
+          key: 'polarity',
+          value: polarity,
+          unit: '1',
+          evidence: found.wheel
+            ? gapSpans(found.wheel)
+            : [{ from: train.timesS[0]!, to: train.timesS.at(-1)! }],
+        }
+      : absent(
+          'polarity',
+          '1',
+          result.ok ? 'the flanks of the gap do not tell it clearly' : 'no wheel was found',
+        );
   return {
     values: [...found.values, polarityValue, peakToPeak(train.timesS, passages.swing, signal.unit)],
     notices: [...found.notices, ...pickupNotices(signal, passages, polarityValue)],
     wheel: found.wheel,
   };
+}
+
+interface Reading {
+  readonly passages: Passages;
+  readonly train: ToothTrain;
+  readonly result: PatternResult;
+  readonly polarity: Polarity | null;
+}
+
+/** Gaps this much longer (in tooth periods) by one kind of passage than by the other show which one is the teeth's. */
+const LONGER_GAP = 0.4;
+
+/**
+ * The tooth events by the polarity that the heights tell. Where they do not, both kinds of passage are tried: between
+ * teeth the passage lies anywhere in the gap and cuts it in two, so the longer gap is the teeth's own.
+ */
+function readTeeth(signal: MeasuredSignal, pickup: Pickup, context: CrankContext): Reading {
+  const read = (kind: 'falling' | 'rising', polarity: Polarity | null): Reading => {
+    const passages = placePassages(pickup, kind);
+    const train = {
+      timesS: Float64Array.from(passages.at, (at) => timeAt(signal.axis, at)),
+      swing: passages.swing,
+      height: passages.height,
+      halfWidth: passages.halfWidth,
+    };
+    return { passages, train, result: findPattern(train.timesS, null, context.camEdgesS), polarity };
+  };
+  const told = tellPolarity(pickup);
+  if (told) return read(told === 'normal' ? 'falling' : 'rising', told);
+  const falling = read('falling', null);
+  const rising = read('rising', null);
+  const difference = longestGap(falling) - longestGap(rising);
+  if (difference > LONGER_GAP) return { ...falling, polarity: 'normal' };
+  if (difference < -LONGER_GAP) return { ...rising, polarity: 'inverted' };
+  return falling.result.ok || !rising.result.ok ? falling : rising;
+}
+
+/** The widest gap of the pattern as measured, in periods of the teeth beside it; 0 without one. */
+function longestGap({ train, result }: Reading): number {
+  if (!result.ok || result.pattern.gaps.length === 0) return 0;
+  const ratio = gapRatio(joinWheel(train, result.pattern)).value;
+  return typeof ratio === 'number' ? ratio : Array.isArray(ratio) ? Math.max(...(ratio as number[])) : 0;
 }
 
 /** From the last tooth of each turn to the reference mark. */

@@ -6,6 +6,8 @@ import { layOnPlaces, type Placed, SINGLE_MOST } from './places.ts';
 const MOST_SCATTER = 0.24;
 /** Share of the gaps that must find their like one turn on. */
 const LEAST_MATCH = 0.75;
+/** Periods that shrink (or grow) by this much over three teeth, noise aside: the shaft comes from rest or to a stop. */
+const STARTING = 1.12;
 /** Fewer teeth a gap than this are few. */
 const FEW_TEETH = 16;
 /** With fewer gaps than this in the train, every one must find its like. */
@@ -78,18 +80,17 @@ function trimmed(times: Float64Array, placed: Placed): Placed {
   let from = 0;
   let to = times.length;
   const interval = (k: number) => times[k + 1]! - times[k]!;
-  while (to - from > 6) {
+  const starting = STARTING + 3 * placed.scatter;
+  while (to - from > 8) {
     const a = interval(from);
     const b = interval(from + 1);
-    const c = interval(from + 2);
-    if (a > SINGLE_MOST * b && b > 1.1 * c && b < SINGLE_MOST * c) from += 1;
+    if (a > SINGLE_MOST * b && b > starting * interval(from + 4)) from += 1;
     else break;
   }
-  while (to - from > 6) {
+  while (to - from > 8) {
     const a = interval(to - 2);
     const b = interval(to - 3);
-    const c = interval(to - 4);
-    if (a > SINGLE_MOST * b && b > 1.1 * c && b < SINGLE_MOST * c) to -= 1;
+    if (a > SINGLE_MOST * b && b > starting * interval(to - 6)) to -= 1;
     else break;
   }
   if (from === 0 && to === times.length) return placed;
@@ -193,6 +194,8 @@ function findTurn(laid: Laid): Found | null {
   const nearness = median(
     laid.features.slice(0, 200).map((f) => Math.abs(laid.placed.ratio[f.event - 1]! - f.size)),
   )!;
+  // Among few teeth the speed swings while the gap passes: an odd division is believed only of a gap that fits it well.
+  if (!natural && turn < FEW_TEETH + 4 && nearness > 0.12) return null;
   return { laid, turn, template, rank: (natural ? 1 : 0) - nearness };
 }
 
@@ -227,8 +230,7 @@ function smallestTurn(features: readonly Feature[], end: number): number | null 
     if (first === undefined || last === undefined) continue;
     if (comesBack(0, end)) return lag;
     // At either end the shaft may have stood, or the signal been too weak: then the rest must be most of the train.
-    if (partnered.length >= FEWEST_GAPS && last - first > LEAST_SPAN * end && comesBack(first, last + 1))
-      return lag;
+    if (partnered.length >= 3 && last - first > LEAST_SPAN * end && comesBack(first, last + 1)) return lag;
 
     function comesBack(from: number, to: number): boolean {
       let matched = 0;

@@ -8,6 +8,7 @@ const STEEPER = 1.45;
 /** An interval this much longer than its neighbours' middle is a gap. */
 const WIDE = 1.45;
 const NEIGHBOURS = 8;
+const LEAST_DIFFERENCE = 0.15;
 
 /**
  * Which passage is a tooth's centre: the falling one (normal) or the rising one (inverted), between these two leads.
@@ -29,30 +30,39 @@ export function tellPolarity(pickup: Pickup): Polarity | null {
   const betweenRising = heightInGaps(pickup, pickup.rising, pickup.falling);
   if (betweenFalling === null && betweenRising === null) return null;
   const difference = (betweenRising ?? 1) - (betweenFalling ?? 1);
-  if (Math.abs(difference) < 0.1) return null;
+  if (Math.abs(difference) < LEAST_DIFFERENCE) return null;
   return difference > 0 ? 'normal' : 'inverted';
 }
 
 const middleHeight = (pickup: Pickup, kind: Int32Array) =>
   median(Float64Array.from(kind, (k) => Math.abs(pickup.swings.height[k]!)));
 
-/** Median, over the gaps in `teeth`, of the height of the opposite passage inside the gap beside its neighbours'. */
+/**
+ * Median, over the gaps in `teeth`, of the height of the opposite passage inside the gap over that of the nearer of the
+ * two teeth beside the gap, as a part of what it is elsewhere.
+ */
 function heightInGaps(pickup: Pickup, teeth: Int32Array, others: Int32Array): number | null {
   const { at, height } = pickup.swings;
   const intervals = Float64Array.from(teeth, (k, i) => (i > 0 ? at[k]! - at[teeth[i - 1]!]! : Number.NaN));
-  const found: number[] = [];
+  const inGaps: number[] = [];
+  const elsewhere: number[] = [];
   let other = 0;
-  for (let i = 1; i < teeth.length && found.length < 400; i += 1) {
-    const near = median(intervals.subarray(Math.max(1, i - NEIGHBOURS), i + NEIGHBOURS + 1))!;
-    while (other < others.length && others[other]! < teeth[i - 1]!) other += 1;
-    if (intervals[i]! < WIDE * near) continue;
-    let inside = 0;
-    for (let o = other; o < others.length && others[o]! < teeth[i]!; o += 1) {
-      inside = Math.max(inside, Math.abs(height[others[o]!]!));
+  for (let i = 1; i < teeth.length && inGaps.length < 400; i += 1) {
+    const before = teeth[i - 1]!;
+    const after = teeth[i]!;
+    while (other < others.length && others[other]! < before) other += 1;
+    let inside = -1;
+    for (let o = other; o < others.length && others[o]! < after; o += 1) {
+      if (inside < 0 || Math.abs(height[others[o]!]!) > Math.abs(height[inside]!)) inside = others[o]!;
     }
-    const window = others.subarray(Math.max(0, other - NEIGHBOURS), other + NEIGHBOURS);
-    const usual = median(Float64Array.from(window, (k) => Math.abs(height[k]!)));
-    if (inside > 0 && usual) found.push(inside / usual);
+    if (inside < 0) continue;
+    const nearer = at[inside]! - at[before]! < at[after]! - at[inside]! ? before : after;
+    const ratio = Math.abs(height[inside]! / height[nearer]!);
+    const from = Math.max(1, Math.min(i - NEIGHBOURS, intervals.length - 2 * NEIGHBOURS - 1));
+    const near = median(intervals.subarray(from, from + 2 * NEIGHBOURS + 1))!;
+    (intervals[i]! >= WIDE * near ? inGaps : elsewhere).push(ratio);
   }
-  return median(found);
+  const usual = median(elsewhere);
+  const found = median(inGaps);
+  return usual && found !== null ? found / usual : null;
 }
