@@ -27,13 +27,16 @@ import { step, say as tellTerminal } from './lib/say.mjs';
 export async function startServices({ dataDir, say = tellTerminal, durable = true, instance: given }) {
   const instance = given ?? (await openInstance({ dataDir, say }));
   try {
-    const database = await step(say, 'Starting the database, waiting for its first answer', () =>
-      startPostgres(instance, { say, durable }),
+    const [database, store, mail] = await step(
+      say,
+      'Starting the database, the object store and the mail catcher, waiting for their first answers',
+      () =>
+        Promise.all([
+          startPostgres(instance, { say, durable }),
+          startObjectStore(instance, { say, durable }),
+          startMailCatcher(instance, { say }),
+        ]),
     );
-    const store = await step(say, 'Starting the object store', () =>
-      startObjectStore(instance, { say, durable }),
-    );
-    const mail = await step(say, 'Starting the mail catcher', () => startMailCatcher(instance, { say }));
     return {
       instance,
       env: { ...database.env, ...store.env, ...mail.env },

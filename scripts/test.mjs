@@ -24,7 +24,7 @@ const deadline = Date.now() + WHOLE_RUN_MS;
 /** @type {Counts} */
 const total = { passed: 0, failed: 0, skipped: [] };
 /** @type {() => Promise<unknown>} */
-let stopCopy = async () => {};
+let stopCopy = async () => undefined;
 
 const counts = mkdtempSync(join(tmpdir(), 'gapmark-counts-'));
 process.on('exit', () => rmSync(counts, { recursive: true, force: true }));
@@ -112,7 +112,7 @@ async function main() {
     }
     await stage('Nothing is left running', async () => {
       const left = await stopCopy();
-      stopCopy = async () => {};
+      stopCopy = async () => undefined;
       if (Array.isArray(left) && left.length > 0) throw new Error(`still there: ${left.join(', ')}`);
       total.passed += 1;
     });

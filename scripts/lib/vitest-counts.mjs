@@ -7,7 +7,6 @@ import { root } from './root.mjs';
  * A vitest reporter: a line a file as it finishes, and the counts and skips as JSON in the file named by TEST_COUNTS.
  *
  * @typedef {{ passed: number, failed: number, skipped: { title: string, reason: string }[] }} Counts
- * @implements {import('vitest/reporters').Reporter}
  */
 export default class CountingReporter {
   /** @param {import('vitest/node').TestModule} module */
