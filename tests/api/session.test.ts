@@ -148,12 +148,13 @@ describe('POST /sign-in', () => {
 
   it('counts failures by address too, and signing in to one’s own account buys no new tries', async () => {
     const own = await makeAccount();
-    for (let tries = 0; tries < 31; tries += 1) {
-      const { status } = await signIn(`${newId()}@people.example`, 'wrong');
-      expect(status).toBe(401);
+    const strange = () => signIn(`${newId()}@people.example`, 'wrong');
+    for (let tries = 0; tries < 30; tries += 1) {
+      expect((await strange()).status).toBe(401);
       if (tries % 10 === 0) expect((await signIn(own.email, PASSWORD)).status).toBe(200);
     }
-    expect((await signIn(`${newId()}@people.example`, 'wrong')).status).toBe(429);
+    expect((await strange()).status).toBe(401);
+    expect((await strange()).status).toBe(429);
   });
 
   it('keeps no e-mail address among the counts', async () => {
