@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { firstSentence, isUnderWay, rowVerdict, sureness } from './words.ts';
+import { asSentence, firstSentence, isUnderWay, rowVerdict, sureness } from './words.ts';
 
 const none = { watch: 0, bad: 0, first: null };
 
@@ -26,6 +26,14 @@ describe('firstSentence()', () => {
       'Tooth 23 is at 0.31 of its neighbours, e.g. chipped.',
     );
     expect(firstSentence('One')).toBe('One');
+  });
+});
+
+describe('asSentence()', () => {
+  it('begins with a capital and ends with one full stop', () => {
+    expect(asSentence('the name says crank')).toBe('The name says crank.');
+    expect(asSentence('Done.')).toBe('Done.');
+    expect(asSentence('')).toBe('');
   });
 });
 

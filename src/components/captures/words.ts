@@ -31,6 +31,10 @@ export function rowVerdict(
 /** A notice says what was measured first; what it usually means and what to check is on the capture's own page. */
 export const firstSentence = (text: string): string => text.split(/(?<=[.!?])\s+(?=\p{Lu})/u)[0] ?? text;
 
+/** A clause as a sentence: capital first, a full stop at the end. Nothing stays nothing. */
+export const asSentence = (clause: string): string =>
+  clause === '' ? '' : `${clause[0]!.toUpperCase()}${clause.slice(1)}${/[.!?…]$/u.test(clause) ? '' : '.'}`;
+
 /** How sure the program is of a circuit, in a word. The limits are ours: no source. */
 export function sureness(confidence: number): { verdict: VerdictName; word: string } {
   if (confidence >= 0.8) return { verdict: 'good', word: 'quite sure' };

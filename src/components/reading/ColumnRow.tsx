@@ -4,7 +4,7 @@ import type { Circuit } from '../../engine/circuit.ts';
 import { Button } from '../base/Button.tsx';
 import { Verdict } from '../base/Verdict.tsx';
 import { Thumbnail } from '../captures/Thumbnail.tsx';
-import { sureness } from '../captures/words.ts';
+import { asSentence, sureness } from '../captures/words.ts';
 import { CircuitChoice } from '../upload/CircuitChoice.tsx';
 import { Confidence } from './Confidence.tsx';
 import { parseFactor } from './parse-factor.ts';
@@ -49,7 +49,7 @@ export function ColumnRow({ capture, signal, disabled, onLeaveOut, onChange }: C
         <Confidence value={signal.circuitConfidence} />
         <Verdict verdict={sure.verdict} word={sure.word} />
       </div>
-      <p className="text-dense">{signal.circuitBecause}</p>
+      <p className="text-dense">{asSentence(signal.circuitBecause)}</p>
       <div className="flex flex-wrap items-end gap-2">
         <SmallField
           key={`unit ${signal.unit}`}

@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useEffect, useRef, useState } from 'react';
 import type { CaptureJson } from '../../contract/areas/captures.ts';
 import type { Circuit } from '../../engine/circuit.ts';
 import { api, sentenceOf } from '../base/api.ts';
@@ -28,6 +28,12 @@ export function CaptureProgress({ id, onClose, onChange }: CaptureProgressProps)
   const [confirmed, setConfirmed] = useState<ReadonlySet<number>>(new Set());
   const [acting, setActing] = useState<string | null>(null);
   const [trouble, setTrouble] = useState<string | null>(null);
+  const tell = useRef(onChange);
+  tell.current = onChange;
+  const status = seen?.data.status;
+  useEffect(() => {
+    if (status !== undefined) tell.current();
+  }, [status]);
   if (seen === undefined) {
     if (error === undefined) return <Progress label="Received, waits its turn" />;
     return (

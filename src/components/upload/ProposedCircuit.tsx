@@ -4,7 +4,7 @@ import { Button } from '../base/Button.tsx';
 import { circuitWords } from '../base/circuits.ts';
 import { LineSample } from '../base/LineSample.tsx';
 import { Thumbnail } from '../captures/Thumbnail.tsx';
-import { sureness } from '../captures/words.ts';
+import { asSentence, sureness } from '../captures/words.ts';
 import { CircuitChoice } from './CircuitChoice.tsx';
 
 interface ProposedCircuitProps {
@@ -19,7 +19,8 @@ interface ProposedCircuitProps {
 export function ProposedCircuit({ capture, signal, busy, onYes, onOther }: ProposedCircuitProps) {
   const words = circuitWords(signal.circuit);
   const sure = sureness(signal.circuitConfidence);
-  const sentence = `${sure.word[0]?.toUpperCase()}${sure.word.slice(1)}, ${signal.circuitConfidence.toFixed(2)}.`;
+  const because = signal.circuitBecause === '' ? '' : `: ${signal.circuitBecause}`;
+  const sentence = asSentence(`${sure.word}, ${signal.circuitConfidence.toFixed(2)}${because}`);
   return (
     <li className="overflow-hidden border border-rule">
       <Thumbnail
@@ -38,9 +39,7 @@ export function ProposedCircuit({ capture, signal, busy, onYes, onOther }: Propo
           <span>looks like</span>
           <strong>{words.full.toLowerCase()}</strong>
         </p>
-        <p className="text-dense text-soft">
-          {sentence} {signal.circuitBecause}
-        </p>
+        <p className="text-dense text-soft">{sentence}</p>
         <div className="flex gap-2">
           <Button kind="main" small busy={busy} onClick={onYes}>
             Yes
