@@ -47,7 +47,7 @@ export function Numbers({ capture, measurements, wheel, chosen, onChoose }: Numb
       <div className="numbers-head">
         <h2 id="numbers-title">Numbers</h2>
         <span className="text-soft">
-          {count} {count === 1 ? 'value' : 'values'}
+          {count} <span className="numbers-word">{count === 1 ? 'value' : 'values'}</span>
           {measurements.stale && ', being measured again'}
         </span>
         {groups.length > 1 && capture.signals.length < 3 && (

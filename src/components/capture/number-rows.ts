@@ -1,5 +1,6 @@
 import type { Evidence, IrregularTooth, Measured, Value } from '../../engine/value.ts';
 import { degreesAt, timeAtDegrees } from '../plot/degrees.ts';
+import { fixed } from '../plot/format.ts';
 import type { PlotWheel } from '../plot/types.ts';
 import { labelOf, partLabel } from './labels.ts';
 import { numberText, spreadText, unitAfter } from './number-text.ts';
@@ -48,8 +49,8 @@ function toothRows(value: Value, teeth: readonly IrregularTooth[]): NumberRow[] 
   return teeth.map(({ tooth, height_ratio, spacing_ratio }) => {
     const short = height_ratio !== null && height_ratio < 1;
     const parts = [
-      height_ratio === null ? null : `${numberText(height_ratio, 'ratio')} × its neighbours’ height`,
-      spacing_ratio === null ? null : `${numberText(spacing_ratio, 'ratio')} × their spacing`,
+      height_ratio === null ? null : `${fixed(height_ratio, 2)} × its neighbours’ height`,
+      spacing_ratio === null ? null : `${fixed(spacing_ratio, 2)} × their spacing`,
       value.n === undefined ? null : `n = ${value.n}`,
     ];
     return {

@@ -33,7 +33,7 @@ describe('bringIntoView()', () => {
     bringIntoView(model, { from: 0.4, to: 0.6 });
     expect(model.view.get()).toEqual({ from: 0, to: 1 });
     bringIntoView(model, { from: 5, to: 6 });
-    expect(model.view.get().from).toBeCloseTo(4.6, 9);
+    expect(model.view.get().from).toBeCloseTo(3.8, 9);
     bringIntoView(model, { from: 8, to: 8 });
     expect((model.view.get().from + model.view.get().to) / 2).toBeCloseTo(8, 9);
   });

@@ -60,7 +60,7 @@ export function bringIntoView(model: PlotModel, stretch: View): void {
   const point = stretch.to === stretch.from;
   const half = Math.min(length, (model.bounds.whole.to - model.bounds.whole.from) / 4) / 2;
   model.show(
-    point ? { from: stretch.from - half, to: stretch.from + half } : viewAround(stretch, 0.4, model.bounds),
+    point ? { from: stretch.from - half, to: stretch.from + half } : viewAround(stretch, 1.2, model.bounds),
   );
 }
 

@@ -149,7 +149,9 @@ function Comparison({ comparison, here, other, again }: ComparisonProps) {
           <h2>Where they part</h2>
           <ul>
             {parts.map((part) => (
-              <li key={`${part.from} ${part.to}`}>{part.text}</li>
+              <li key={`${part.from} ${part.to}`}>
+                <span className="figures">{partRange(part)}</span> {part.text}
+              </li>
             ))}
           </ul>
         </section>
@@ -219,6 +221,14 @@ function alignmentWords(alignment: ComparisonJson['alignment'], axis: 'deg' | 's
     correlation: 'their shape',
   }[alignment.by];
   return `Aligned at ${by}, ${sure}.${over}`;
+}
+
+type Part = NonNullable<ComparisonJson['shape']>['parts'][number];
+
+function partRange({ from, to, axis }: Part): string {
+  return axis === 'deg'
+    ? `${fixed(from, 0)}° to ${fixed(to, 0)}°`
+    : `${fixed(from * 1e3, 2)} to ${fixed(to * 1e3, 2)} ms`;
 }
 
 /** A text as its sentences; a full stop inside a number is none. */

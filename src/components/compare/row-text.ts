@@ -1,6 +1,7 @@
 import type { ComparisonJson } from '../../contract/areas/library.ts';
 import { labelOf, partLabel } from '../capture/labels.ts';
 import { numberText, unitAfter } from '../capture/number-text.ts';
+import { fixed } from '../plot/format.ts';
 
 type Row = ComparisonJson['rows'][number];
 
@@ -44,7 +45,10 @@ function differenceText(row: Row): string {
   if (typeof row.here !== 'number' || typeof row.reference !== 'number') return '';
   let difference = row.here - row.reference;
   if (row.key.startsWith('cam_') && Math.abs(difference) > 360) difference -= Math.sign(difference) * 720;
-  const text = numberText(difference, row.unit);
+  // As many digits as the value itself bears.
+  const digits = numberText(row.here, row.unit).split('.')[1]?.length ?? 0;
+  const text = fixed(difference, digits);
+  if (!/[1-9]/.test(text)) return text;
   return difference > 0 ? `+${text}` : text;
 }
 

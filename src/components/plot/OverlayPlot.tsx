@@ -111,7 +111,13 @@ export function OverlayPlot({ axis, data, signal, parts, summary }: OverlayPlotP
             <path className="plot-field plot-field-dark" d={box(true)} />
             <path className="plot-tick" d={scale.ticks.map((at) => `M${at.toFixed(1)} 29v4`).join('')} />
             {scale.labels.map(({ at, text }) => (
-              <text key={text} className="plot-label" x={at} y={15} textAnchor="middle">
+              <text
+                key={text}
+                className="plot-label"
+                x={narrow ? Math.max(at, text.length * 3.6) : at}
+                y={15}
+                textAnchor="middle"
+              >
                 {text}
               </text>
             ))}

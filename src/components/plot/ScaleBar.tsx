@@ -29,6 +29,8 @@ export function ScaleBar({ model, wheel, kind, narrow }: ScaleBarProps) {
       .map(({ from, to }) => `M${from.toFixed(1)} ${barY}H${to.toFixed(1)}v7H${from.toFixed(1)}z`)
       .join('');
   const labels = degrees ? degrees.degrees : timeScale(view, width).labels;
+  // On a phone nothing stands left of the lanes: a label at the edge would be cut.
+  const edge = (at: number, text: string) => (narrow ? Math.max(at, text.length * 3.6) : at);
   const ticks = degrees ? degrees.teeth : timeScale(view, width).ticks;
   return (
     <div className="plot-scale" aria-hidden="true">
@@ -49,7 +51,7 @@ export function ScaleBar({ model, wheel, kind, narrow }: ScaleBarProps) {
           <text
             key={`${text}${at.toFixed(0)}`}
             className="plot-label"
-            x={at}
+            x={edge(at, text)}
             y={barY - 8}
             textAnchor="middle"
           >
