@@ -1,4 +1,4 @@
-import { GrowingSamples } from './segments.ts';
+import { GrowingSamples, type PlainBudget } from './segments.ts';
 
 /** Cells of one signal that said "over range" on one side. */
 export interface RailCells {
@@ -12,7 +12,7 @@ export interface RailCells {
  * plus or minus infinity, which no number in a file can be once it has passed here.
  */
 export class GrowingColumn {
-  private readonly samples = new GrowingSamples();
+  private readonly samples: GrowingSamples;
   holes = 0;
   /** Numbers too large for a float32; they are holes. */
   tooLarge = 0;
@@ -22,6 +22,10 @@ export class GrowingColumn {
   private readonly values: number[] = [];
   isTwoValued = true;
   private hasClean = false;
+
+  constructor(budget: PlainBudget) {
+    this.samples = new GrowingSamples(budget);
+  }
 
   /** Takes the next block of doubles. `isOdd` false promises that all of them are ordinary numbers. */
   append(block: Float64Array, isOdd: boolean): void {

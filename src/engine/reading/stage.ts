@@ -1,5 +1,6 @@
 import { GrowingColumn } from './column.ts';
 import type { Plan } from './plan.ts';
+import { PlainBudget } from './segments.ts';
 import { TimeColumn } from './times.ts';
 import { decimalShift } from './units.ts';
 
@@ -56,7 +57,8 @@ export class Stage {
     signals.forEach((column, i) => {
       this.bases[column] = base(this.firstSignal + i);
     });
-    this.columns = signals.map(() => new GrowingColumn());
+    const budget = new PlainBudget();
+    this.columns = signals.map(() => new GrowingColumn(budget));
     this.otherTimeOffBy = otherTimes.map(() => 0);
     this.timeFactor = plan.timeUnit === 'min' ? 60 : 1;
     this.row = new Float64Array(this.slots);

@@ -52,19 +52,22 @@ export function finishTable({ layout, head, plan, isChosen }: Start, scanner: Sc
   }
   const left = signalsOfOtherTimes(scanner, plan.otherTimes, plan.signals, timing);
   const silent = silentColumns(scanner, plan.signals, isChosen);
-  const finished = scanner.stage.columns.map((column) => column.finish());
+  const finished = scanner.stage.columns.map((column, i) =>
+    left.includes(plan.signals[i]!) || silent.includes(plan.signals[i]!) ? null : column.finish(),
+  );
   const remarks = makeRemarks({
     layout,
     scanner,
     timing,
     leftForTime: left,
     silent,
-    rails: finished.map(({ rail }) => rail),
+    rails: finished.map((column) => column?.rail ?? null),
   });
   const columns: ReadColumn[] = [];
-  finished.forEach(({ samples, rail }, i) => {
+  finished.forEach((column, i) => {
+    if (column === null) return;
+    const { samples, rail } = column;
     const place = plan.signals[i]!;
-    if (left.includes(place) || silent.includes(place)) return;
     const unit = header.units[place] ?? null;
     columns.push({
       column: place,
