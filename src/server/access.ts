@@ -1,4 +1,5 @@
 import { and, eq, isNull, or, type SQL, sql } from 'drizzle-orm';
+import { id } from '../contract/areas/common.ts';
 import type { Thing } from '../contract/endpoint.ts';
 import { ENDPOINTS, type EndpointId } from '../contract/endpoints.ts';
 import { ACCESS, type AccessRow, type Grant, type Role, type Scope } from '../contract/roles.ts';
@@ -124,6 +125,11 @@ function grantOrThrow(grant: Grant, isOwn: boolean): void {
 
 const notThere = () => new ApiError('not_found');
 
+/** What cannot be an id names nothing; it does not reach the database. */
+function checkId(thingId: string): void {
+  if (!id.safeParse(thingId).success) throw notThere();
+}
+
 interface OpenOptions {
   /** Hidden ones too, while they can still be brought back. */
   readonly deleted?: boolean;
@@ -140,6 +146,7 @@ export async function openCapture(
   options: OpenOptions = {},
 ): Promise<CaptureRecord> {
   authorize(endpoint, caller);
+  checkId(captureId);
   const row = accessOf(endpoint);
   if (caller.kind === 'share') {
     if (captureId !== caller.captureId) throw notThere();
@@ -175,6 +182,7 @@ export async function openMark(
   options: OpenOptions = {},
 ): Promise<MarkRecord> {
   authorize(endpoint, caller);
+  checkId(markId);
   const person = personOf(caller);
   const [found] = await db()
     .select({ thing: mark, role: membership.role, owner: capture.createdBy })
@@ -201,6 +209,7 @@ export async function openShareLink(
   linkId: string,
 ): Promise<ShareLinkRecord> {
   authorize(endpoint, caller);
+  checkId(linkId);
   const person = personOf(caller);
   const [found] = await db()
     .select({ thing: shareLink, role: membership.role, owner: capture.createdBy })
@@ -226,6 +235,7 @@ export async function openAnswer(
   answerId: string,
 ): Promise<AnswerRecord> {
   authorize(endpoint, caller);
+  checkId(answerId);
   const person = personOf(caller);
   const [found] = await db()
     .select({ thing: answer, role: membership.role, owner: capture.createdBy })
@@ -251,6 +261,7 @@ export async function openKnownGood(
   knownGoodId: string,
 ): Promise<KnownGoodRecord> {
   authorize(endpoint, caller);
+  checkId(knownGoodId);
   const person = personOf(caller);
   const [found] = await db()
     .select({ thing: knownGood, role: membership.role })
@@ -269,6 +280,7 @@ export async function openComparison(
   comparisonId: string,
 ): Promise<ComparisonRecord> {
   authorize(endpoint, caller);
+  checkId(comparisonId);
   const person = personOf(caller);
   const [found] = await db()
     .select({ thing: comparison, role: membership.role })
@@ -300,7 +312,7 @@ export interface Opened {
 type Opener<T extends Thing> = (
   caller: Caller,
   endpoint: EndpointId,
-  id: string,
+  thingId: string,
   options?: OpenOptions,
 ) => Promise<Opened[T]>;
 

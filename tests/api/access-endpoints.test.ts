@@ -139,7 +139,7 @@ async function spare(): Promise<string> {
 type Expected = 'goes on' | 401 | 403 | 404;
 
 /** What the table says of a capture that the technician made, in words of status. */
-function expectedFor(id: EndpointId, row: Endpoint, caller: CallerName): Expected {
+function expectedFor(row: Endpoint, caller: CallerName): Expected {
   const access = ACCESS[row.access];
   if (access.nobody) return 'goes on';
   if (access.share !== 'no') {
@@ -195,7 +195,7 @@ describe.each(rows)('%s', (id, row) => {
     const answer = await call(id, row, caller, things);
     // These end a session that other rows need.
     if (id === 'session.signOut' || id === 'session.signUp') await revive();
-    const expected = expectedFor(id, row, caller);
+    const expected = expectedFor(row, caller);
     if (expected !== 'goes on') {
       expect(answer.status).toBe(expected);
       if (row.method !== 'HEAD') expect(answer.json.error.code).toMatch(/^[a-z_]+$/);

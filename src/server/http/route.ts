@@ -58,6 +58,7 @@ export function route<Id extends EndpointId>(
       const caller = accessOf(id).share === 'no' ? locals.caller : await shareCaller(params.secret ?? '');
       await limitApi(caller, address);
       authorize(id, caller);
+      checkParams(params);
       const opened = await open(id, endpoint, caller, params.id ?? '');
       const ifMatch = header('if-match');
       if (endpoint.ifMatch && opened !== undefined && 'edition' in opened)
@@ -79,6 +80,11 @@ export function route<Id extends EndpointId>(
   return Object.assign(run, { endpoint: id });
 }
 
+/** Ids and secrets are plain characters; what is not names nothing. */
+function checkParams(params: Readonly<Record<string, string>>): void {
+  if (!Object.values(params).every((value) => /^[\w-]{1,100}$/.test(value))) throw new ApiError('not_found');
+}
+
 async function open(
   id: EndpointId,
   endpoint: Endpoint,
@@ -95,6 +101,10 @@ function single(search: URLSearchParams): Record<string, string> {
   for (const [name, value] of search) {
     if (Object.hasOwn(query, name)) {
       throw new ApiError('invalid', { details: [{ path: name, message: 'is given twice' }] });
+    }
+    // PostgreSQL takes no NUL in text, and no other control character is ever meant.
+    if (/\p{Cc}/u.test(name + value)) {
+      throw new ApiError('invalid', { details: [{ path: name, message: 'has control characters' }] });
     }
     query[name] = value;
   }

@@ -5,7 +5,9 @@ export function safeNext(next: string | null | undefined, fallback = '/captures'
   if (!next?.startsWith('/') || /[\\\p{Cc}]/u.test(next)) return fallback;
   try {
     const url = new URL(next, HERE);
-    return url.origin === HERE && !next.startsWith('//') ? url.pathname + url.search + url.hash : fallback;
+    // Once its dots are resolved, a path may begin with the two slashes that name a host.
+    const ours = url.origin === HERE && !url.pathname.startsWith('//');
+    return ours ? url.pathname + url.search + url.hash : fallback;
   } catch {
     return fallback;
   }
