@@ -6,11 +6,14 @@ import {
   chromium,
   type Page,
 } from 'playwright-core';
-import { expect } from 'vitest';
+import { expect, vi } from 'vitest';
 import type { Role } from '../../src/contract/roles.ts';
 import { makeWorkshop, origin as testOrigin, type Workshop } from '../api/security-kit.ts';
 
 /** What browser tests stand on: Debian's Chromium on the built product, signed in, watched for anything it complains of. */
+
+// Machines are noisy, and a page may be opened, checked and read several times in one test.
+vi.setConfig({ testTimeout: 240_000, hookTimeout: 120_000 });
 
 export const origin = new URL(testOrigin).origin;
 

@@ -29,8 +29,8 @@ describe.each([
     const rows = page.getByRole('region', { name: 'List of captures' }).locator('> ul > li');
     await rows.first().waitFor();
     expect(await rows.count()).toBe(25);
-    expect(await rows.first().getByRole('heading').innerText()).toBe('Turn 0');
-    expect(await rows.nth(3).getByRole('heading').innerText()).toBe(MARKUP);
+    expect(await rows.first().getByRole('heading').textContent()).toBe('Turn 0');
+    expect(await rows.nth(3).getByRole('heading').textContent()).toBe(MARKUP);
     await page.getByRole('button', { name: 'Show more' }).click();
     await rows.nth(29).waitFor();
     const titles = await rows.getByRole('heading').allInnerTexts();

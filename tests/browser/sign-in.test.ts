@@ -106,7 +106,7 @@ describe('sign-in', () => {
     await page.getByText('New token').click();
     await page.getByLabel('What it is for').fill('bench export');
     await page.getByRole('button', { name: 'Make it' }).click();
-    const secret = (await page.locator('[data-made-token]').innerText()).trim();
+    const secret = (await page.locator('[data-made-token]').textContent())?.trim() ?? '';
     expect(secret).toMatch(/^gapmark_[\w-]{40,}$/);
     await expectAccessible(page);
     await page.goto('/workshop');
