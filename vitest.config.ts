@@ -7,7 +7,7 @@ export default defineConfig({
       'src/**/*.test.{ts,tsx}',
       'tests/outside/**/*.test.ts',
       'samples/**/*.test.ts',
-      'scripts/**/*.test.ts',
+      'scripts/lib/**/*.test.ts',
       'docker-free-fakes/**/*.test.ts',
     ],
     testTimeout: 60_000,
