@@ -95,7 +95,7 @@ function trimmed(times: Float64Array, placed: Placed): Placed {
   }
   if (from === 0 && to === times.length) return placed;
   const again = layOnPlaces(times.subarray(from, to));
-  return { ...again, kept: again.kept.map((event) => event + from) };
+  return { ...again, kept: again.kept.map((event) => event + from), cutBefore: from > 0 };
 }
 
 /** Ways to read the gaps' lengths in whole places: a pick-up's gap may measure 3.5 periods where three are meant. */
@@ -222,17 +222,31 @@ function smallestTurn(features: readonly Feature[], end: number): number | null 
     }
     if (lags.size > 400) break;
   }
-  for (const lag of Array.from(lags).sort((a, b) => a - b)) {
-    const has = (place: number, size: number) => sizeAt.get(place) === size;
-    const partnered = features.filter((f) => has(f.place + lag, f.size) || has(f.place - lag, f.size));
-    const first = partnered[0]?.place;
-    const last = partnered.at(-1)?.place;
-    if (first === undefined || last === undefined) continue;
-    if (comesBack(0, end)) return lag;
-    // At either end the shaft may have stood, or the signal been too weak: then the rest must be most of the train.
-    if (partnered.length >= 3 && last - first > LEAST_SPAN * end && comesBack(first, last + 1)) return lag;
+  let best = 0;
+  const likeness = new Map<number, number>();
+  for (const lag of lags) {
+    const share = likenessAt(lag);
+    likeness.set(lag, share);
+    best = Math.max(best, share);
+  }
+  // Whole numbers of turns fit as well as one: the smallest of what fits nearly best.
+  const fitting = Array.from(lags).filter((lag) => likeness.get(lag)! >= Math.max(LEAST_MATCH, best - 0.1));
+  return fitting.length > 0 ? Math.min(...fitting) : null;
 
-    function comesBack(from: number, to: number): boolean {
+  /** Share of the gaps that find their like `lag` places away, of those that could; 0 when the lag is not to be believed. */
+  function likenessAt(lag: number): number {
+    const has = (place: number, size: number) => sizeAt.get(place) === size;
+    const whole = matches(0, end);
+    if (whole >= LEAST_MATCH) return whole;
+    // At either end the shaft may have stood, or the signal been too weak: then the rest must be most of the train.
+    const partnered = features.filter((f) => has(f.place + lag, f.size) || has(f.place - lag, f.size));
+    const first = partnered[0]?.place ?? 0;
+    const last = partnered.at(-1)?.place ?? 0;
+    if (partnered.length < 3 || last - first < LEAST_SPAN * end) return 0;
+    const rest = matches(first, last + 1);
+    return rest >= LEAST_MATCH ? rest : 0;
+
+    function matches(from: number, to: number): number {
       let matched = 0;
       let missed = 0;
       for (const { place, size } of features) {
@@ -243,11 +257,10 @@ function smallestTurn(features: readonly Feature[], end: number): number | null 
           else missed += 1;
         }
       }
-      const few = features.length < FEWEST_GAPS;
-      return matched >= 2 && (few ? missed === 0 : matched >= LEAST_MATCH * (matched + missed));
+      if (matched < 2 || (features.length < FEWEST_GAPS && missed > 0)) return 0;
+      return matched / (matched + missed);
     }
   }
-  return null;
 }
 
 /** The commonest sequence of gaps over one turn, starting anywhere; `after` counts from the first tooth after its first gap. */
@@ -397,6 +410,13 @@ function follow(laid: Laid, turn: number, template: readonly PatternGap[]): Patt
     lastPlace = here;
   }
   if (markEvents.length < 2) return null;
+  if (placed.cutBefore && place[0] === place[markEvents[0]!]! - turn) {
+    // The tooth one turn before the first mark, with the gap before it already cut off as part of the start.
+    markEvents.unshift(0);
+    markTurns.unshift(-1);
+    for (let m = 0; m < markTurns.length; m += 1) markTurns[m]! += 1;
+    for (let c = 1; c < chainStarts.length; c += 1) chainStarts[c]! += 1;
+  }
 
   const events: number[] = [];
   const degrees: number[] = [];

@@ -1,3 +1,4 @@
+import { runningQuantile } from '../../signal/running-quantile.ts';
 import { noiseDeviation } from '../../signal/statistics.ts';
 import { type BlockMeans, blockMeans, type ScaleTrack, trackScale } from './scale.ts';
 import { findSwings, type Swings } from './swings.ts';
@@ -145,12 +146,4 @@ function localHeights(swings: Swings): Float64Array {
   return out;
 }
 
-function upperQuartiles(values: Float64Array): Float64Array {
-  const out = new Float64Array(values.length);
-  for (let k = 0; k < values.length; k += 1) {
-    const from = Math.max(0, Math.min(k - NEIGHBOURS, values.length - 2 * NEIGHBOURS - 1));
-    const window = values.slice(from, from + 2 * NEIGHBOURS + 1).sort();
-    out[k] = window[Math.floor((window.length - 1) * 0.75)]!;
-  }
-  return out;
-}
+const upperQuartiles = (values: Float64Array) => runningQuantile(values, NEIGHBOURS, 0.75);

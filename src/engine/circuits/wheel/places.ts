@@ -1,4 +1,4 @@
-import { median } from '../../signal/statistics.ts';
+import { runningQuantile } from '../../signal/running-quantile.ts';
 
 /** A train of events laid on equal places: how many places each event lies after the one before. */
 export interface Placed {
@@ -8,6 +8,8 @@ export interface Placed {
   readonly ratio: Float64Array;
   /** Kept event before which a doubled one was taken out, with where it stood between its neighbours (0 to 1). */
   readonly extras: readonly { readonly before: number; readonly part: number }[];
+  /** Events before the first kept one were left out because the shaft came from rest; the last of them far before it. */
+  readonly cutBefore?: boolean;
   /** Standard deviation of the single intervals' ratios about 1. */
   readonly scatter: number;
 }
@@ -76,11 +78,8 @@ function ratios(times: Float64Array, kept: Int32Array): Float64Array {
   const n = Math.max(0, kept.length - 1);
   const interval = new Float64Array(n);
   for (let k = 0; k < n; k += 1) interval[k] = times[kept[k + 1]!]! - times[kept[k]!]!;
-  let ratio = new Float64Array(n);
-  for (let k = 0; k < n; k += 1) {
-    const from = Math.max(0, Math.min(k - NEIGHBOURS, n - 2 * NEIGHBOURS - 1));
-    ratio[k] = interval[k]! / median(interval.subarray(from, from + 2 * NEIGHBOURS + 1))!;
-  }
+  const usual = runningQuantile(interval, NEIGHBOURS, 0.5);
+  let ratio = interval.map((length, k) => length / usual[k]!);
   for (let round = 0; round < 3; round += 1) ratio = againstSingles(interval, ratio);
   return ratio;
 }

@@ -1,3 +1,4 @@
+import { runningQuantile } from '../../signal/running-quantile.ts';
 import { median } from '../../signal/statistics.ts';
 import type { Pickup } from './pickup.ts';
 
@@ -43,7 +44,12 @@ const middleHeight = (pickup: Pickup, kind: Int32Array) =>
  */
 function heightInGaps(pickup: Pickup, teeth: Int32Array, others: Int32Array): number | null {
   const { at, height } = pickup.swings;
-  const intervals = Float64Array.from(teeth, (k, i) => (i > 0 ? at[k]! - at[teeth[i - 1]!]! : Number.NaN));
+  // The first tooth has no interval before it: it stands for itself.
+  const intervals = Float64Array.from(
+    teeth,
+    (k, i) => at[i > 0 ? k : (teeth[1] ?? k)]! - at[teeth[Math.max(0, i - 1)]!]!,
+  );
+  const near = runningQuantile(intervals, NEIGHBOURS, 0.5);
   const inGaps: number[] = [];
   const elsewhere: number[] = [];
   let other = 0;
@@ -58,9 +64,7 @@ function heightInGaps(pickup: Pickup, teeth: Int32Array, others: Int32Array): nu
     if (inside < 0) continue;
     const nearer = at[inside]! - at[before]! < at[after]! - at[inside]! ? before : after;
     const ratio = Math.abs(height[inside]! / height[nearer]!);
-    const from = Math.max(1, Math.min(i - NEIGHBOURS, intervals.length - 2 * NEIGHBOURS - 1));
-    const near = median(intervals.subarray(from, from + 2 * NEIGHBOURS + 1))!;
-    (intervals[i]! >= WIDE * near ? inGaps : elsewhere).push(ratio);
+    (intervals[i]! >= WIDE * near[i]! ? inGaps : elsewhere).push(ratio);
   }
   const usual = median(elsewhere);
   const found = median(inGaps);
