@@ -8,6 +8,7 @@ import { membership, person, workshop } from '../db/schema.ts';
 import { ApiError } from '../errors.ts';
 import { limitSignUp } from '../http/limits.ts';
 import { newId } from '../ids.ts';
+import { mailKnownAddress } from '../mail/known-address-mail.ts';
 import { recordAudit } from '../workshop/audit.ts';
 import { startSession } from './lucia.ts';
 import { hashPassword } from './password.ts';
@@ -30,6 +31,7 @@ export async function signUp(request: SignUpRequest): Promise<{ personId: string
       .onConflictDoNothing({ target: person.email })
       .returning({ id: person.id });
     if (made === undefined) {
+      void mailKnownAddress(request.email);
       throw new ApiError('conflict', {
         message: 'This e-mail address has an account. Sign in with it, or use another one.',
       });

@@ -7,6 +7,7 @@ import { answer, shareLink } from '../../db/schema.ts';
 import { ApiError } from '../../errors.ts';
 import { limitAnswers } from '../../http/limits.ts';
 import { newId } from '../../ids.ts';
+import { mailAnswer } from '../../mail/answer-mail.ts';
 import { addMark } from '../marks/create-mark.ts';
 
 /** A link takes this many answers in all, hidden ones included. */
@@ -19,7 +20,7 @@ export async function addAnswer(
   address: string,
 ): Promise<{ id: string; name: string; text: string; createdAt: string }> {
   await limitAnswers(caller.linkId, address);
-  return db().transaction(async (tx) => {
+  const given = await db().transaction(async (tx) => {
     const [link] = await tx.select().from(shareLink).where(eq(shareLink.id, caller.linkId)).for('update');
     if (link === undefined || link.withdrawnAt !== null) throw new ApiError('link_ended');
     const [given] = await tx.select({ total: count() }).from(answer).where(eq(answer.shareLinkId, link.id));
@@ -41,4 +42,7 @@ export async function addAnswer(
     }
     return { id, name: made.name, text: made.text, createdAt: made.createdAt.toISOString() };
   });
+  // Not waited for: the answer is kept, whatever becomes of the mail.
+  void mailAnswer({ linkId: caller.linkId, ...input }).catch(() => {});
+  return given;
 }
