@@ -1,13 +1,15 @@
 import { noiseDeviation } from './statistics.ts';
 
 /**
- * How finely a trace can be read: the larger of its white noise and its quantisation noise (step / √12), in the
- * signal's unit. An 8-bit trace often shows no noise at all between two of its steps, and still knows no better.
+ * How finely a trace can be read: its white noise, but not less than its quantisation noise (step / √12), in the signal's
+ * unit. An 8-bit trace often shows no noise at all between two of its steps, and still knows no better; where it flickers
+ * between two neighbouring steps, second differences overstate the noise, which is then below 0.45 of a step.
  * 0 for a trace of one value or of fewer than three samples.
  */
 export function readingNoise(values: Float32Array): number {
   const step = quantisationStep(values);
-  return Math.max(noiseDeviation(values) ?? 0, step / Math.sqrt(12));
+  const white = noiseDeviation(values) ?? 0;
+  return white > 0.75 * step ? white : Math.max(step / Math.sqrt(12), Math.min(white, 0.45 * step));
 }
 
 /**

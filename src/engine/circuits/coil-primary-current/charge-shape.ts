@@ -42,8 +42,10 @@ export function chargeShape(trace: CurrentTrace, charge: Charge): ChargeShape {
   const slope = fitLine(tail, partOf(axis, tailFrom, tail.length), 0, tail.length);
   const tailS = endS - timeAt(axis, tailFrom);
   const drift = slope ? Math.abs(slope.slope) * tailS : Number.POSITIVE_INFINITY;
-  const flat =
+  const straight =
     drift < 0.01 * held || (slope !== null && drift < 0.015 * held && drift < 2 * slope.slopeError * tailS);
+  const unsure = slope === null || slope.slopeError * tailS > 0.004 * held;
+  const flat = straight || (unsure && heldBetter(trace, from, last, held));
 
   const to = flat ? kneeOf(amperes, from, last, 0.97 * held - 2 * noise) : last;
   const fit = fitPart(trace, from, to);
@@ -63,7 +65,7 @@ export function chargeShape(trace: CurrentTrace, charge: Charge): ChargeShape {
   const isStep = step > 0.12 && zeroS !== null && footS !== null && footS - zeroS > 0.05 * lengthS;
   const startS = startOf();
   const sure =
-    good && fit.rate > 0 && fit.rateError < 0.12 * fit.rate && fit.rate * (timeAt(axis, to) - originS) > 0.12;
+    good && fit.rate > 0 && fit.rateError < 0.07 * fit.rate && fit.rate * (timeAt(axis, to) - originS) > 0.12;
   function startOf(): number | null {
     if (footS === null || isStep) return footS;
     if (zeroS !== null && Math.abs(zeroS - footS) <= 0.15 * lengthS) return zeroS;
@@ -80,6 +82,23 @@ export function chargeShape(trace: CurrentTrace, charge: Charge): ChargeShape {
     step: isStep ? step : 0,
     bendsUp: fit !== null && !flat && fit.rate * lengthS < -0.3 && fit.rateError * lengthS < 0.15,
   };
+}
+
+/**
+ * Where noise or few samples hide whether the last tenth is level: does a curve that ends in a flat follow the samples
+ * clearly better than a curve alone? The flat must be at least 15 % of the dwell.
+ */
+function heldBetter(trace: CurrentTrace, from: number, last: number, held: number): boolean {
+  const { amperes, noise } = trace;
+  const knee = kneeOf(amperes, from, last, 0.97 * held - noise);
+  if (last - knee < Math.max(3, 0.15 * (last - from)) || knee - from < 4) return false;
+  const alone = fitPart(trace, from, last);
+  const before = fitPart(trace, from, knee);
+  if (!alone || !before) return false;
+  let squares = 0;
+  for (let i = knee + 1; i <= last; i += 1) squares += (amperes[i]! - held) ** 2;
+  const both = Math.sqrt((before.residual ** 2 * (knee - from) + squares) / (last - from));
+  return both < Math.min(0.93, 1 - 6 / (last - from)) * alone.residual;
 }
 
 /** First sample at or above `level`; the flat begins about there. */

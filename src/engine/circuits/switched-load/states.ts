@@ -1,7 +1,8 @@
-import { fullestLevel, within } from '../../signal/fullest-level.ts';
-import { sortedRange } from '../../signal/range.ts';
+import { crossings } from '../../signal/crossings.ts';
+import { type FullestLevel, fullestLevel, within } from '../../signal/fullest-level.ts';
+import { rangeMedian, sortedRange } from '../../signal/range.ts';
 import { readingNoise } from '../../signal/resolution.ts';
-import { quantileSorted } from '../../signal/statistics.ts';
+import { median, quantileSorted } from '../../signal/statistics.ts';
 
 /**
  * The two states of a load that a driver switches to ground: `rest` with the driver off (the feed seen through the
@@ -33,13 +34,14 @@ export function loadStates(values: Float32Array): LoadStates | null {
   const below = shareBetween(sorted, Number.NEGATIVE_INFINITY, full.level - 0.3 * step);
   const fullIsOn =
     above.share >= 0.05 && step > 0 && full.level < 0.35 * above.level && below < 0.5 * above.share;
-  const rest = fullIsOn ? above.level : full.level;
+  const fullest = fullIsOn ? above : full;
+  const rest = lowerRest(values, sorted, fullest, noise) ?? fullest.level;
 
   const grounded = rest > 0 ? within(sorted, -0.2 * rest, 0.62 * rest) : sorted.subarray(0, 0);
   const enough = Math.max(3, sorted.length * 0.0002);
-  if (rest > 6 * noise && grounded.length >= enough) {
+  if (rest > 5 * noise && grounded.length >= enough) {
     const on = fullestLevel(grounded, grounded[0]!, grounded[grounded.length - 1]!, noise).level;
-    if (rest - on > Math.max(6 * noise, 0.3 * rest)) return { rest, on, noise, acCoupled: false };
+    if (rest - on > Math.max(4 * noise, 0.3 * rest)) return { rest, on, noise, acCoupled: false };
   }
   const lower = within(sorted, bottom, rest - Math.max(8 * noise, 0.35 * (rest - bottom)));
   if (lower.length >= enough && Math.abs(rest) < 0.45 * (rest - bottom)) {
@@ -47,6 +49,48 @@ export function loadStates(values: Float32Array): LoadStates | null {
     if (Math.abs(rest) < 0.7 * (rest - on)) return { rest, on, noise, acCoupled: true };
   }
   return { rest, on: null, noise, acCoupled: false };
+}
+
+/**
+ * In a short capture a burn line can be fuller than the rest level below it. A lower full level is the rest level when the
+ * driver comes on from it (or, where that is not in the capture, when the capture ends at it); else null.
+ */
+function lowerRest(
+  values: Float32Array,
+  sorted: Float32Array,
+  fullest: FullestLevel,
+  noise: number,
+): number | null {
+  const high = 0.72 * fullest.level;
+  const low = Math.max(0.12 * fullest.level, 4 * noise);
+  if (!(high > low)) return null;
+  const candidate = fullestLevel(sorted, low, high, noise);
+  if (candidate.share < 0.2 * fullest.share) return null;
+  const below = within(sorted, -0.2 * candidate.level, 0.62 * candidate.level);
+  const on = below.length > 0 ? fullestLevel(below, below[0]!, below[below.length - 1]!, noise).level : 0;
+  if (candidate.level - on < Math.max(4 * noise, 0.3 * candidate.level)) return null;
+  const apart = candidate.level - on;
+  const about = (level: number) => shareBetween(sorted, level - 0.15 * apart, level + 0.15 * apart);
+  if (about((candidate.level + on) / 2) > 0.4 * about(candidate.level)) return null;
+  const before = levelBeforeOn(values, on, candidate.level);
+  const seen = before ?? rangeMedian(values, 0.95 * values.length, values.length);
+  return seen !== null && Math.abs(seen - candidate.level) < 0.25 * candidate.level ? candidate.level : null;
+}
+
+/** Median level of the 40 samples before the long stretches near `on` begin; null where no beginning is seen. */
+function levelBeforeOn(values: Float32Array, on: number, rest: number): number | null {
+  const found = crossings(values, { level: (on + rest) / 2, hysteresis: 0.4 * (rest - on) });
+  const stretches: Array<{ from: number; length: number }> = [];
+  for (let k = 0; k < found.count; k += 1) {
+    if (found.rising[k] === 1) continue;
+    stretches.push({ from: found.at[k]!, length: (found.at[k + 1] ?? values.length) - found.at[k]! });
+  }
+  const longest = Math.max(0, ...stretches.slice(0, 10_000).map((one) => one.length));
+  const levels = stretches
+    .filter((one) => one.length >= 0.4 * longest)
+    .slice(0, 200)
+    .map(({ from }) => rangeMedian(values, from - 40, from - 1));
+  return median(levels.filter((level) => level !== null));
 }
 
 const shareBetween = (sorted: Float32Array, low: number, high: number) =>
