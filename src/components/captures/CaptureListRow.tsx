@@ -15,7 +15,7 @@ export function CaptureListRow({ row, timeZone }: { row: CaptureRowJson; timeZon
   const under = row.status === 'reading' || row.status === 'measuring';
   const address = row.status === 'failed' ? `/captures/${row.id}/reading` : `/captures/${row.id}`;
   return (
-    <li className="relative grid gap-x-4 gap-y-2 border-b border-rule px-(--margin) py-4 hover:bg-ground desk:grid-cols-[220px_minmax(0,8fr)_minmax(0,6fr)_minmax(112px,auto)_72px] desk:gap-y-0">
+    <li className="relative grid gap-x-4 gap-y-2 border-b border-rule px-(--margin) py-4 hover:bg-ground desk:grid-cols-[220px_minmax(0,8fr)_minmax(0,6fr)_minmax(112px,auto)_72px] desk:gap-y-0 broad:grid-cols-[320px_minmax(0,8fr)_minmax(0,6fr)_minmax(112px,auto)_72px]">
       <Thumbnail capture={row} className="h-16 w-full desk:row-span-3 desk:h-[72px]" />
       <div className="min-w-0">
         <h2 className="text-head leading-6">

@@ -9,7 +9,10 @@ describe('rowVerdict()', () => {
   });
   it('takes the gravest notice for its shape and counts the others', () => {
     const notices = { watch: 2, bad: 1, first: 'Low kick' };
-    expect(rowVerdict({ status: 'ready', notices })).toEqual({ verdict: 'bad', word: 'Low kick and 2 more' });
+    expect(rowVerdict({ status: 'ready', notices })).toEqual({
+      verdict: 'bad',
+      word: 'Low kick, and 2 more',
+    });
   });
   it('says the state while there are no numbers', () => {
     expect(rowVerdict({ status: 'measuring', notices: none })).toEqual({

@@ -25,7 +25,10 @@ export function rowVerdict(
   if (bad + watch === 0) return null;
   const others = bad + watch - 1;
   const text = first === null ? 'see its notices' : firstSentence(first);
-  return { verdict: bad > 0 ? 'bad' : 'watch', word: others > 0 ? `${text} and ${others} more` : text };
+  return {
+    verdict: bad > 0 ? 'bad' : 'watch',
+    word: others > 0 ? `${text.replace(/\.$/, '')}, and ${others} more` : text,
+  };
 }
 
 /** A notice says what was measured first; what it usually means and what to check is on the capture's own page. */

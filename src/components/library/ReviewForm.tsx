@@ -28,6 +28,14 @@ const CHOICES: Record<KnownGoodJson['state'], readonly Choice[]> = {
   retired: [],
 };
 
+const ABOUT: Record<KnownGoodJson['state'], string> = {
+  proposed:
+    'Look at where it came from, at the trace and at its numbers. Published, its samples and values are frozen and others compare with them.',
+  published: 'Retired, it is offered for no further comparison. Comparisons that were made stay as they are.',
+  returned: '',
+  retired: '',
+};
+
 /** Publish, return or retire, with a note; never by the author. A return without a reason helps nobody, so it asks for one. */
 export function ReviewForm({ id, state }: ReviewFormProps) {
   const [note, setNote] = useState('');
@@ -56,10 +64,7 @@ export function ReviewForm({ id, state }: ReviewFormProps) {
   };
   return (
     <div className="grid max-w-140 gap-3">
-      <p className="text-soft">
-        Look at where it came from, at the trace and at its numbers. Published, its samples and values are
-        frozen and others compare with them.
-      </p>
+      <p className="text-soft">{ABOUT[state]}</p>
       <Field
         label="Note to the author"
         help="What you looked at, or what is missing."
