@@ -32,7 +32,7 @@ const tool = (file, args) => async (limitMs) => {
 const checks = [
   {
     name: 'lint and format',
-    run: tool('@biomejs/biome/bin/biome', ['check', '--error-on-warnings', '--max-diagnostics=50']),
+    run: tool('@biomejs/biome/bin/biome', ['check', '--diagnostic-level=error', '--max-diagnostics=50']),
   },
   // Reads pages and all TypeScript and JavaScript that tsconfig.json includes, and first makes the types of actions.
   {
