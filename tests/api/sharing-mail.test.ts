@@ -4,33 +4,37 @@ import { forgetRates, makeThings, makeWorkshop, origin, pool, send } from './sec
 
 afterAll(() => pool.end());
 
-/** What the mail catcher holds, as text, once it mentions the address. */
-async function mailTo(address: string): Promise<string> {
+interface Caught {
+  readonly to: readonly string[];
+  readonly subject: string;
+  readonly text: string;
+  readonly html: string | null;
+}
+
+/** The mails that the catcher has for an address, once there is one. */
+async function mailsTo(address: string): Promise<Caught[]> {
   const page = process.env.GAPMARK_TEST_MAIL ?? '';
   for (let tries = 0; tries < 100; tries += 1, await sleep(100)) {
-    const text = await (await fetch(new URL('messages.json', page))).text();
-    if (text.includes(address)) return text;
+    const all = (await (await fetch(new URL('messages.json', page))).json()) as Caught[];
+    const found = all.filter(({ to }) => to.includes(address));
+    if (found.length > 0) return found;
   }
   throw new Error(`no mail to ${address} was caught`);
 }
 
-it('an answer is told to who made the link, with a way back to the capture', async () => {
+it('an answer is told in plain text to who made the link, and what was typed makes no header of its own', async () => {
   await forgetRates();
   const shop = await makeWorkshop();
   const things = await makeThings(shop.id, shop.technician);
   const body = { name: 'Kit\r\nBcc: all@people.example', text: 'Bent tooth <b>there</b>.' };
-  const refused = await send('POST', `/api/v1/shared/${things.answerSecret}/answers`, {
-    headers: { origin },
-    body,
-  });
-  const named = refused.status === 422 ? { ...body, name: 'Kit' } : body;
-  const answer = await send('POST', `/api/v1/shared/${things.answerSecret}/answers`, {
-    headers: { origin },
-    body: named,
-  });
-  expect(answer.status).toBe(201);
-  const mail = await mailTo(shop.technician.email);
-  expect(mail).toContain(things.capture);
-  expect(mail).not.toContain(things.answerSecret);
-  expect(mail).not.toMatch(/"(to|bcc)":[^}]*all@people\.example/i);
+  const path = `/api/v1/shared/${things.answerSecret}/answers`;
+  expect((await send('POST', path, { headers: { origin }, body })).status).toBe(201);
+  const [mail, ...more] = await mailsTo(shop.technician.email);
+  expect(more).toEqual([]);
+  expect(mail?.to).toEqual([shop.technician.email]);
+  expect(mail?.subject).toBe('Kit Bcc: all@people.example answered about Crank and cam');
+  expect(mail?.html).toBeNull();
+  expect(mail?.text).toContain(body.text);
+  expect(mail?.text).toContain(`${origin}/captures/${things.capture}`);
+  expect(mail?.text).not.toContain(things.answerSecret);
 });

@@ -97,10 +97,10 @@ describe('a token', () => {
     await pool.query('update person set current_workshop_id = $2 where id = $1', [here.owner.id, here.id]);
   });
 
-  it('may send 50 requests a second for ten seconds’ worth', async () => {
+  it('may send four seconds’ worth of 50 requests at once', async () => {
     const headers = bearer(await makeToken(here.owner, here.id, ['read']));
     const answers: number[] = [];
-    for (let round = 0; round < 10; round += 1) {
+    for (let round = 0; round < 4; round += 1) {
       const batch = await Promise.all(
         Array.from({ length: 50 }, () => send('GET', '/api/v1/me', { headers })),
       );
