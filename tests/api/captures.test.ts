@@ -50,9 +50,9 @@ describe('GET /captures', () => {
     ]);
   });
 
-  it('filters by circuit and status and says the key values of each signal', async () => {
+  it('filters by circuit and status and says the key values of each signal', async ({ skip }) => {
     const text = await simulated('crank-60-2-pickup.csv');
-    if (text === null) return;
+    if (text === null) return skip('../shared/captures is absent');
     const own = await makeDesk();
     await settled(own, await uploadCsv(own, text));
     const { json } = await send('GET', '/api/v1/captures?circuit=crank-vr&status=ready', own);

@@ -22,7 +22,7 @@ const columnOf = (text: string, column: number) =>
 
 describe('GET /captures/{id}/window', () => {
   it('gives the samples of the file, and four values a column that are those of its samples', async () => {
-    const text = (await simulated('crank-60-2-and-cam.csv')) ?? sampleCsv(69_999);
+    const text = (await simulated('crank-60-2-pickup.csv')) ?? sampleCsv(69_999);
     const id = await uploadCsv(desk, text);
     const { samples, sampleRateHz } = await settled(desk, id);
     const near = await getWindow(desk, id, `from=0.1&to=${0.1 + 99.5 / sampleRateHz}&columns=50`);
