@@ -55,7 +55,7 @@ export function findHump(
     }
   }
   const left = noise / Math.sqrt((2 * REACH + 1) * size);
-  const enough = Math.max(9 * left, 0.012 * (smooth[0]! - rest));
+  const enough = Math.max(9 * left, 1.5 * noise, 0.012 * (smooth[0]! - rest));
   return best > 0 && height > enough ? { atS: times[best]!, height } : null;
 }
 

@@ -29,7 +29,9 @@ export function loadStates(values: Float32Array): LoadStates | null {
   const bottom = quantileSorted(sorted, 0.0005);
   const top = quantileSorted(sorted, 0.98);
   const full = fullestLevel(sorted, bottom, top, noise);
-  const above = fullestLevel(sorted, full.level + Math.max(6 * noise, 0.04 * (top - bottom)), top, noise);
+  // Past the slope of the on level, short of the feed; rings and kicks are too rare to widen these quantiles.
+  const usual = quantileSorted(sorted, 0.9) - quantileSorted(sorted, 0.1);
+  const above = fullestLevel(sorted, full.level + Math.max(6 * noise, 0.15 * usual), top, noise);
   const step = above.level - full.level;
   const below = shareBetween(sorted, Number.NEGATIVE_INFINITY, full.level - 0.3 * step);
   const fullIsOn =
@@ -65,9 +67,10 @@ function lowerRest(
   const low = Math.max(0.12 * fullest.level, 4 * noise);
   if (!(high > low)) return null;
   const candidate = fullestLevel(sorted, low, high, noise);
-  if (candidate.share < 0.2 * fullest.share) return null;
+  if (candidate.level < low || candidate.share < 0.2 * fullest.share) return null;
   const below = within(sorted, -0.2 * candidate.level, 0.62 * candidate.level);
-  const on = below.length > 0 ? fullestLevel(below, below[0]!, below[below.length - 1]!, noise).level : 0;
+  if (below.length < 0.1 * candidate.share * sorted.length) return null;
+  const on = fullestLevel(below, below[0]!, below[below.length - 1]!, noise).level;
   if (candidate.level - on < Math.max(4 * noise, 0.3 * candidate.level)) return null;
   const apart = candidate.level - on;
   const about = (level: number) => shareBetween(sorted, level - 0.15 * apart, level + 0.15 * apart);
