@@ -1,5 +1,7 @@
 /** Crank rows of the outside values to check against; the source stands beside each. */
 import { describe, expect, test } from 'vitest';
+import { placePassages } from '../../src/engine/circuits/wheel/passages.ts';
+import { findPickup } from '../../src/engine/circuits/wheel/pickup.ts';
 import { crankSignal, dividedWheel, steady } from '../../src/engine/testing/crank-signal.ts';
 import { codes, measureSignal, number, value } from './crank-support.ts';
 
@@ -103,11 +105,17 @@ describe('gaps and periods', () => {
       const signal = crankSignal({ ...steady, ...wheel(36, [35]), inverted, noise: 0.02 });
       const right = measureSignal(signal, 'crank-vr');
       expect(value(right, 'polarity').value).toBe(inverted ? 'inverted' : 'normal');
-      // R across the gap by the edge chosen: near 2² = 4; by the other edge the gap is cut in two, about 1.5².
-      const { teethS, marksS } = right.wheel!;
-      const mark = teethS.indexOf(marksS[1]!);
-      const interval = (j: number) => teethS[j]! - teethS[j - 1]!;
-      expect(interval(mark) ** 2 / (interval(mark + 1) * interval(mark - 1))).toBeGreaterThan(3.2);
+      const pickup = findPickup(signal.samples)!;
+      const largestR = (kind: 'falling' | 'rising') => {
+        const { at } = placePassages(pickup, kind);
+        const interval = (j: number) => at[j]! - at[j - 1]!;
+        const all = Array.from(at, (_, j) =>
+          j < 2 || j + 1 >= at.length ? 0 : interval(j) ** 2 / (interval(j + 1) * interval(j - 1)),
+        );
+        return Math.max(...all);
+      };
+      const [own, other] = inverted ? (['rising', 'falling'] as const) : (['falling', 'rising'] as const);
+      expect(largestR(own)).toBeGreaterThan(largestR(other));
     }
   });
 

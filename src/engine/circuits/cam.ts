@@ -1,4 +1,5 @@
 import type { Findings } from '../capture.ts';
+import { mapped } from '../signal/mapped.ts';
 import { spread } from '../signal/statistics.ts';
 import { timeAt } from '../signal/time.ts';
 import { absent, type Notice } from '../value.ts';
@@ -69,7 +70,7 @@ function pickup(signal: MeasuredSignal): CamFindings {
   }
   const inverted = tellPolarity(found) === 'inverted';
   const passages = placePassages(found, inverted ? 'rising' : 'falling');
-  const timesS = Float64Array.from(passages.at, (at) => timeAt(signal.axis, at));
+  const timesS = mapped(passages.at, (at) => timeAt(signal.axis, at));
   const swing = spread(passages.swing);
   return {
     values: [

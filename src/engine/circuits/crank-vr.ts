@@ -1,5 +1,6 @@
 import type { Findings, Wheel } from '../capture.ts';
 import { extent } from '../signal/levels.ts';
+import { mapped } from '../signal/mapped.ts';
 import { spread } from '../signal/statistics.ts';
 import { timeAt } from '../signal/time.ts';
 import { absent, type Notice, type Value } from '../value.ts';
@@ -28,7 +29,7 @@ export function measureCrankPickup(signal: MeasuredSignal, context: CrankContext
   if (signal.axis.kind === 'uneven' && signal.axis.holds) return measureCrankHall(signal, context);
   const span = extent(signal.values);
   const pickup = span && span.highest > span.lowest ? findPickup(signal.values) : null;
-  if (!pickup) {
+  if (!span || !pickup) {
     const reason = 'no swing of a tooth stands out of the trace';
     return {
       values: [
@@ -60,7 +61,7 @@ export function measureCrankPickup(signal: MeasuredSignal, context: CrankContext
         );
   return {
     values: [...found.values, polarityValue, peakToPeak(train.timesS, passages.swing, signal.unit)],
-    notices: [...found.notices, ...pickupNotices(signal, passages, polarityValue)],
+    notices: [...found.notices, ...pickupNotices(signal, span, passages, polarityValue)],
     wheel: found.wheel,
   };
 }
@@ -83,7 +84,7 @@ function readTeeth(signal: MeasuredSignal, pickup: Pickup, context: CrankContext
   const read = (kind: 'falling' | 'rising', polarity: Polarity | null): Reading => {
     const passages = placePassages(pickup, kind);
     const train = {
-      timesS: Float64Array.from(passages.at, (at) => timeAt(signal.axis, at)),
+      timesS: mapped(passages.at, (at) => timeAt(signal.axis, at)),
       swing: passages.swing,
       height: passages.height,
       halfWidth: passages.halfWidth,

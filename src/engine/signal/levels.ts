@@ -79,8 +79,13 @@ export function stateLevels(
   };
 }
 
+export interface Extent {
+  readonly lowest: number;
+  readonly highest: number;
+}
+
 /** Lowest and highest finite sample; null when there is none. */
-export function extent(values: Float32Array): { readonly lowest: number; readonly highest: number } | null {
+export function extent(values: Float32Array): Extent | null {
   let lowest = Infinity;
   let highest = -Infinity;
   for (let i = 0; i < values.length; i += 1) {

@@ -420,7 +420,7 @@ function follow(laid: Laid, turn: number, template: readonly PatternGap[]): Patt
 
   const events: number[] = [];
   const degrees: number[] = [];
-  const positionOf = new Map<number, number>();
+  const positionOf = new Int32Array(place.length);
   const stretches: number[] = [];
   const perPlace = 360 / turn;
   chainStarts.forEach((startMark, chain) => {
@@ -437,7 +437,7 @@ function follow(laid: Laid, turn: number, template: readonly PatternGap[]): Patt
       if (at < lowest) continue;
       if (at > highest) break;
       if (chain + 1 < chainStarts.length && k >= markEvents[chainStarts[chain + 1]!]!) break;
-      positionOf.set(k, events.length);
+      positionOf[k] = events.length;
       events.push(k);
       degrees.push(markTurns[startMark]! * 360 + (at - firstPlace) * perPlace);
     }
@@ -445,7 +445,7 @@ function follow(laid: Laid, turn: number, template: readonly PatternGap[]): Patt
 
   const missing = gaps.reduce((sum, gap) => sum + gap.size - 1, 0);
   const names = gaps.map((gap) => gap.size - 1).sort((a, b) => b - a);
-  const marks = Int32Array.from(markEvents, (event) => positionOf.get(event)!);
+  const marks = Int32Array.from(markEvents, (event) => positionOf[event]!);
   return {
     name: `${turn}-${names.join('-')}`,
     places: turn,

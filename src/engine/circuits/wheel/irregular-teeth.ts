@@ -7,7 +7,7 @@ const HIGH = 1.15;
 const OFF_DEGREES = 0.2;
 /** In this share of the turns. */
 const SHARE = 0.8;
-const MOST_TURNS = 200;
+const MOST_TURNS = 60;
 /** With fewer places the speed swings too much from tooth to tooth to say where one is due. */
 const FEWEST_PLACES = 20;
 /** Neighbours are looked for within so many places. */

@@ -1,3 +1,4 @@
+import { mapped } from '../../signal/mapped.ts';
 import { median } from '../../signal/statistics.ts';
 import { findGapPattern } from './gap-pattern.ts';
 import type { TwoLevels } from './two-levels.ts';
@@ -66,7 +67,7 @@ export function pulseWidths(levels: TwoLevels, risingEvents: boolean): Float64Ar
   for (let k = 0; k + 1 < edgesS.length; k += 1) {
     if ((rising[k] === 1) === risingEvents) widths.push(edgesS[k + 1]! - edgesS[k]!);
   }
-  return Float64Array.from(widths, (width, i) => {
+  return mapped(widths, (width, i) => {
     const near: number[] = [];
     for (let k = Math.max(0, i - 6); k < Math.min(events.length - 1, i + 6); k += 1)
       near.push(events[k + 1]! - events[k]!);

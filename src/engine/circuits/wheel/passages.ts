@@ -1,3 +1,4 @@
+import { mapped } from '../../signal/mapped.ts';
 import type { Pickup } from './pickup.ts';
 import type { BlockMeans } from './scale.ts';
 
@@ -29,15 +30,15 @@ export function placePassages(pickup: Pickup, kind: 'falling' | 'rising'): Passa
   const at = new Float64Array(count);
   const swing = new Float64Array(count);
   const halfWidth = new Float64Array(count);
-  const samples = means.levels[0]!;
+  const samples = means.level(0);
   const sign = kind === 'falling' ? 1 : -1;
 
-  const centre = Float64Array.from(chosen, (k) => swings.at[k]!);
+  const centre = mapped(chosen, (k) => swings.at[k]!);
   const sums = new Float64Array(count);
   const lengths = new Float64Array(count);
   for (let k = 0; k + 1 < count; k += 1) {
     const octave = Math.max(0, Math.log2(swings.halfWidth[chosen[k]!]!) - 3);
-    const level = means.levels[octave]!;
+    const level = means.level(octave);
     const size = 2 ** octave;
     const from = Math.round((centre[k]! + 0.5) / size);
     const to = Math.min(level.length, Math.round((centre[k + 1]! + 0.5) / size));
@@ -75,7 +76,7 @@ export function placePassages(pickup: Pickup, kind: 'falling' | 'rising'): Passa
       smoothing(halfWidth[k]!, noise, Math.abs(swings.height[chosen[k]!]!)),
     );
   }
-  const height = Float64Array.from(chosen, (k) => Math.abs(swings.height[k]!));
+  const height = mapped(chosen, (k) => Math.abs(swings.height[k]!));
   return { count, at, swing, height, halfWidth };
 }
 
@@ -101,7 +102,7 @@ function crossing(
   sign: number,
 ): number {
   const octave = Math.max(0, Math.log2(width) - 3);
-  const level = means.levels[octave]!;
+  const level = means.level(octave);
   const size = 2 ** octave;
   const reach = Math.max(2, Math.ceil((width * 1.2) / size));
   const middle = Math.round((centre + 0.5) / size - 0.5);
@@ -129,7 +130,7 @@ function crossing(
   }
   if (Number.isNaN(best)) return centre;
   const coarse = (best + 0.5) * size - 0.5;
-  return among(means.levels[0]!, coarse, size, smooth, baseline, sign);
+  return among(means.level(0), coarse, size, smooth, baseline, sign);
 }
 
 /** The crossing of the samples' running mean nearest to `coarse`, at most one block away; else `coarse`. */

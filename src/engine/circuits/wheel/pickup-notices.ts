@@ -1,4 +1,4 @@
-import { extent } from '../../signal/levels.ts';
+import type { Extent } from '../../signal/levels.ts';
 import { quantile } from '../../signal/statistics.ts';
 import { timeAt } from '../../signal/time.ts';
 import type { Evidence, Notice, Value } from '../../value.ts';
@@ -6,7 +6,12 @@ import type { MeasuredSignal } from '../types.ts';
 import type { Passages } from './passages.ts';
 
 /** What a two-wire trace says about its own recording: leads, clipping, sample rate, a floating input. */
-export function pickupNotices(signal: MeasuredSignal, passages: Passages, polarity: Value): Notice[] {
+export function pickupNotices(
+  signal: MeasuredSignal,
+  span: Extent,
+  passages: Passages,
+  polarity: Value,
+): Notice[] {
   const all: Evidence[] = [
     { from: timeAt(signal.axis, passages.at[0]!), to: timeAt(signal.axis, passages.at[passages.count - 1]!) },
   ];
@@ -19,7 +24,7 @@ export function pickupNotices(signal: MeasuredSignal, passages: Passages, polari
       evidence: polarity.evidence,
     });
   }
-  const clipped = clippedEvidence(signal);
+  const clipped = clippedEvidence(signal, span);
   if (clipped.length > 0) {
     out.push({
       code: 'clipped-peaks',
@@ -37,10 +42,8 @@ export function pickupNotices(signal: MeasuredSignal, passages: Passages, polari
 const FLAT_SAMPLES = 4;
 const FLAT_PLACES = 3;
 
-function clippedEvidence(signal: MeasuredSignal): Evidence[] {
+function clippedEvidence(signal: MeasuredSignal, span: Extent): Evidence[] {
   const { values, axis, rail } = signal;
-  const span = extent(values);
-  if (!span) return [];
   const high = rail?.high ?? span.highest;
   const low = rail?.low ?? span.lowest;
   const out: Evidence[] = [];

@@ -1,6 +1,7 @@
+import { mapped } from '../../signal/mapped.ts';
 import { runningQuantile } from '../../signal/running-quantile.ts';
 import { noiseDeviation } from '../../signal/statistics.ts';
-import { type BlockMeans, blockMeans, type ScaleTrack, trackScale } from './scale.ts';
+import { BlockMeans, type ScaleTrack, trackScale } from './scale.ts';
 import { findSwings, type Swings } from './swings.ts';
 
 /** A two-wire signal brought down to its swings, before anyone knows which passage is a tooth's centre. */
@@ -31,7 +32,7 @@ const LOCAL_SHARE = 0.3;
 export function findPickup(values: Float32Array): Pickup | null {
   const samples = bridged(values);
   if (samples.length < 48) return null;
-  const means = blockMeans(samples);
+  const means = new BlockMeans(samples);
   const step = smallestStep(samples);
   const noise = Math.max(noiseDeviation(samples) ?? 0, step / Math.sqrt(12));
   const track = trackScale(means, noise);
@@ -92,33 +93,37 @@ function smallestStep(values: Float32Array): number {
 
 /** Drops swings that are small beside their neighbours, and joins what they had cut apart. */
 function prune(swings: Swings): Swings {
-  const keepAt: number[] = [];
+  const kept = new Int32Array(swings.count);
+  const { height } = swings;
   const local = localSwings(swings);
+  let count = 0;
+  let upward = false;
   for (let k = 0; k < swings.count; k += 1) {
-    const last = keepAt.at(-1);
-    if (last === undefined) {
-      keepAt.push(k);
+    if (count === 0) {
+      kept[count++] = k;
       continue;
     }
-    const change = swings.height[k]! - swings.height[last]!;
-    const before = keepAt.at(-2);
-    const upward = before === undefined ? null : swings.height[last]! > swings.height[before]!;
-    if (
-      upward === null
-        ? Math.abs(change) > LOCAL_SHARE * local[k]!
-        : change > 0 !== upward && Math.abs(change) > LOCAL_SHARE * local[k]!
-    ) {
-      keepAt.push(k);
-    } else if (upward === null || change > 0 === upward) {
-      if (upward !== null || Math.abs(swings.height[k]!) > Math.abs(swings.height[last]!))
-        keepAt[keepAt.length - 1] = k;
+    const last = kept[count - 1]!;
+    const change = height[k]! - height[last]!;
+    const large = Math.abs(change) > LOCAL_SHARE * local[k]!;
+    if (count === 1) {
+      if (large) {
+        upward = change > 0;
+        kept[count++] = k;
+      } else if (Math.abs(height[k]!) > Math.abs(height[last]!)) kept[0] = k;
+    } else if (change > 0 === upward) {
+      kept[count - 1] = k;
+    } else if (large) {
+      upward = change > 0;
+      kept[count++] = k;
     }
   }
+  const indexes = kept.subarray(0, count);
   return {
-    count: keepAt.length,
-    at: Float64Array.from(keepAt, (k) => swings.at[k]!),
-    height: Float64Array.from(keepAt, (k) => swings.height[k]!),
-    halfWidth: Float64Array.from(keepAt, (k) => swings.halfWidth[k]!),
+    count,
+    at: mapped(indexes, (k) => swings.at[k]!),
+    height: mapped(indexes, (k) => height[k]!),
+    halfWidth: mapped(indexes, (k) => swings.halfWidth[k]!),
   };
 }
 
@@ -138,7 +143,7 @@ function localHeights(swings: Swings): Float64Array {
   for (const sign of [1, -1]) {
     const indexes: number[] = [];
     for (let k = 0; k < swings.count; k += 1) if (Math.sign(swings.height[k]!) === sign) indexes.push(k);
-    const quartiles = upperQuartiles(Float64Array.from(indexes, (k) => Math.abs(swings.height[k]!)));
+    const quartiles = upperQuartiles(mapped(indexes, (k) => Math.abs(swings.height[k]!)));
     indexes.forEach((k, i) => {
       out[k] = quartiles[i]!;
     });

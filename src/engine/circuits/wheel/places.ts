@@ -52,11 +52,11 @@ export function layOnPlaces(times: Float64Array): Placed {
     kept = kept.filter((event) => without[event] === 0);
     ratio = ratios(times, kept);
   }
-  const indexOf = new Map(Array.from(kept, (event, index) => [event, index]));
   const placedExtras: { before: number; part: number }[] = [];
+  let index = 0;
   for (const { before, part } of extras) {
-    const index = indexOf.get(before);
-    if (index !== undefined) placedExtras.push({ before: index, part });
+    while (index < kept.length && kept[index]! < before) index += 1;
+    if (kept[index] === before) placedExtras.push({ before: index, part });
   }
   let squares = 0;
   let singles = 0;

@@ -1,3 +1,4 @@
+import { mapped } from '../../signal/mapped.ts';
 import { runningQuantile } from '../../signal/running-quantile.ts';
 import { median } from '../../signal/statistics.ts';
 import type { Pickup } from './pickup.ts';
@@ -9,6 +10,9 @@ const STEEPER = 1.45;
 /** An interval this much longer than its neighbours' middle is a gap. */
 const WIDE = 1.45;
 const NEIGHBOURS = 8;
+/** So many gaps are enough to tell by, and so many passages for a middle height. */
+const MOST_GAPS = 100;
+const MOST_PASSAGES = 4000;
 const LEAST_DIFFERENCE = 0.15;
 
 /**
@@ -27,16 +31,25 @@ export function tellPolarity(pickup: Pickup): Polarity | null {
   if (falling === null || rising === null) return null;
   if (falling > STEEPER * rising) return 'normal';
   if (rising > STEEPER * falling) return 'inverted';
-  const betweenFalling = heightInGaps(pickup, pickup.falling, pickup.rising);
-  const betweenRising = heightInGaps(pickup, pickup.rising, pickup.falling);
+  const falls = pickup.falling.subarray(0, 2 * MOST_PASSAGES);
+  const rises = pickup.rising.subarray(0, 2 * MOST_PASSAGES);
+  const betweenFalling = heightInGaps(pickup, falls, rises);
+  const betweenRising = heightInGaps(pickup, rises, falls);
   if (betweenFalling === null && betweenRising === null) return null;
   const difference = (betweenRising ?? 1) - (betweenFalling ?? 1);
   if (Math.abs(difference) < LEAST_DIFFERENCE) return null;
   return difference > 0 ? 'normal' : 'inverted';
 }
 
-const middleHeight = (pickup: Pickup, kind: Int32Array) =>
-  median(Float64Array.from(kind, (k) => Math.abs(pickup.swings.height[k]!)));
+function middleHeight(pickup: Pickup, kind: Int32Array): number | null {
+  const step = Math.max(1, Math.floor(kind.length / MOST_PASSAGES));
+  return median(
+    mapped(
+      kind.filter((_, i) => i % step === 0),
+      (k) => Math.abs(pickup.swings.height[k]!),
+    ),
+  );
+}
 
 /**
  * Median, over the gaps in `teeth`, of the height of the opposite passage inside the gap over that of the nearer of the
@@ -53,7 +66,7 @@ function heightInGaps(pickup: Pickup, teeth: Int32Array, others: Int32Array): nu
   const inGaps: number[] = [];
   const elsewhere: number[] = [];
   let other = 0;
-  for (let i = 1; i < teeth.length && inGaps.length < 400; i += 1) {
+  for (let i = 1; i < teeth.length && inGaps.length < MOST_GAPS; i += 1) {
     const before = teeth[i - 1]!;
     const after = teeth[i]!;
     while (other < others.length && others[other]! < before) other += 1;

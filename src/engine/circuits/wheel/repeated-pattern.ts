@@ -1,3 +1,4 @@
+import { mapped } from '../../signal/mapped.ts';
 import type { Pattern } from './pattern.ts';
 
 /**
@@ -21,7 +22,7 @@ export function repeatedPattern(
     for (let k = 0; k < teeth; k += 1) shares[k]! += (times[marks[m]! + k]! - from) / length;
   }
   const turns = marks.length - 1;
-  const degrees = Float64Array.from(times, (_, k) => {
+  const degrees = mapped(times, (_, k) => {
     const turn = Math.floor((k - start) / teeth);
     return 360 * (turn + shares[k - start - turn * teeth]! / turns);
   });

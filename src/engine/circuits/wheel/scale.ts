@@ -1,25 +1,45 @@
-/** Means over blocks of 1, 2, 4 … samples: `levels[j][k]` is the mean of samples k·2^j to (k + 1)·2^j − 1. */
-export interface BlockMeans {
+/**
+ * Means over blocks of 2^j samples, made when they are asked for: block k of level j is the mean of samples k·2^j to
+ * (k + 1)·2^j − 1. Few levels are ever needed, and the fine ones are as large as the signal.
+ */
+export class BlockMeans {
   readonly count: number;
-  readonly levels: readonly Float32Array[];
+  /** Coarsest level, of at least 12 blocks. */
+  readonly top: number;
+  private readonly made: Array<Float32Array | undefined>;
+
+  constructor(values: Float32Array) {
+    this.count = values.length;
+    this.top = Math.max(0, Math.floor(Math.log2(values.length / 12)));
+    this.made = [values];
+  }
+
+  level(octave: number): Float32Array {
+    const known = this.made[octave];
+    if (known) return known;
+    let from = octave - 1;
+    while (!this.made[from]) from -= 1;
+    const made = reduced(this.made[from]!, 2 ** (octave - from));
+    this.made[octave] = made;
+    return made;
+  }
+}
+
+function reduced(source: Float32Array, size: number): Float32Array {
+  const out = new Float32Array(Math.floor(source.length / size));
+  const scale = 1 / size;
+  for (let k = 0, i = 0; k < out.length; k += 1) {
+    let sum = 0;
+    for (const end = i + size; i < end; i += 1) sum += source[i]!;
+    out[k] = sum * scale;
+  }
+  return out;
 }
 
 /** Which half-width of the tooth filter fits where: `octave[s]` for samples s·length to (s + 1)·length. */
 export interface ScaleTrack {
   readonly segmentLength: number;
   readonly octave: Int8Array;
-}
-
-/** Halves the samples again and again until fewer than 12 blocks are left. */
-export function blockMeans(values: Float32Array): BlockMeans {
-  const levels = [values];
-  for (let level = values; level.length >= 24; ) {
-    const half = new Float32Array(level.length >> 1);
-    for (let k = 0; k < half.length; k += 1) half[k] = (level[2 * k]! + level[2 * k + 1]!) * 0.5;
-    levels.push(half);
-    level = half;
-  }
-  return { count: values.length, levels };
 }
 
 const OCTAVES_EITHER_WAY = 3;
@@ -36,10 +56,10 @@ const CHANGE_COST = 1.2;
  * @returns null when no width stands out (a flat line, a bare drift).
  */
 export function trackScale(means: BlockMeans, noise: number): ScaleTrack | null {
-  const top = means.levels.length - 1;
+  const { top } = means;
   const whole = new Float64Array(top);
-  for (let j = 0; j < top; j += 1)
-    whole[j] = meanSquareDifference(means.levels[j]!, 0, means.levels[j]!.length);
+  for (let j = Math.min(SAMPLED_BELOW, top - 1); j < top; j += 1) whole[j] = energyOf(means.level(j));
+  for (let j = 0; j < Math.min(SAMPLED_BELOW, top); j += 1) whole[j] = sampledEnergy(means, j);
   const dominant = dominantOctave(whole, noise);
   if (dominant === null) return null;
 
@@ -55,7 +75,7 @@ export function trackScale(means: BlockMeans, noise: number): ScaleTrack | null 
   for (let s = 0; s < segments; s += 1) {
     for (let state = 0; state < states; state += 1) {
       const j = lowest + state;
-      const level = means.levels[j]!;
+      const level = means.level(j);
       const begin = Math.floor((s * segmentLength) / 2 ** j);
       const end = Math.min(level.length, Math.max(begin + 2, Math.floor(((s + 1) * segmentLength) / 2 ** j)));
       const energy = lessNoise(meanSquareDifference(level, begin, end), noise, j);
@@ -86,6 +106,29 @@ export function trackScale(means: BlockMeans, noise: number): ScaleTrack | null 
     state = from[s * states + state]!;
   }
   return { segmentLength, octave };
+}
+
+/** Below this octave a long capture's energy is taken from parts of it, for its levels are large. */
+const SAMPLED_BELOW = 4;
+const PART = 4096;
+const MOST_PARTS = 64;
+
+const energyOf = (level: Float32Array) => meanSquareDifference(level, 0, level.length);
+
+/** Mean energy at a fine octave over parts spread evenly over the capture; the whole of a short one. */
+function sampledEnergy(means: BlockMeans, octave: number): number {
+  const values = means.level(0);
+  if (values.length <= 2 * MOST_PARTS * PART) return energyOf(means.level(octave));
+  let sum = 0;
+  for (let part = 0; part < MOST_PARTS; part += 1) {
+    const from = Math.floor((part * (values.length - PART)) / (MOST_PARTS - 1));
+    sum += energyOf(
+      octave === 0
+        ? values.subarray(from, from + PART)
+        : reduced(values.subarray(from, from + PART), 2 ** octave),
+    );
+  }
+  return sum / MOST_PARTS;
 }
 
 function meanSquareDifference(level: Float32Array, begin: number, end: number): number {

@@ -51,7 +51,7 @@ function filterStretch(
   const fine = Math.max(0, octave - BLOCKS_OCTAVES);
   const size = 2 ** fine;
   const blocks = 2 ** (octave - fine);
-  const level = means.levels[fine]!;
+  const level = means.level(fine);
   const from = Math.max(0, Math.floor(begin / size) - blocks - 2);
   const to = Math.min(level.length, Math.ceil(end / size) + blocks + 2);
   const clean =

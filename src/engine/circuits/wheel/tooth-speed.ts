@@ -1,3 +1,4 @@
+import { mapped } from '../../signal/mapped.ts';
 import { median, spread } from '../../signal/statistics.ts';
 import { absent, type Value } from '../../value.ts';
 import { type FoundWheel, stretchStarts } from './train.ts';
@@ -17,14 +18,13 @@ export function toothSpeeds(wheel: FoundWheel): ToothSpeeds {
   const starts = stretchStarts(wheel.pattern);
   const steps: number[] = [];
   for (let k = 1; k < degrees.length; k += 1) if (!starts.has(k)) steps.push(k);
-  const pick = (source: ArrayLike<number>, shift: number) =>
-    Float64Array.from(steps, (k) => source[k - shift]!);
+  const pick = (source: ArrayLike<number>, shift: number) => mapped(steps, (k) => source[k - shift]!);
   const fromDeg = pick(degrees, 1);
   const toDeg = pick(degrees, 0);
   const fromS = pick(wheel.timesS, 1);
   const toS = pick(wheel.timesS, 0);
   // One revolution a minute is six degrees a second.
-  const rpm = Float64Array.from(steps, (_, i) => (toDeg[i]! - fromDeg[i]!) / (toS[i]! - fromS[i]!) / 6);
+  const rpm = mapped(steps, (_, i) => (toDeg[i]! - fromDeg[i]!) / (toS[i]! - fromS[i]!) / 6);
   return { rpm, fromS, toS, fromDeg, toDeg };
 }
 

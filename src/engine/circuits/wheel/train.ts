@@ -1,3 +1,4 @@
+import { mapped } from '../../signal/mapped.ts';
 import type { Pattern } from './pattern.ts';
 
 /** Tooth events of one crank signal, in seconds, with the swing at each where the sensor has two wires. */
@@ -22,16 +23,16 @@ export interface FoundWheel {
 }
 
 export function joinWheel(train: ToothTrain, pattern: Pattern): FoundWheel {
-  const timesS = Float64Array.from(pattern.events, (event) => train.timesS[event]!);
+  const timesS = mapped(pattern.events, (event) => train.timesS[event]!);
   const pick = (source: Float64Array | null) =>
-    source ? Float64Array.from(pattern.events, (event) => source[event]!) : null;
+    source ? mapped(pattern.events, (event) => source[event]!) : null;
   return {
     pattern,
     timesS,
     swing: pick(train.swing),
     height: pick(train.height),
     halfWidth: pick(train.halfWidth),
-    marksS: Float64Array.from(pattern.marks, (position) => timesS[position]!),
+    marksS: mapped(pattern.marks, (position) => timesS[position]!),
   };
 }
 

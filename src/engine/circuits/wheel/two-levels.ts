@@ -1,5 +1,6 @@
 import { crossings } from '../../signal/crossings.ts';
 import { stateLevels } from '../../signal/levels.ts';
+import { mapped } from '../../signal/mapped.ts';
 import { noiseDeviation } from '../../signal/statistics.ts';
 import { timeAt } from '../../signal/time.ts';
 import type { Notice } from '../../value.ts';
@@ -51,10 +52,10 @@ export function twoLevels(signal: MeasuredSignal): TwoLevels | NotTwoLevels {
   }
   const swing = levels.high - levels.low;
   const found = crossings(values, { level: levels.mesial, hysteresis: DEAD_BAND * swing, holds });
-  const timesS = Float64Array.from(found.at, (at) => timeAt(axis, at));
+  const timesS = mapped(found.at, (at) => timeAt(axis, at));
   const kept = withoutGlitches(timesS, found.rising);
   if (kept.length < 2) return flat(signal, true);
-  const edgesS = Float64Array.from(kept, (k) => timesS[k]!);
+  const edgesS = mapped(kept, (k) => timesS[k]!);
   const rising = Uint8Array.from(kept, (k) => found.rising[k]!);
   const risingS = edgesS.filter((_, k) => rising[k] === 1);
   return {
