@@ -17,6 +17,8 @@ import type { MeasuredSignal } from './types.ts';
 
 /** Half swings of a ringing coil are shorter. Common practice (dwell 2 to 6 ms), no source. */
 const SHORTEST_DWELL_S = 0.2e-3;
+/** No 12 V or 24 V feed is higher; a level above it is a burn line taken for the feed. Common practice, no source. */
+const HIGHEST_FEED_V = 32;
 
 /**
  * The switched side of an ignition coil against battery negative: feed, driver on (dwell), switch-off kick, burn line, ring.
@@ -30,6 +32,9 @@ export function measureCoilPrimaryVoltage(signal: MeasuredSignal): Findings {
     return { ...noEvent(signal, null, 'the trace is upside down'), notices: [upsideDownNotice(axis)] };
   }
   if (states.on === null) return noEvent(signal, states, 'no switch-off in the capture');
+  if (states.rest > HIGHEST_FEED_V) {
+    return noEvent(signal, null, 'the feed cannot be told from the burn line; record a longer stretch');
+  }
   const trace = { values, axis, states: { ...states, on: states.on } };
   const periods = onPeriods(values, axis, trace.states, { shortestS: SHORTEST_DWELL_S });
   if (periods.length === 0) return noEvent(signal, states, 'no switch-off in the capture');

@@ -69,7 +69,7 @@ function lowerRest(
   const candidate = fullestLevel(sorted, low, high, noise);
   if (candidate.level < low || candidate.share < 0.2 * fullest.share) return null;
   const below = within(sorted, -0.2 * candidate.level, 0.62 * candidate.level);
-  if (below.length < 0.1 * candidate.share * sorted.length) return null;
+  if (below.length < Math.max(3, 0.01 * candidate.share * sorted.length)) return null;
   const on = fullestLevel(below, below[0]!, below[below.length - 1]!, noise).level;
   if (candidate.level - on < Math.max(4 * noise, 0.3 * candidate.level)) return null;
   const apart = candidate.level - on;
