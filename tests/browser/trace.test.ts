@@ -75,11 +75,11 @@ describe.each([
     expect(complaints).toEqual([]);
   });
 
-  it('the arrows beside the turn step through the turns', async () => {
+  it('n and p step through the turns', async () => {
     const { page } = watched;
     await page.getByRole('application').focus();
     await page.keyboard.press('0');
-    await page.keyboard.press('n');
+    await page.keyboard.press('p');
     const first = await shownView(page);
     await page.keyboard.press('n');
     const second = await shownView(page);

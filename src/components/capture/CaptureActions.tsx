@@ -38,7 +38,12 @@ export function CaptureActions({ capture }: { capture: CaptureJson }) {
         <Icon name="compare" small />
         Compare
       </a>
-      <button type="button" className="button button-main" onClick={() => setOpen('share')}>
+      <button
+        type="button"
+        className="button button-main"
+        aria-label="Share"
+        onClick={() => setOpen('share')}
+      >
         <Icon name="share" small />
         <span className="capture-share-word">Share</span>
       </button>

@@ -5,7 +5,6 @@ import { circuitWords } from '../base/circuits.ts';
 import { digitsFor, fixed } from './format.ts';
 import { Gutter } from './Gutter.tsx';
 import { type Lane, yOf } from './lanes.ts';
-import { createViewModel, type ViewModel } from './model.ts';
 import {
   createOverlayCanvas,
   type OverlayCanvas,
@@ -20,6 +19,7 @@ import { useLaneGestures } from './useLaneGestures.ts';
 import { useSize } from './useSize.ts';
 import { useStore } from './useStore.ts';
 import { boundsOf, panBy, shareOfTime, zoomAt } from './view.ts';
+import { createViewModel, type ViewModel } from './view-model.ts';
 
 interface OverlayPlotProps {
   axis: 'deg' | 's';

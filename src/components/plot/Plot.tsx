@@ -1,8 +1,7 @@
 import 'uplot/dist/uPlot.min.css';
 import './plot.css';
-import { type KeyboardEvent, useCallback, useEffect, useId, useMemo, useState } from 'react';
+import { type KeyboardEvent, lazy, Suspense, useCallback, useEffect, useId, useMemo, useState } from 'react';
 import { circuitWords } from '../base/circuits.ts';
-import { Dialog } from '../base/Dialog.tsx';
 import { Cursor } from './Cursor.tsx';
 import { dashes } from './dashes.ts';
 import { Gutter } from './Gutter.tsx';
@@ -12,7 +11,7 @@ import { placeMarks } from './mark-layout.ts';
 import type { PlotModel } from './model.ts';
 import { Overlay } from './Overlay.tsx';
 import { PlotSummary } from './PlotSummary.tsx';
-import { actOnKey, PLOT_KEYS } from './plot-keys.ts';
+import { actOnKey } from './plot-keys.ts';
 import { ScaleBar, type ScaleKind } from './ScaleBar.tsx';
 import { SpanFigures, SpanHandles } from './Span.tsx';
 import { Strip } from './Strip.tsx';
@@ -22,6 +21,8 @@ import type { PlotEvidence, PlotMark, PlotWheel } from './types.ts';
 import { type Placed, useLaneGestures } from './useLaneGestures.ts';
 import { useSize } from './useSize.ts';
 import { useStore } from './useStore.ts';
+
+const KeysDialog = lazy(() => import('./KeysDialog.tsx').then((m) => ({ default: m.KeysDialog })));
 
 /** A place on the trace that a person chose for a mark, in the trace's own time and value. */
 export interface MarkPlace {
@@ -137,7 +138,12 @@ export function Plot(props: PlotProps) {
         onKeyDown={onKeyDown}
       >
         <ScaleBar model={model} wheel={wheel} kind={scale} narrow={narrow} />
-        <div ref={frame} className="plot-frame">
+        <div
+          ref={frame}
+          className="plot-frame"
+          // Where the lanes do not fit they scroll, and what scrolls must be reached by keys.
+          {...(height > frameSize.height + 1 ? { tabIndex: 0, role: 'group', 'aria-label': 'Lanes' } : {})}
+        >
           <div className="plot-stack" style={{ height }}>
             <Gutter lanes={lanes} narrow={narrow} />
             <div ref={stage} className={`plot-stage plot-tool-${tool}`} style={{ height }}>
@@ -177,23 +183,7 @@ export function Plot(props: PlotProps) {
         </p>
       )}
       <PlotSummary id={summary} model={model} lanes={lanes} wheel={wheel} />
-      <Dialog open={help} title="Keys while the trace has focus" onClose={() => setHelp(false)}>
-        <dl className="plot-keys">
-          {PLOT_KEYS.map(([keys, does]) => (
-            <div key={keys}>
-              <dt>
-                <kbd className="key">{keys}</kbd>
-              </dt>
-              <dd>{does}</dd>
-            </div>
-          ))}
-        </dl>
-        <form method="dialog" className="dialog-actions">
-          <button type="submit" className="button">
-            Close
-          </button>
-        </form>
-      </Dialog>
+      <Suspense fallback={null}>{help && <KeysDialog onClose={() => setHelp(false)} />}</Suspense>
     </div>
   );
 }

@@ -1,21 +1,9 @@
 import type { FetchWindow } from './fetch-window.ts';
 import { createStore, type Store } from './store.ts';
 import type { PlotCapture, View } from './types.ts';
-import { type Bounds, boundsOf, clampView } from './view.ts';
+import { boundsOf } from './view.ts';
+import { createViewModel, type ViewModel } from './view-model.ts';
 import { createWindowLoader, type WindowLoader } from './window-loader.ts';
-
-/** What a pointer on the lanes does. */
-export type Tool = 'move' | 'span' | 'mark';
-
-/** What pointers and keys move: a view on one axis, with cursor, span and tool. */
-export interface ViewModel {
-  readonly bounds: Bounds;
-  readonly view: Store<View>;
-  readonly cursorS: Store<number | null>;
-  readonly span: Store<View | null>;
-  readonly tool: Store<Tool>;
-  show(view: View): void;
-}
 
 /**
  * One plot's state outside React: the view, the cursor, the span, the samples. Pieces watch what they draw, so a moved
@@ -51,16 +39,4 @@ export function createPlotModel(
   view.subscribe(ask);
   widthPx.subscribe(ask);
   return { ...viewModel, capture, widthPx, loader, devicePixels, close: () => loader.close() };
-}
-
-export function createViewModel(bounds: Bounds, initial: View | null = null): ViewModel {
-  const view = createStore<View>(initial === null ? bounds.whole : clampView(initial, bounds));
-  return {
-    bounds,
-    view,
-    cursorS: createStore<number | null>(null),
-    span: createStore<View | null>(null),
-    tool: createStore<Tool>('move'),
-    show: (next) => view.set(clampView(next, bounds)),
-  };
 }

@@ -1,6 +1,6 @@
 import uPlot from 'uplot';
 import { cssColour, onThemeChange } from './colours.ts';
-import type { ViewModel } from './model.ts';
+import type { ViewModel } from './view-model.ts';
 
 type Values = readonly (number | null)[];
 

@@ -1,7 +1,7 @@
 import { type RefObject, useEffect } from 'react';
-import type { Tool, ViewModel } from './model.ts';
 import type { View } from './types.ts';
 import { panBy, pinch, timeAtShare, zoomAt } from './view.ts';
+import type { Tool, ViewModel } from './view-model.ts';
 
 /** Where a pointer went down and came up again: on one place, or from one time to another. `y` from the top of the stack. */
 export interface Placed {

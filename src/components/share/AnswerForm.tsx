@@ -1,8 +1,6 @@
 import { type FormEvent, useState } from 'react';
 import type { SharedCaptureJson } from '../../contract/areas/sharing.ts';
 import { api, sentenceOf } from '../base/api.ts';
-import { Button } from '../base/Button.tsx';
-import { Icon } from '../base/Icon.tsx';
 import { Message } from '../base/Message.tsx';
 import type { MarkPlace } from '../plot/Plot.tsx';
 
@@ -20,7 +18,7 @@ interface AnswerFormProps {
   onSent: (answer: Answer) => void;
 }
 
-/** Name, answer, and a mark if wanted. What was typed stays until it was taken. */
+/** Name, answer, and a mark if wanted. What was typed stays until it was taken. Plain buttons: each part counts here. */
 export function AnswerForm({
   secret,
   place,
@@ -38,6 +36,7 @@ export function AnswerForm({
 
   const send = async (event: FormEvent) => {
     event.preventDefault();
+    if (busy) return;
     if (name.trim() === '') return setTrouble('Please say who you are: a first name will do.');
     if (text.trim() === '') return setTrouble('The answer is empty. What would you do?');
     setBusy(true);
@@ -93,7 +92,6 @@ export function AnswerForm({
       </label>
       {place === null ? (
         <button type="button" className="button" aria-pressed={marking} onClick={onMark}>
-          <Icon name="pin" small />
           {marking ? 'Tap the trace' : 'Mark'}
         </button>
       ) : (
@@ -103,13 +101,12 @@ export function AnswerForm({
           onClick={onForgetPlace}
           aria-label={`Take the mark at ${placeWords} away`}
         >
-          <Icon name="cross" small />
-          {placeWords}
+          {placeWords} ×
         </button>
       )}
-      <Button kind="main" type="submit" busy={busy}>
-        Send answer
-      </Button>
+      <button type="submit" className="button button-main" aria-busy={busy || undefined}>
+        {busy ? 'Sending …' : 'Send answer'}
+      </button>
     </form>
   );
 }

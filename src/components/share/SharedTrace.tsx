@@ -6,11 +6,11 @@ import { timeText } from '../base/numbers.ts';
 import { usePlotModel } from '../capture/usePlotModel.ts';
 import { bringIntoView, openingView } from '../capture/view-of.ts';
 import { whereOf } from '../capture/where-of.ts';
-import type { Tool } from '../plot/model.ts';
 import { type MarkPlace, Plot } from '../plot/Plot.tsx';
 import { createStore } from '../plot/store.ts';
 import type { PlotMark } from '../plot/types.ts';
 import { useStore } from '../plot/useStore.ts';
+import type { Tool } from '../plot/view-model.ts';
 import { AnswerForm } from './AnswerForm.tsx';
 import { FewNumbers } from './FewNumbers.tsx';
 import { useShared } from './useShared.ts';
@@ -23,6 +23,7 @@ export function SharedTrace({ secret }: { secret: string }) {
   const [place, setPlace] = useState<MarkPlace | null>(null);
   const [chosenMark, setChosenMark] = useState<string | null>(null);
   const seen = useRef(false);
+  const plot = useRef<HTMLDivElement>(null);
   const wheel = shared?.wheel ?? null;
   const drawable = shared !== null && shared.capture.samples > 0;
 
@@ -74,7 +75,7 @@ export function SharedTrace({ secret }: { secret: string }) {
         />
       )}
       {drawable && (
-        <div className="share-plot">
+        <div ref={plot} className="share-plot">
           {model !== null && (
             <Plot
               model={model}
@@ -130,7 +131,10 @@ export function SharedTrace({ secret }: { secret: string }) {
           place={place}
           placeWords={place === null ? '' : whereOf(place, wheel)}
           marking={tool === 'mark'}
-          onMark={() => model.tool.set(tool === 'mark' ? 'move' : 'mark')}
+          onMark={() => {
+            model.tool.set(tool === 'mark' ? 'move' : 'mark');
+            plot.current?.scrollIntoView({ block: 'nearest' });
+          }}
           onForgetPlace={() => setPlace(null)}
           onSent={() => {
             setPlace(null);
