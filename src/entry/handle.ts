@@ -1,9 +1,9 @@
+import { randomUUID } from 'node:crypto';
 import type { IncomingMessage, ServerResponse } from 'node:http';
 import { ApiError } from '../server/errors.ts';
 import { pinAddress } from '../server/http/address.ts';
 import { securityHeaders } from '../server/http/headers.ts';
 import { checkHost } from '../server/http/origin.ts';
-import { newId } from '../server/ids.ts';
 import { log } from '../server/log.ts';
 import { refuse } from './refuse.ts';
 import { findRoute } from './routes.ts';
@@ -21,7 +21,7 @@ export function handle(
   next: Next,
   serveStatic: ServeStatic = () => false,
 ): void {
-  const requestId = newId();
+  const requestId = randomUUID();
   const started = performance.now();
   let endpoint: string | undefined;
   response.on('close', () => {

@@ -37,7 +37,7 @@ describe('GET /captures/{id}/window', () => {
     expect(file).toHaveLength(samples);
     for (let column = 0; column < 1000; column += 1) {
       // Below a column of 256 samples the bounds are exact.
-      const bound = (c: number) => (c === 1000 ? samples : Math.round((c * samples) / 1000));
+      const bound = (c: number) => (c === 1000 ? samples : Math.round(c * (samples / 1000)));
       const expected = summarize(file, bound(column), bound(column + 1));
       expect([...whole.signals[0]!.subarray(column * 4, column * 4 + 4)]).toEqual([...expected]);
     }

@@ -3,6 +3,7 @@ import { windowQuery } from '../../contract/areas/captures.ts';
 import type { Caller } from '../../server/access.ts';
 import { authorize, type CaptureRecord, openCapture } from '../../server/access.ts';
 import { shareCaller } from '../../server/captures/sharing/share-caller.ts';
+import { BoundedCache } from '../../server/captures/window/bounded-cache.ts';
 import { captureWindow } from '../../server/captures/window/capture-window.ts';
 import { Fresh } from '../../server/captures/window/fresh.ts';
 import { resolveCaller } from '../../server/http/caller.ts';
@@ -22,10 +23,23 @@ interface Opened {
  */
 const doors = new Fresh<Opened>();
 
+type Query = z.output<typeof windowQuery>;
+
+/** Queries that were checked before: the same text asks for the same. */
+const checked = new BoundedCache<Query>(512 * 1024);
+
+function queryOf({ url }: FrontRequest): Query {
+  const known = checked.get(url.search);
+  if (known !== undefined) return known;
+  const query = readQuery(windowQuery, url.searchParams);
+  checked.set(url.search, query, 200 + url.search.length * 2);
+  return query;
+}
+
 /** GET /captures/{id}/window */
 export async function windowEndpoint(front: FrontRequest): Promise<void> {
   const { header, address } = front;
-  const query = readQuery(windowQuery, front.url.searchParams);
+  const query = queryOf(front);
   const id = front.params.id ?? '';
   const who = hashSecret(`${header('authorization') ?? ''}\n${header('cookie') ?? ''}`);
   const { caller, row } = await doors.get(`${who} ${id}`, async () => {
@@ -38,7 +52,7 @@ export async function windowEndpoint(front: FrontRequest): Promise<void> {
 
 /** GET /shared/{secret}/window: the same, never kept by anybody on the way. */
 export async function sharedWindowEndpoint(front: FrontRequest): Promise<void> {
-  const query = readQuery(windowQuery, front.url.searchParams);
+  const query = queryOf(front);
   const secret = front.params.secret ?? '';
   const { caller, row } = await doors.get(`share ${hashSecret(secret)}`, async () => {
     const asking = await shareCaller(secret);
@@ -52,7 +66,7 @@ export async function sharedWindowEndpoint(front: FrontRequest): Promise<void> {
 async function answer(
   { request, response, header }: FrontRequest,
   row: CaptureRecord,
-  query: z.output<typeof windowQuery>,
+  query: Query,
   shared: boolean,
 ): Promise<void> {
   const { headers, body } = await captureWindow(row, query);

@@ -11,6 +11,8 @@ import { storeSource } from './store-source.ts';
 
 /** Windows made before, whole: most are asked for again by somebody who looks at the same capture. */
 const windows = new BoundedCache<BuiltWindow>(24 * 1024 * 1024);
+/** Windows that are being made: who asks for the same one meanwhile gets it too. */
+const making = new Map<string, Promise<BuiltWindow>>();
 /** Signal indices by capture and samples version, which they never change under. */
 const indices = new BoundedCache<readonly number[]>(256 * 1024);
 /** A window's place in the cache costs this much besides its body. */
@@ -28,26 +30,33 @@ export async function captureWindow(
   }
   if (query.v !== undefined && query.v !== row.samplesVersion) throw new ApiError('samples_changed');
   const { from, to, columns } = query;
-  const name = `${row.id}/${row.samplesVersion}`;
-  const key = `${name}/${from}/${to}/${columns}/${query.signals?.join() ?? 'all'}`;
-  const known = windows.get(key);
+  const key = `${row.id}/${row.samplesVersion}/${from}/${to}/${columns}/${query.signals?.join() ?? 'all'}`;
+  const known = windows.get(key) ?? making.get(key);
   if (known !== undefined) return known;
+  const made = make(row, { from, to, columns }, query.signals).finally(() => making.delete(key));
+  making.set(key, made);
+  const window = await made;
+  windows.set(key, window, window.body.length + OVERHEAD_BYTES);
+  return window;
+}
+
+async function make(
+  row: Pick<CaptureRecord, 'id' | 'samplesVersion' | 'axis'>,
+  stretch: { readonly from: number; readonly to: number; readonly columns: number },
+  wanted: readonly number[] | undefined,
+): Promise<BuiltWindow> {
+  const name = `${row.id}/${row.samplesVersion}`;
   const all = indices.get(name) ?? (await signalIndices(row.id));
   indices.set(name, all, name.length * 2 + all.length * 8);
-  const signals = query.signals ?? all.slice(0, 64);
+  const signals = wanted ?? all.slice(0, 64);
   const unknown = signals.find((signal) => !all.includes(signal));
   if (unknown !== undefined) {
     throw new ApiError('invalid', {
       details: [{ path: 'signals', message: `there is no signal ${unknown}` }],
     });
   }
-  const built = await buildWindow(storeSource(row), { from, to, columns, signals });
-  const window = {
-    headers: { ...built.headers, 'Gapmark-Samples-Version': String(row.samplesVersion) },
-    body: built.body,
-  };
-  windows.set(key, window, window.body.length + OVERHEAD_BYTES);
-  return window;
+  const { headers, body } = await buildWindow(storeSource(row), { ...stretch, signals });
+  return { headers: { ...headers, 'Gapmark-Samples-Version': String(row.samplesVersion) }, body };
 }
 
 async function signalIndices(captureId: string): Promise<number[]> {
