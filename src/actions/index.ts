@@ -6,6 +6,7 @@ import { createLink } from '../server/captures/sharing/create-link.ts';
 import { hideAnswer } from '../server/captures/sharing/hide-answer.ts';
 import { withdrawLink } from '../server/captures/sharing/withdraw-link.ts';
 import { safeNext } from '../server/http/safe-next.ts';
+import { confirmSignUp } from '../server/session/confirm-sign-up.ts';
 import { createToken } from '../server/session/create-token.ts';
 import { deleteToken } from '../server/session/delete-token.ts';
 import { signIn } from '../server/session/sign-in.ts';
@@ -23,8 +24,18 @@ export const server = {
     input: ACTION_INPUTS.signUp,
     handler: refusing(async ({ next, ...input }, context) => {
       const { cookie } = await signUp({ ...input, ...browserOf(context) });
+      if (cookie === null) return { redirectTo: '/sign-up?sent' };
       context.cookies.set(cookie.name, cookie.value, cookie.attributes);
       return { redirectTo: safeNext(next) };
+    }),
+  }),
+  confirmSignUp: defineAction({
+    accept: 'form',
+    input: ACTION_INPUTS.confirmSignUp,
+    handler: refusing(async ({ secret }, context) => {
+      const { cookie } = await confirmSignUp({ secret, ...browserOf(context) });
+      context.cookies.set(cookie.name, cookie.value, cookie.attributes);
+      return { redirectTo: '/captures' };
     }),
   }),
   signIn: defineAction({

@@ -1,13 +1,14 @@
 import { z } from 'zod';
 import { id, text } from './areas/common.ts';
 import { answerInput, shareLinkInput } from './areas/sharing.ts';
-import { signInInput, signUpInput } from './areas/workshop.ts';
+import { confirmInput, signInInput, signUpInput } from './areas/workshop.ts';
 import type { EndpointId } from './endpoints.ts';
 import { ROLES, SCOPES } from './roles.ts';
 
 /** Forms that work without script. Each does what an endpoint does and has that endpoint's row of the access table. */
 export const ACTIONS = {
   signUp: 'session.signUp',
+  confirmSignUp: 'session.confirmSignUp',
   signIn: 'session.signIn',
   signOut: 'session.signOut',
   switchWorkshop: 'me.workshop',
@@ -30,6 +31,7 @@ const name = text(80).pipe(z.string().min(1));
 /** The fields of each form. */
 export const ACTION_INPUTS = {
   signUp: signUpInput.extend({ next }),
+  confirmSignUp: confirmInput,
   signIn: signInInput.extend({ next }),
   signOut: z.object({}),
   switchWorkshop: z.object({ workshopId: id, next }),

@@ -6,6 +6,7 @@ export const PAGES = {
   '/': 'open',
   '/sign-in': 'open',
   '/sign-up': 'open',
+  '/sign-up/confirm': 'open',
   '/refused': 'open',
   '/404': 'open',
   '/500': 'open',

@@ -69,6 +69,7 @@ const BODIES: Partial<Record<EndpointId, (things: Things) => unknown>> = {
     password: 'long enough',
     workshop: 'W',
   }),
+  'session.confirmSignUp': () => ({ secret: newSecret() }),
   'session.signIn': () => ({ email: `${newId()}@people.example`, password: 'whatever' }),
   'me.workshop': () => ({ workshopId: here.id }),
   'workshop.patch': () => ({ name: 'Test workshop' }),

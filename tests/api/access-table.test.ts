@@ -39,6 +39,7 @@ describe('the access table', () => {
     expect(forNobody.map(([id]) => id).sort()).toEqual([
       'health',
       'openapi',
+      'session.confirmSignUp',
       'session.signIn',
       'session.signUp',
     ]);

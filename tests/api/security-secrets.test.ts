@@ -1,4 +1,5 @@
 import { afterAll, expect, it } from 'vitest';
+import { confirmationLink } from '../kit/caught-mail.ts';
 import { forgetRates, makeThings, makeWorkshop, newId, origin, pool, send } from './security-kit.ts';
 
 afterAll(() => pool.end());
@@ -21,7 +22,12 @@ it('a dump of the database holds no session, token, link secret or password that
   await forgetRates();
   const password = `correct horse ${newId()}`;
   const account = { name: 'Dump', email: `${newId()}@people.example`, password, workshop: 'Dump' };
-  const signedUp = await send('POST', '/api/v1/sign-up', { headers: { origin }, body: account });
+  await send('POST', '/api/v1/sign-up', { headers: { origin }, body: account });
+  const secret = (await confirmationLink(account.email)).searchParams.get('key') ?? '';
+  const pending = await dump();
+  expect(pending).toContain(account.email);
+  expect(pending.includes(secret)).toBe(false);
+  const signedUp = await send('POST', '/api/v1/sign-up/confirm', { headers: { origin }, body: { secret } });
   const session = /gapmark=([^;]+)/.exec(signedUp.headers['set-cookie']?.[0] ?? '')?.[1] ?? '';
   const headers = { cookie: `gapmark=${session}`, origin, 'idempotency-key': newId() };
   const token = await send('POST', '/api/v1/tokens', {

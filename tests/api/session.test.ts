@@ -1,5 +1,6 @@
 import { hash } from '@node-rs/argon2';
 import { afterAll, beforeEach, describe, expect, it } from 'vitest';
+import { confirmationLink, mailsTo } from '../kit/caught-mail.ts';
 import {
   cookieHeaders,
   forgetRates,
@@ -39,9 +40,17 @@ describe('POST /sign-up', () => {
     workshop: 'Ada’s',
   });
 
-  it('makes a person, their workshop with them as owner, and signs in', async () => {
+  const ask = (body: unknown) => send('POST', '/api/v1/sign-up', { headers: { origin }, body });
+  const confirm = (secret: string) =>
+    send('POST', '/api/v1/sign-up/confirm', { headers: { origin }, body: { secret } });
+  const secretFor = async (email: string) => (await confirmationLink(email)).searchParams.get('key') ?? '';
+
+  it('mails a link that makes a person, their workshop with them as owner, and signs in', async () => {
     const body = fields();
-    const answer = await send('POST', '/api/v1/sign-up', { headers: { origin }, body });
+    const asked = await ask(body);
+    expect([asked.status, asked.json]).toEqual([201, { status: 'mail_sent' }]);
+    expect(asked.headers['set-cookie']).toBeUndefined();
+    const answer = await confirm(await secretFor(body.email));
     expect(answer.status).toBe(201);
     expect(answer.json).toMatchObject({ email: body.email, role: 'owner', workshop: { name: 'Ada’s' } });
     const me = await send('GET', '/api/v1/me', {
@@ -50,9 +59,42 @@ describe('POST /sign-up', () => {
     expect(me.json.id).toBe(answer.json.id);
   });
 
+  it('makes nothing before the link is used, and nothing again when it is used twice', async () => {
+    const body = fields();
+    await ask(body);
+    const secret = await secretFor(body.email);
+    const count = async () =>
+      (await pool.query('select count(*)::int as n from person where email = $1', [body.email])).rows[0].n;
+    expect(await count()).toBe(0);
+    await confirm(secret);
+    const again = await confirm(secret);
+    expect([again.status, await count()]).toEqual([410, 1]);
+    expect(again.json.error.message).toContain('used before');
+  });
+
+  it('answers a known address exactly as an unknown one, and mails its holder that there is an account', async () => {
+    const known = await makeAccount();
+    const unknown = await ask(fields());
+    const answer = await ask({ ...fields(), email: known.email });
+    expect([answer.status, answer.json]).toEqual([unknown.status, unknown.json]);
+    expect(Object.keys(answer.headers).sort()).toEqual(Object.keys(unknown.headers).sort());
+    const [mail] = await mailsTo(known.email);
+    expect(mail?.subject).toBe('You have an account already');
+    expect(mail?.text).not.toContain('key=');
+  });
+
+  it('keeps only the hash of the link’s secret', async () => {
+    const body = fields();
+    await ask(body);
+    const secret = await secretFor(body.email);
+    const { rows } = await pool.query('select id from pending_sign_up where email = $1', [body.email]);
+    expect(rows).toEqual([{ id: sha256(secret) }]);
+  });
+
   it('keeps the password as argon2id with 19 MiB, two passes and one lane', async () => {
     const body = fields();
-    await send('POST', '/api/v1/sign-up', { headers: { origin }, body });
+    await ask(body);
+    await confirm(await secretFor(body.email));
     const { rows } = await pool.query('select password_hash from person where email = $1', [body.email]);
     expect(rows[0].password_hash).toMatch(/^\$argon2id\$v=19\$m=19456,t=2,p=1\$/);
   });
@@ -65,12 +107,14 @@ describe('POST /sign-up', () => {
     expect(paths).toEqual(['name', 'email', 'password', 'workshop']);
   });
 
-  it('takes an address once, whatever its case, also when two come at the same time', async () => {
+  it('makes one account of an address, whatever its case, also when two links are used at the same time', async () => {
     const body = fields();
-    const upper = { ...body, email: body.email.toUpperCase() };
-    const answers = await Promise.all(
-      [body, upper].map((each) => send('POST', '/api/v1/sign-up', { headers: { origin }, body: each })),
-    );
+    await ask(body);
+    await ask({ ...body, email: body.email.toUpperCase() });
+    let secrets: string[] = [];
+    while (secrets.length < 2)
+      secrets = (await mailsTo(body.email)).map(({ text }) => /key=(\S+)/.exec(text)?.[1] ?? '');
+    const answers = await Promise.all(secrets.map(confirm));
     expect(answers.map(({ status }) => status).sort()).toEqual([201, 409]);
     const { rows } = await pool.query('select count(*)::int as n from person where email = $1', [body.email]);
     expect(rows[0].n).toBe(1);

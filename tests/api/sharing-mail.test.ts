@@ -1,26 +1,8 @@
-import { setTimeout as sleep } from 'node:timers/promises';
 import { afterAll, expect, it } from 'vitest';
+import { mailsTo } from '../kit/caught-mail.ts';
 import { forgetRates, makeThings, makeWorkshop, origin, pool, send } from './security-kit.ts';
 
 afterAll(() => pool.end());
-
-interface Caught {
-  readonly to: readonly string[];
-  readonly subject: string;
-  readonly text: string;
-  readonly html: string | null;
-}
-
-/** The mails that the catcher has for an address, once there is one. */
-async function mailsTo(address: string): Promise<Caught[]> {
-  const page = process.env.GAPMARK_TEST_MAIL ?? '';
-  for (let tries = 0; tries < 100; tries += 1, await sleep(100)) {
-    const all = (await (await fetch(new URL('messages.json', page))).json()) as Caught[];
-    const found = all.filter(({ to }) => to.includes(address));
-    if (found.length > 0) return found;
-  }
-  throw new Error(`no mail to ${address} was caught`);
-}
 
 it('an answer is told in plain text to who made the link, and what was typed makes no header of its own', async () => {
   await forgetRates();

@@ -9,6 +9,7 @@ import {
 import { expect, vi } from 'vitest';
 import type { Role } from '../../src/contract/roles.ts';
 import { makeWorkshop, origin as testOrigin, type Workshop } from '../api/security-kit.ts';
+import { confirmationLink } from '../kit/caught-mail.ts';
 
 /** What browser tests stand on: Debian's Chromium on the built product, signed in, watched for anything it complains of. */
 
@@ -77,6 +78,15 @@ export interface Account {
 
 let made = 0;
 
+/** Opens the mailed link and presses its button. */
+export async function confirmSignUp(page: Page, email: string): Promise<void> {
+  await page.getByText('Look into your mail').waitFor();
+  const link = await confirmationLink(email);
+  await page.goto(link.pathname + link.search);
+  await page.getByRole('button', { name: 'Set up my workshop' }).click();
+  await page.waitForURL('**/captures');
+}
+
 /** A new person with a workshop of their own, signed in through the form. Sign-up is limited by address: use `enter` where the form does not matter. */
 export async function signUp(page: Page): Promise<Account> {
   made += 1;
@@ -90,7 +100,7 @@ export async function signUp(page: Page): Promise<Account> {
   await page.getByLabel('E-mail').fill(account.email);
   await page.getByLabel('Password', { exact: true }).fill(account.password);
   await page.getByRole('button', { name: 'Set it up' }).click();
-  await page.waitForURL('**/captures');
+  await confirmSignUp(page, account.email);
   return account;
 }
 

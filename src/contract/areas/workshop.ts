@@ -25,6 +25,12 @@ export const signUpInput = z.object({
   password,
   workshop: text(80).pipe(z.string().min(1)),
 });
+/** The secret of a mailed link. */
+export const confirmInput = z.object({ secret: z.string().min(20).max(200) });
+
+/** `mail_sent`: a mail tells how to go on, whether the address was known or not. `signed_in`: mail does not work here. */
+export const signUpAnswer = z.object({ status: z.enum(['mail_sent', 'signed_in']) });
+
 export const signInInput = z.object({ email, password: z.string().min(1).max(200) });
 
 export const me = z.object({
@@ -71,9 +77,19 @@ export const workshopEndpoints = defineEndpoints({
   'session.signUp': {
     method: 'POST',
     path: '/sign-up',
-    summary: 'Make an account and a workshop; signs in.',
+    summary:
+      'Ask for an account and a workshop. A mail with a link confirms the address; the answer is the same for a known one.',
     access: 'open',
     body: signUpInput,
+    response: signUpAnswer,
+    successStatus: 201,
+  },
+  'session.confirmSignUp': {
+    method: 'POST',
+    path: '/sign-up/confirm',
+    summary: 'Make the account and the workshop with the secret of the mailed link; signs in.',
+    access: 'open',
+    body: confirmInput,
     response: me,
     successStatus: 201,
   },

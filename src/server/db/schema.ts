@@ -98,6 +98,21 @@ export const token = pgTable(
   (t) => [uniqueIndex('token_hash').on(t.hash), index('token_person').on(t.personId)],
 );
 
+/** A sign-up that waits for its address to be confirmed by mail. `id` is the SHA-256 of the mailed link's secret. */
+export const pendingSignUp = pgTable(
+  'pending_sign_up',
+  {
+    id: text('id').primaryKey(),
+    email: text('email').notNull(),
+    name: text('name').notNull(),
+    workshop: text('workshop').notNull(),
+    passwordHash: text('password_hash').notNull(),
+    createdAt: createdAt(),
+    expiresAt: at('expires_at').notNull(),
+  },
+  (t) => [index('pending_sign_up_expires').on(t.expiresAt)],
+);
+
 /** Table of the rate limiter (rate-limiter-flexible's own columns). */
 export const rateLimit = pgTable('rate_limit', {
   key: text('key').primaryKey(),

@@ -1,6 +1,6 @@
 import { and, asc, eq, isNotNull, isNull, lt, or, sql } from 'drizzle-orm';
 import { db } from '../../db/client.ts';
-import { capture, upload } from '../../db/schema.ts';
+import { capture, pendingSignUp, upload } from '../../db/schema.ts';
 import { deleteObject, deleteObjects } from '../../storage/delete-objects.ts';
 import { capturePrefix } from '../../storage/keys.ts';
 import { listKeys } from '../../storage/list-keys.ts';
@@ -12,11 +12,13 @@ const LONG_AGO = sql`now() - interval '7 days'`;
 
 /**
  * Removes for good what was deleted 30 days ago (objects first, so that a row never names nothing and a broken-off sweep is
- * taken up again), and uploads that nobody carried on with for a week.
+ * taken up again), uploads
+ * that nobody carried on with for a week, and sign-ups that were not confirmed.
  */
 export async function sweep(): Promise<{ captures: number; uploads: number }> {
   const captures = await sweepCaptures();
   const uploads = await sweepUploads();
+  await db().delete(pendingSignUp).where(lt(pendingSignUp.expiresAt, sql`now()`));
   return { captures, uploads };
 }
 
