@@ -89,13 +89,33 @@ describe('GET /captures/{id}/window', () => {
     expect([...window.signals[0]!]).toEqual(times.map((_, k) => k % 2));
   });
 
-  it('stops at the next request when the membership ends', async () => {
+  it('stops at the next request when membership, token or session end, and when the role changes', async () => {
     const own = await makeDesk();
     const id = await uploadCsv(own, sampleCsv(100));
     await settled(own, id);
+    const { technician } = own.workshop;
     const query = at(id, 'from=0&to=1&columns=10');
-    expect((await send('GET', query, own)).status).toBe(200);
-    await pool.query('delete from membership where person_id = $1', [own.workshop.technician.id]);
-    expect([401, 404]).toContain((await send('GET', query, own)).status);
+    const status = async (headers: Readonly<Record<string, string>>) =>
+      (await send('GET', query, { headers })).status;
+    const twice = async (headers: Readonly<Record<string, string>>) => [
+      await status(headers),
+      await status(headers),
+    ];
+    expect(await twice(own.headers)).toEqual([200, 200]);
+    expect(await twice(technician.browser)).toEqual([200, 200]);
+    const role = (name: string) =>
+      pool.query('update membership set role = $2 where person_id = $1', [technician.id, name]);
+    await role('learner');
+    expect([await status(own.headers), await status(technician.browser)]).toEqual([404, 404]);
+    await role('technician');
+    expect(await twice(own.headers)).toEqual([200, 200]);
+    await pool.query('delete from token where person_id = $1', [technician.id]);
+    expect(await status(own.headers)).toBe(401);
+    await pool.query('update session set expires_at = now() where user_id = $1', [technician.id]);
+    expect(await status(technician.browser)).toBe(401);
+    const other = own.workshop.instructor;
+    expect(await twice(other.browser)).toEqual([200, 200]);
+    await pool.query('delete from membership where person_id = $1', [other.id]);
+    expect([401, 404]).toContain(await status(other.browser));
   });
 });
