@@ -2,8 +2,13 @@
 import { describe, expect, test } from 'vitest';
 import { placePassages } from '../../src/engine/circuits/wheel/passages.ts';
 import { findPickup } from '../../src/engine/circuits/wheel/pickup.ts';
-import { crankSignal, dividedWheel, steady } from '../../src/engine/testing/crank-signal.ts';
-import { codes, measureSignal, number, value } from './crank-support.ts';
+import {
+  type CrankSignal,
+  crankSignal,
+  dividedWheel,
+  steady,
+} from '../../src/engine/testing/crank-signal.ts';
+import { codes, measure, measureSignal, number, value } from './crank-support.ts';
 
 const wheel = (places: number, missing: readonly number[]) => ({
   teethDeg: dividedWheel(places, missing),
@@ -67,6 +72,61 @@ describe('wheels are named as the trade names them', () => {
       expect(value(found, key).value).toBeNull();
       expect(value(found, key).reason).toBeTruthy();
     }
+  });
+});
+
+describe('cam beside crank', () => {
+  // A four-stroke's cam comes round once in 720 crank degrees (arithmetic).
+  const camOf = (signal: CrankSignal, lobes: ReadonlyArray<readonly [number, number]>) =>
+    signal.samples.map((_, i) => {
+      const within = (((signal.angleAt(i * signal.stepS) % 720) + 720) % 720) as number;
+      return lobes.some(([rise, fall]) => within >= rise && within < fall) ? 5 : 0;
+    });
+  const lobes = [
+    [40, 100],
+    [250, 300],
+    [430, 640],
+  ] as const;
+
+  test.each(['crank-vr', 'crank-hall'] as const)(
+    'counts the teeth of an even wheel without a gap (%s)',
+    (circuit) => {
+      const geometry = { teethDeg: dividedWheel(36, []), widthDeg: circuit === 'crank-vr' ? 10 : 5 };
+      const signal = crankSignal({
+        ...steady,
+        ...geometry,
+        durationS: 2.5,
+        kind: circuit === 'crank-vr' ? 'pickup' : 'two-level',
+      });
+      const axis = { kind: 'even', startS: 0, stepS: signal.stepS, count: signal.samples.length } as const;
+      const found = measure(axis, [
+        [circuit, signal.samples],
+        ['cam-hall', camOf(signal, lobes)],
+      ]);
+      expect(value(found, 'wheel_pattern').value).toBe('36');
+      expect(number(found, 'teeth_present')).toBe(36);
+      expect(value(found, 'rpm_mean').value).toBeNull();
+      expect(Math.abs(number(found, 'rpm_instant') / 200 - 1)).toBeLessThan(0.06);
+    },
+  );
+
+  test('gives cam angles within 0.2 degrees, 0 at the mark that the first rising edge follows sooner', () => {
+    const signal = crankSignal({ ...steady, durationS: 2.5, dip: 0.2, sampleRateHz: 50_000 });
+    const axis = { kind: 'even', startS: 0, stepS: signal.stepS, count: signal.samples.length } as const;
+    const found = measure(axis, [
+      ['crank-vr', signal.samples],
+      ['cam-hall', camOf(signal, lobes)],
+    ]);
+    const close = (key: string, wanted: readonly number[]) => {
+      const got = value(found, key).value as number[];
+      expect(got).toHaveLength(wanted.length);
+      got.forEach((angle, k) => {
+        expect(Math.abs(angle - wanted[k]!)).toBeLessThan(0.2);
+      });
+    };
+    close('cam_rising_angles', [40, 250, 430]);
+    close('cam_falling_angles', [100, 300, 640]);
+    expect(number(found, 'edges_per_cycle')).toBe(6);
   });
 });
 

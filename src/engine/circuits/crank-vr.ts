@@ -7,6 +7,7 @@ import { absent, type Notice, type Value } from '../value.ts';
 import { measureCrankHall } from './crank-hall.ts';
 import type { MeasuredSignal } from './types.ts';
 import { findPattern } from './wheel/find-pattern.ts';
+import { isOrdinaryDivision } from './wheel/gap-pattern.ts';
 import { gapRatio } from './wheel/gap-ratio.ts';
 import { type Passages, placePassages } from './wheel/passages.ts';
 import type { PatternResult } from './wheel/pattern.ts';
@@ -96,9 +97,24 @@ function readTeeth(signal: MeasuredSignal, pickup: Pickup, context: CrankContext
   const falling = read('falling', null);
   const rising = read('rising', null);
   const difference = longestGap(falling) - longestGap(rising);
-  if (difference > LONGER_GAP) return { ...falling, polarity: 'normal' };
-  if (difference < -LONGER_GAP) return { ...rising, polarity: 'inverted' };
-  return falling.result.ok || !rising.result.ok ? falling : rising;
+  const chosen: Reading =
+    difference > 0 ? { ...falling, polarity: 'normal' } : { ...rising, polarity: 'inverted' };
+  if (Math.abs(difference) > LONGER_GAP && believable(chosen, falling.result.ok && rising.result.ok))
+    return chosen;
+  if (!falling.result.ok && !rising.result.ok) return falling;
+  // An even wave without a gap, counted against a cam: both passages make the same wheel.
+  const [one, other] = [falling.result, rising.result];
+  if (one.ok && other.ok && one.pattern.name === other.pattern.name) return falling;
+  const unclear =
+    'the teeth can be read from the falling and from the rising passages, and neither fits clearly';
+  return { ...falling, result: { ok: false, evenly: false, reason: unclear } };
+}
+
+/** Where only one reading makes a wheel, it must be an ordinary one, seen over three turns. */
+function believable({ result }: Reading, both: boolean): boolean {
+  if (both || !result.ok) return both;
+  const { places, marks } = result.pattern;
+  return places !== null && isOrdinaryDivision(places) && marks.length > 3;
 }
 
 /** The widest gap of the pattern as measured, in periods of the teeth beside it; 0 without one. */

@@ -4,6 +4,7 @@ import { layOnPlaces, type Placed, SINGLE_MOST } from './places.ts';
 
 /** Teeth scattered more than this about their places (deviation, in periods) are no evenly divided wheel. */
 const MOST_SCATTER = 0.24;
+const MOST_GAPS_A_TURN = 6;
 /** Share of the gaps that must find their like one turn on. */
 const LEAST_MATCH = 0.75;
 /** Periods that shrink (or grow) by this much over three teeth, noise aside: the shaft comes from rest or to a stop. */
@@ -12,6 +13,8 @@ const STARTING = 1.12;
 const FEW_TEETH = 16;
 /** With fewer gaps than this in the train, every one must find its like. */
 const FEWEST_GAPS = 6;
+/** Gaps at the start that fit by chance, and may be left out. */
+const MOST_SKIPPED = 5;
 /** Share of the train that must be followed when its ends are left out. */
 const LEAST_SPAN = 0.6;
 /** Two teeth a turn or fewer repeat too easily: the pattern might be there several times in a turn. */
@@ -170,6 +173,9 @@ function resized({ laid, template, turn }: Found): Laid {
   return { placed, place, features };
 }
 
+/** Whether so many places are a whole number of degrees, or of half degrees, apart. */
+export const isOrdinaryDivision = (places: number) => 720 % places === 0;
+
 interface Found {
   readonly laid: Laid;
   readonly turn: number;
@@ -186,11 +192,12 @@ function findTurn(laid: Laid): Found | null {
   if (!template) return null;
   const missing = template.reduce((sum, gap) => sum + gap.size - 1, 0);
   // Several gaps seen over no more than one turn could be anything: only an ordinary division is believed.
-  const ordinary = (360 % turn === 0 || 720 % turn === 0) && template.length <= 3;
+  const ordinary = isOrdinaryDivision(turn) && template.length <= 3;
   if (template.length > 1 && !ordinary && end < 2 * turn + missing) return null;
+  if (template.length > 3 && (template.length > MOST_GAPS_A_TURN || end < 3 * turn)) return null;
   if (turn - missing < FEWEST_TEETH || nearlyShorter(template, turn)) return null;
   // Wheels are divided into a whole number of degrees or halves; this decides only where a gap's length is open.
-  const natural = 360 % turn === 0 || 720 % turn === 0;
+  const natural = isOrdinaryDivision(turn);
   const nearness = median(
     laid.features.slice(0, 200).map((f) => Math.abs(laid.placed.ratio[f.event - 1]! - f.size)),
   )!;
@@ -200,11 +207,13 @@ function findTurn(laid: Laid): Found | null {
 }
 
 /**
- * True when gaps of one size stand nearly, but not quite, a fixed number of places apart: one wheel with one gap, of
+ * True when gaps stand nearly, but not quite, a fixed number of places apart: one wheel with one gap, of
  * which a tooth or a gap was missed, looks so. Nothing is said then.
  */
 function nearlyShorter(template: readonly PatternGap[], turn: number): boolean {
-  if (template.length < 2 || template.some((gap) => gap.size !== template[0]!.size)) return false;
+  // Two gaps of different size may well stand nearly opposite (36-2-1).
+  if (template.length < 2) return false;
+  if (template.length === 2 && template[0]!.size !== template[1]!.size) return false;
   const starts = template.map((gap) => gap.after);
   const steps = starts.map(
     (start, i) => (start - starts[(i + starts.length - 1) % starts.length]! + turn) % turn || turn,
@@ -237,14 +246,17 @@ function smallestTurn(features: readonly Feature[], end: number): number | null 
   function likenessAt(lag: number): number {
     const has = (place: number, size: number) => sizeAt.get(place) === size;
     const whole = matches(0, end);
-    if (whole >= LEAST_MATCH) return whole;
+    if (whole === 1) return whole;
     // At either end the shaft may have stood, or the signal been too weak: then the rest must be most of the train.
     const partnered = features.filter((f) => has(f.place + lag, f.size) || has(f.place - lag, f.size));
-    const first = partnered[0]?.place ?? 0;
-    const last = partnered.at(-1)?.place ?? 0;
-    if (partnered.length < 3 || last - first < LEAST_SPAN * end) return 0;
-    const rest = matches(first, last + 1);
-    return rest >= LEAST_MATCH ? rest : 0;
+    for (let skipped = 0; skipped < MOST_SKIPPED && partnered.length - skipped >= 3; skipped += 1) {
+      const first = partnered[skipped]!.place;
+      const last = partnered.at(-1)!.place;
+      if (last - first < LEAST_SPAN * end) break;
+      const rest = matches(first, last + 1);
+      if (rest >= LEAST_MATCH) return Math.max(rest, whole);
+    }
+    return whole;
 
     function matches(from: number, to: number): number {
       let matched = 0;
