@@ -126,6 +126,13 @@ describe('PATCH /captures/{id}', () => {
     expect((await patch(id, { colour: 'red' })).status).toBe(422);
     expect((await patch(id, { signals: [{ column: 1, factor: 0 }] })).status).toBe(422);
   });
+
+  it('refuses a job that is not there instead of keeping its id', async () => {
+    const id = await uploadCsv(desk, sampleCsv(20), { title: 'No job' });
+    const answer = await patch(id, { jobId: 'abcdefghijklmnopqrst' });
+    expect(answer.status).toBe(422);
+    expect(answer.json.error.details).toEqual([{ path: 'jobId', message: 'there is no such job' }]);
+  });
 });
 
 describe('hiding and bringing back', () => {
