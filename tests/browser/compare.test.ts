@@ -53,7 +53,10 @@ describe('comparing', () => {
     await page.getByRole('button', { name: /^Orvane Kestle 1\.6/ }).click();
     await page.waitForURL('**/comparisons/*');
     address = page.url();
-    await page.getByText(/^The cam comes 18\.0 degrees late/).first().waitFor();
+    await page
+      .getByText(/^The cam comes 18\.0 degrees late/)
+      .first()
+      .waitFor();
     await page.locator('.plot-lane[data-draws]').waitFor();
     expect(complaints).toEqual([]);
     await close();
