@@ -39,8 +39,8 @@ for (const folder of [CAPTURES, RECORDINGS]) {
   describe(`readTable() on the ${what}`, () => {
     const recorded = (name: string) => name.startsWith('edges-') || name.startsWith('vr-');
     const files = Object.keys(EXPECTED).filter((name) => recorded(name) === (folder === RECORDINGS));
-    test.for(files)('agrees with Papa Parse and Number() on every cell of %s', async (name, { skip }) => {
-      if (!isThere) return skip(`${what} not present`);
+    test.for(files)('agrees with Papa Parse and Number() on every cell of %s', async (name, context) => {
+      if (!isThere) return context.skip(`${what} not present`);
       const path = join(folder, name);
       const { delimiter, decimal, perSecond, skip, rateHz } = EXPECTED[name]!;
       const text = readFileSync(path, 'utf8').replace(/^\ufeff/, '');
