@@ -4,6 +4,23 @@ import tailwindcss from '@tailwindcss/vite';
 import { defineConfig } from 'astro/config';
 import { frontHandler } from './src/entry/integration.mjs';
 
+/**
+ * Many small files cost more in headers than in bytes on a phone: what every island needs is one file, the plot another.
+ * @param {string} id
+ */
+function manualChunks(id) {
+  if (/node_modules\/(react|react-dom|scheduler)\//.test(id)) return 'react';
+  if (
+    /preload-helper|components\/(base\/(api|circuits|LineSample|numbers|Mark|Message|Verdict)|plot\/(decode|fetch)-window)\.tsx?$/.test(
+      id,
+    )
+  )
+    return 'base';
+  if (/node_modules\/uplot\/|components\/plot\/(?!Keys|OverlayPlot|overlay-canvas|plain-degree)/.test(id))
+    return 'plot';
+  return undefined;
+}
+
 export default defineConfig({
   output: 'server',
   adapter: node({ mode: 'middleware' }),
@@ -24,5 +41,5 @@ export default defineConfig({
       ],
     },
   },
-  vite: { plugins: [tailwindcss()] },
+  vite: { plugins: [tailwindcss()], build: { rollupOptions: { output: { manualChunks } } } },
 });
