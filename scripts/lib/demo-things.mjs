@@ -31,20 +31,32 @@ export async function demoThings(origin, token, say) {
     capture &&
     (await ask(`/captures/${capture}/share-links`, { question: 'Is this gap right?', mayAnswer: true }));
   const share = link ? (new URL(link.url).pathname.split('/').pop() ?? '') : '';
-  let comparison = '';
-  if (capture && knownGood) {
-    comparison =
-      (await ask(`/captures/${capture}/comparisons`, { signal: 0, knownGoodId: knownGood }))?.id ?? '';
-    for (let tries = 0; comparison && tries < 60; tries++) {
-      const found = await ask(`/comparisons/${comparison}`);
-      if (found?.status !== 'queued' && found?.status !== 'running') break;
-      await sleep(500);
-    }
-  }
+  const comparison = knownGood ? await compare(ask, ready, knownGood) : '';
   const things = { capture, knownGood, share, comparison };
   for (const [name, id] of Object.entries(things))
     if (!id) say(`! The demo has no ${name}: its pages are left out`);
   return things;
+}
+
+/**
+ * The first signal that the known-good can be compared with, compared.
+ * @param {(path: string, body?: unknown) => Promise<any>} ask @param {any[]} captures @param {string} knownGoodId
+ * @returns {Promise<string>} empty: none
+ */
+async function compare(ask, captures, knownGoodId) {
+  const { signals } = (await ask(`/known-goods/${knownGoodId}`)) ?? {};
+  const circuits = (signals ?? []).map((/** @type {any} */ signal) => signal.circuit);
+  for (const capture of captures) {
+    const signal = capture.signals?.find((/** @type {any} */ one) => circuits.includes(one.circuit))?.index;
+    if (signal === undefined) continue;
+    const made = await ask(`/captures/${capture.id}/comparisons`, { signal, knownGoodId });
+    for (let tries = 0; made && tries < 60; tries++) {
+      const { status } = (await ask(`/comparisons/${made.id}`)) ?? {};
+      if (status !== 'queued' && status !== 'running') return made.id;
+      await sleep(500);
+    }
+  }
+  return '';
 }
 
 /** @param {string} path @param {Record<string, string>} things @returns {string | null} null: a thing is missing */
