@@ -78,9 +78,10 @@ describe('buildWindow() on an even axis', () => {
     }
   });
 
-  it('keeps every one-sample spike at any window and width, and shows no value that is not in the samples', async () => {
+  it('keeps every column’s one-sample spike at any window and width, and shows no value that is not in the samples', async () => {
     const samples = noise(200_000);
-    for (const at of [0, 777, 70_001, 131_072, 199_999]) samples[at] = 100 + at / 1e6;
+    const spikes = [0, 777, 70_001, 131_072, 199_999];
+    for (const at of spikes) samples[at] = 100 + at / 1e6;
     const { source } = memorySource(even(200_000), samples);
     await fc.assert(
       fc.asyncProperty(
@@ -95,7 +96,11 @@ describe('buildWindow() on an even axis', () => {
           const shown = values(body);
           const there = new Set(stretch);
           expect(shown.every((value) => there.has(value))).toBe(true);
-          for (const spike of stretch.filter((value) => value > 1)) expect(shown).toContain(spike);
+          // Of spikes that share a column the highest is drawn; bounds of columns move by less than a column.
+          const inside = spikes.filter((at) => at >= low && at <= high);
+          const column = (high - low + 1) / columns;
+          const higherNearby = (at: number) => inside.some((other) => other > at && other - at < 2 * column);
+          for (const at of inside) if (!higherNearby(at)) expect(shown).toContain(samples[at]);
           // The outer ends are exact.
           expect(shown[0]).toBe(stretch[0]);
           expect(shown.at(-1)).toBe(stretch.at(-1));
