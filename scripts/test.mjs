@@ -59,7 +59,15 @@ async function vitest(config, { limitMs, env = {} }) {
     ],
     {
       cwd: root,
-      env: { ...process.env, ...env, TEST_COUNTS: file, CI: '1', NO_COLOR: '1', FORCE_COLOR: '0' },
+      env: {
+        ...process.env,
+        ...env,
+        TEST_COUNTS: file,
+        AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED: 'true',
+        CI: '1',
+        NO_COLOR: '1',
+        FORCE_COLOR: '0',
+      },
       show: true,
       limitMs: Math.min(limitMs, left),
     },
