@@ -170,7 +170,7 @@ function among(
 function localMedian(level: Float32Array, index: number, arm: number): number {
   if (arm === 0) return level[index]!;
   const last = level.length - 1;
-  const at = (i: number) => level[i < 0 ? 0 : i > last ? last : i]!;
+  const at = (i: number) => level[Math.max(0, Math.min(i, last))]!;
   const here = at(index);
   const b = at(index - 1);
   const d = at(index + 1);
