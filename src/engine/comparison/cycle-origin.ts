@@ -1,21 +1,7 @@
 import type { Wheel } from '../capture.ts';
+import { crankAngleAt } from '../relations/crank-angle.ts';
 import { risingEdgesS } from './first-edge.ts';
 import type { Side } from './types.ts';
-
-/** Crank angle of a time, on straight lines between tooth events; null outside of them. */
-export function degreeAtTime(wheel: Wheel, timeS: number): number | null {
-  const times = wheel.teethS;
-  let low = 0;
-  let high = times.length - 1;
-  if (high < 1 || timeS < times[0]! || timeS > times[high]!) return null;
-  while (high - low > 1) {
-    const middle = (low + high) >> 1;
-    if (times[middle]! <= timeS) low = middle;
-    else high = middle;
-  }
-  const share = (timeS - times[low]!) / (times[high]! - times[low]!);
-  return wheel.teethDeg[low]! + share * (wheel.teethDeg[high]! - wheel.teethDeg[low]!);
-}
 
 /**
  * Which of two reference marks begins the 720 degree cycle of a cam: the one after which the first rising edge comes
@@ -24,7 +10,7 @@ export function degreeAtTime(wheel: Wheel, timeS: number): number | null {
 export function cycleOriginDeg(cam: Side, wheel: Wheel): 0 | 360 | null {
   let soonest: { origin: 0 | 360; deg: number } | null = null;
   for (const time of risingEdgesS(cam)) {
-    const deg = degreeAtTime(wheel, time);
+    const deg = crankAngleAt(wheel, time);
     if (deg === null) continue;
     const inCycle = ((deg % 720) + 720) % 720;
     const origin = inCycle < 360 ? 0 : 360;

@@ -7,7 +7,10 @@ export function coveredDeg(wheel: Wheel): { readonly from: number; readonly to: 
   return { from: wheel.teethDeg[0] ?? 0, to: wheel.teethDeg.at(-1) ?? 0 };
 }
 
-/** Time of a crank angle (unwrapped, 0 at the first reference mark), on straight lines between tooth events; null outside. */
+const BREAK_DEGREES = 300;
+
+/** Time of a crank angle (unwrapped, 0 at the first reference mark), on straight lines between tooth events; null outside of them and across a
+ * break in which the teeth could not be followed (a step of 300 degrees or more). */
 export function timeAtDegree(wheel: Wheel, deg: number): number | null {
   const angles = wheel.teethDeg;
   let low = 0;
@@ -18,7 +21,9 @@ export function timeAtDegree(wheel: Wheel, deg: number): number | null {
     if (angles[middle]! <= deg) low = middle;
     else high = middle;
   }
-  const share = (deg - angles[low]!) / (angles[high]! - angles[low]!);
+  const step = angles[high]! - angles[low]!;
+  if (step >= BREAK_DEGREES) return null;
+  const share = (deg - angles[low]!) / step;
   return wheel.teethS[low]! + share * (wheel.teethS[high]! - wheel.teethS[low]!);
 }
 
