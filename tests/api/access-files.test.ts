@@ -18,15 +18,21 @@ const pathOf = (file: string) => {
   return path.replace(/\/$/, '').replace(/\[(\w+)\]/g, '{$1}') || '/';
 };
 
-/** Refuses whatever has no row. */
-const CATCH_ALL = 'api/[...path].ts';
-const routes = files.filter((file) => file.startsWith('api/') && file !== CATCH_ALL);
-const pages = files.filter((file) => !file.startsWith('api/') && !file.endsWith('README.md'));
+/** What answers an address that nothing else answers: with 404, which has no row on purpose. */
+const CATCH_ALLS = ['api/[...path].ts', '[...path].astro'];
+const served = files.filter((file) => !CATCH_ALLS.includes(file));
+const routes = served.filter((file) => file.startsWith('api/'));
+const pages = served.filter((file) => !file.startsWith('api/') && !file.endsWith('README.md'));
 const rows = Object.entries<Endpoint>(ENDPOINTS);
 
 describe('files under src/pages', () => {
   it.each(pages)('%s has a row among the pages', (file) => {
     expect(Object.keys(PAGES)).toContain(pathOf(file));
+  });
+
+  it.each(CATCH_ALLS)('%s has no row, so the middleware refuses whatever it would answer', (file) => {
+    expect(files).toContain(file);
+    expect(Object.keys(PAGES)).not.toContain(pathOf(file));
   });
 
   it.each(routes)('%s exports only methods that have a row, each made for that row', (file) => {
