@@ -15,7 +15,6 @@ const LONGEST_MS = 20_000;
 export class UploadLocker implements Locker {
   private readonly session = new LockSession([RELEASE_CHANNEL]);
   private readonly held = new Map<string, RequestRelease>();
-  private opening: Promise<void> | undefined;
 
   constructor() {
     this.session.on('notice', (_channel, id) => void this.held.get(id)?.());
@@ -45,7 +44,11 @@ export class UploadLocker implements Locker {
       else await this.session.query('select pg_notify($1, $2)', [RELEASE_CHANNEL, id]);
       await sleep(AGAIN_MS);
     }
-    throw ERRORS.ERR_LOCK_TIMEOUT;
+    throw new ApiError('conflict', {
+      message: 'Another request is still sending to this upload. What has arrived is kept.',
+      hint: 'Ask how far it has come, and go on from there.',
+      retryAfterS: 3,
+    });
   }
 
   private async tryTake(id: string, release: RequestRelease): Promise<boolean> {
@@ -75,12 +78,8 @@ export class UploadLocker implements Locker {
 
   /** Connects at the first upload; when the database is away that is 503, and the next request tries again. */
   private async open(): Promise<void> {
-    if (this.session.isOpen) return;
-    this.opening ??= this.session.open().finally(() => {
-      this.opening = undefined;
-    });
     try {
-      await this.opening;
+      await this.session.open();
     } catch (cause) {
       throw new ApiError('service_away', { cause, retryAfterS: 3 });
     }

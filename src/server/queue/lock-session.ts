@@ -19,6 +19,7 @@ interface Events {
  */
 export class LockSession extends EventEmitter<Events> {
   private client: pg.Client | undefined;
+  private opening: Promise<void> | undefined;
   private closed = false;
   private readonly channels: readonly string[];
   private readonly onConnect: (client: pg.Client) => Promise<void>;
@@ -30,7 +31,16 @@ export class LockSession extends EventEmitter<Events> {
     this.onConnect = onConnect;
   }
 
+  /** Connects. Whoever asks while a connection is being made waits for that one: two would hold locks apart. */
   async open(): Promise<void> {
+    if (this.client !== undefined) return;
+    this.opening ??= this.connect().finally(() => {
+      this.opening = undefined;
+    });
+    await this.opening;
+  }
+
+  private async connect(): Promise<void> {
     const client = new pg.Client({
       connectionString: config().databaseUrl,
       connectionTimeoutMillis: 5_000,
