@@ -54,6 +54,20 @@ describe.each([
 });
 
 describe('captures', () => {
+  it('a capture that was being read when the page came is watched until it is ready', async () => {
+    const { page, complaints, close } = await open(browser);
+    const workshop = await enter(page, 'technician');
+    const { capture } = await makeThings(workshop.id, workshop.technician);
+    await pool.query(`update capture set status = 'reading' where id = $1`, [capture]);
+    await page.goto('/captures');
+    const reading = page.getByRole('listitem').getByText('reading', { exact: true });
+    await reading.waitFor();
+    await pool.query(`update capture set status = 'ready' where id = $1`, [capture]);
+    await reading.waitFor({ state: 'detached', timeout: 20_000 });
+    expect(complaints).toEqual([]);
+    await close();
+  });
+
   it('says so when the list does not come, and comes back by itself or by hand', async () => {
     const { page, close } = await open(browser);
     await enter(page, 'technician');

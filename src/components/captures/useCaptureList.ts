@@ -33,6 +33,8 @@ export const filtersOf = (query: URLSearchParams): CaptureFilters => ({
 
 const WATCH_MS = 2_500;
 
+const isWatched = (page: CaptureList) => page.items.some((row) => isUnderWay(row.status));
+
 /** Captures page by page; asked for again while one of them is read or measured. `initial` spares the first request. */
 export function useCaptureList(filters: CaptureFilters, initial: CaptureList | null) {
   const key = (index: number, previous: CaptureList | null) => {
@@ -45,7 +47,8 @@ export function useCaptureList(filters: CaptureFilters, initial: CaptureList | n
     ...(initial === null ? {} : { fallbackData: [initial], revalidateOnMount: false }),
     keepPreviousData: true,
     revalidateFirstPage: true,
+    // Before the first answer SWR knows nothing of the page that came with the document.
     refreshInterval: (pages) =>
-      pages?.some((page) => page.items.some((row) => isUnderWay(row.status))) ? WATCH_MS : 0,
+      (pages ?? (initial === null ? [] : [initial])).some(isWatched) ? WATCH_MS : 0,
   });
 }
