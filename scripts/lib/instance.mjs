@@ -161,7 +161,8 @@ function processList(dataDir) {
     /** @param {number} pid */
     remove: (pid) => {
       processes = processes.filter((recorded) => recorded.pid !== pid);
-      save();
+      // The news of an end may come after a test has removed the whole folder: then there is nothing left to note.
+      if (existsSync(join(dataDir, 'run'))) save();
     },
   };
 }
