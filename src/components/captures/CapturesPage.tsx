@@ -56,6 +56,16 @@ export function CapturesPage({ initial, initialFilters, timeZone }: CapturesPage
     return () => clearTimeout(timer);
   }, [typed, filters]);
 
+  const addRef = useRef(addFiles);
+  addRef.current = addFiles;
+  // Files that were chosen before this page's script was there are not lost.
+  useEffect(() => {
+    const input = picker.current;
+    if (!input?.files?.length) return;
+    addRef.current([...input.files]);
+    input.value = '';
+  }, []);
+
   const choose = () => picker.current?.click();
   const nothing = rows?.length === 0;
   return (
