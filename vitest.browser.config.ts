@@ -9,6 +9,8 @@ export default defineConfig({
     hookTimeout: 120_000,
     teardownTimeout: 60_000,
     fileParallelism: false,
+    // A browser on a crowded machine now and then misses a wait: once more, and what fails twice has failed.
+    retry: 1,
     pool: 'forks',
   },
 });
