@@ -1,6 +1,6 @@
 import { defineAction } from 'astro:actions';
 import { ACTION_INPUTS } from '../contract/actions.ts';
-import { openAnswer, openCapture, openShareLink, personOf, shareOf } from '../server/access.ts';
+import { OPENERS, personOf, shareOf } from '../server/access.ts';
 import { addAnswer } from '../server/captures/sharing/add-answer.ts';
 import { createLink } from '../server/captures/sharing/create-link.ts';
 import { hideAnswer } from '../server/captures/sharing/hide-answer.ts';
@@ -101,7 +101,7 @@ export const server = {
     accept: 'form',
     input: ACTION_INPUTS.createLink,
     handler: refusing(async ({ captureId, days, ...input }, { locals, clientAddress }) => {
-      const capture = await openCapture(locals.caller, 'shareLinks.create', captureId);
+      const capture = await OPENERS.capture(locals.caller, 'shareLinks.create', captureId);
       const link = { ...input, expiresAt: endAfter(days) };
       return createLink(personOf(locals.caller), capture, link, clientAddress);
     }),
@@ -110,7 +110,7 @@ export const server = {
     accept: 'form',
     input: ACTION_INPUTS.withdrawLink,
     handler: refusing(async ({ id }, { locals, clientAddress }) => {
-      const link = await openShareLink(locals.caller, 'shareLinks.delete', id);
+      const link = await OPENERS.shareLink(locals.caller, 'shareLinks.delete', id);
       await withdrawLink(locals.caller, link, clientAddress);
       return { redirectTo: `/captures/${link.captureId}` };
     }),
@@ -119,7 +119,7 @@ export const server = {
     accept: 'form',
     input: ACTION_INPUTS.hideAnswer,
     handler: refusing(async ({ id }, { locals, clientAddress }) => {
-      const answer = await openAnswer(locals.caller, 'answers.hide', id);
+      const answer = await OPENERS.answer(locals.caller, 'answers.hide', id);
       await hideAnswer(locals.caller, answer, clientAddress);
       return { redirectTo: `/captures/${answer.captureId}` };
     }),

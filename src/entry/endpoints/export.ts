@@ -1,7 +1,7 @@
 import { Readable } from 'node:stream';
 import { pipeline } from 'node:stream/promises';
 import { ENDPOINTS } from '../../contract/endpoints.ts';
-import { openCapture } from '../../server/access.ts';
+import { OPENERS } from '../../server/access.ts';
 import { exportCsv } from '../../server/captures/export/export-csv.ts';
 import { attachment } from '../attachment.ts';
 import { call } from '../call.ts';
@@ -11,7 +11,7 @@ import type { FrontRequest } from '../types.ts';
 /** GET /captures/{id}/export */
 export async function exportEndpoint(front: FrontRequest): Promise<void> {
   const caller = await call(front, 'captures.export');
-  const row = await openCapture(caller, 'captures.export', front.params.id ?? '');
+  const row = await OPENERS.capture(caller, 'captures.export', front.params.id ?? '');
   const { from, to } = readQuery(ENDPOINTS['captures.export'].query, front.url.searchParams);
   const lines = await exportCsv(row, { from, to });
   const first = await lines.next();

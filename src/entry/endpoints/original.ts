@@ -1,5 +1,5 @@
 import { pipeline } from 'node:stream/promises';
-import { openCapture } from '../../server/access.ts';
+import { OPENERS } from '../../server/access.ts';
 import { getObject } from '../../server/storage/get-object.ts';
 import { attachment } from '../attachment.ts';
 import { call } from '../call.ts';
@@ -8,7 +8,7 @@ import type { FrontRequest } from '../types.ts';
 /** GET /captures/{id}/original: the uploaded bytes, never shown by a browser, only saved. */
 export async function originalEndpoint(front: FrontRequest): Promise<void> {
   const caller = await call(front, 'captures.original');
-  const row = await openCapture(caller, 'captures.original', front.params.id ?? '');
+  const row = await OPENERS.capture(caller, 'captures.original', front.params.id ?? '');
   const { body, length } = await getObject(row.originalKey);
   front.response.writeHead(200, {
     'Content-Type': 'application/octet-stream',

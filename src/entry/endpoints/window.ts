@@ -1,7 +1,7 @@
 import type { z } from 'zod';
 import { windowQuery } from '../../contract/areas/captures.ts';
 import type { Caller } from '../../server/access.ts';
-import { authorize, openCapture, type PersonCaller } from '../../server/access.ts';
+import { authorize, OPENERS, type PersonCaller } from '../../server/access.ts';
 import { shareCaller } from '../../server/captures/sharing/share-caller.ts';
 import { BoundedCache } from '../../server/captures/window/bounded-cache.ts';
 import { captureWindow } from '../../server/captures/window/capture-window.ts';
@@ -55,7 +55,7 @@ export async function windowEndpoint(front: FrontRequest): Promise<void> {
       if (quick !== null) return { caller: before.caller, row: quick };
     }
     const asking = await resolveCaller({ header, address });
-    const opened = { caller: asking, row: await openCapture(asking, 'captures.window', id) };
+    const opened = { caller: asking, row: await OPENERS.capture(asking, 'captures.window', id) };
     if (asking.kind === 'person') known.set(who, { caller: asking, at: Date.now() }, 512);
     return opened;
   });
@@ -70,7 +70,7 @@ export async function sharedWindowEndpoint(front: FrontRequest): Promise<void> {
   const { caller, row } = await doors.get(`share ${hashSecret(secret)}`, async () => {
     const asking = await shareCaller(secret);
     authorize('shared.window', asking);
-    return { caller: asking, row: await openCapture(asking, 'shared.window', asking.captureId) };
+    return { caller: asking, row: await OPENERS.capture(asking, 'shared.window', asking.captureId) };
   });
   await limitApi(caller, front.address);
   await answer(front, row, query, true);

@@ -2,7 +2,7 @@ import { and, eq, inArray, sql } from 'drizzle-orm';
 import type { z } from 'zod';
 import type { comparisonInput } from '../../contract/areas/library.ts';
 import type { Circuit } from '../../engine/circuit.ts';
-import { type CaptureRecord, openCapture, openKnownGood, type PersonCaller } from '../access.ts';
+import { type CaptureRecord, OPENERS, type PersonCaller } from '../access.ts';
 import { db } from '../db/client.ts';
 import { captureSignal, comparison, knownGood, knownGoodSignal } from '../db/schema.ts';
 import { ApiError } from '../errors.ts';
@@ -44,7 +44,7 @@ async function targetOf(
   workshopId: string,
 ): Promise<Target> {
   if ('knownGoodId' in input) {
-    const good = await openKnownGood(caller, 'knownGoods.get', input.knownGoodId);
+    const good = await OPENERS.knownGood(caller, 'knownGoods.get', input.knownGoodId);
     if (good.state !== 'published')
       throw new ApiError('conflict', {
         message: `This known-good is ${good.state}; only a published one is a reference.`,
@@ -54,7 +54,7 @@ async function targetOf(
     return { knownGoodIds: [good.id], otherCaptureId: null, otherSignal };
   }
   if ('captureId' in input) {
-    const other = await openCapture(caller, 'captures.get', input.captureId);
+    const other = await OPENERS.capture(caller, 'captures.get', input.captureId);
     if (other.status !== 'ready') throw new ApiError('not_ready');
     const signals = await db().select().from(captureSignal).where(eq(captureSignal.captureId, other.id));
     const otherSignal = sameCircuit(signals, circuit, input.otherSignal);

@@ -1,7 +1,7 @@
 import type { z } from 'zod';
 import type { knownGoodInput } from '../../contract/areas/library.ts';
 import { measureCapture } from '../../engine/measure.ts';
-import { openCapture, type PersonCaller } from '../access.ts';
+import { OPENERS, type PersonCaller } from '../access.ts';
 import { db } from '../db/client.ts';
 import { knownGood, knownGoodSignal } from '../db/schema.ts';
 import { ApiError } from '../errors.ts';
@@ -18,7 +18,7 @@ import { cutStretch, storedAxisOf } from './freeze.ts';
  * @throws ApiError not_ready, invalid (unknown signal, empty or too long a stretch), service_away.
  */
 export async function proposeKnownGood(caller: PersonCaller, input: z.infer<typeof knownGoodInput>) {
-  const capture = await openCapture(caller, 'captures.get', input.captureId);
+  const capture = await OPENERS.capture(caller, 'captures.get', input.captureId);
   if (capture.status !== 'ready' || capture.axis === null) throw new ApiError('not_ready');
   const signals = [...new Set(input.signals)].sort((a, b) => a - b);
   const loaded = await loadCaptureInput(capture, signals);

@@ -1,6 +1,6 @@
 import { and, asc, eq, isNull, or } from 'drizzle-orm';
 import { type SharedCaptureJson, sharedCapture } from '../../../contract/areas/sharing.ts';
-import { type MarkRecord, openCapture, type ShareCaller } from '../../access.ts';
+import { type MarkRecord, OPENERS, type ShareCaller } from '../../access.ts';
 import { db } from '../../db/client.ts';
 import { answer, mark, person, shareLink } from '../../db/schema.ts';
 import { captureJson } from '../capture-json.ts';
@@ -12,7 +12,7 @@ import { markJson } from '../marks/mark-json.ts';
  * there: a field added to captures later does not leak by itself.
  */
 export async function getShared(caller: ShareCaller): Promise<SharedCaptureJson> {
-  const row = await openCapture(caller, 'shared.get', caller.captureId);
+  const row = await OPENERS.capture(caller, 'shared.get', caller.captureId);
   const [capture, wheel, marks, answers] = await Promise.all([
     captureJson(row),
     captureWheel(row),

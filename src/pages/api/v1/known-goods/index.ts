@@ -1,4 +1,4 @@
-import { openKnownGood, personOf } from '../../../../server/access.ts';
+import { OPENERS, personOf } from '../../../../server/access.ts';
 import { etagOf } from '../../../../server/http/etag.ts';
 import { reply } from '../../../../server/http/reply.ts';
 import { route } from '../../../../server/http/route.ts';
@@ -12,6 +12,6 @@ export const GET = route('knownGoods.list', async ({ caller, query }) =>
 
 export const POST = route('knownGoods.create', async ({ caller, body }) => {
   const id = await proposeKnownGood(personOf(caller), body);
-  const made = await openKnownGood(caller, 'knownGoods.get', id);
+  const made = await OPENERS.knownGood(caller, 'knownGoods.get', id);
   return reply(await knownGoodJson(made), { etag: etagOf(made.edition) });
 });

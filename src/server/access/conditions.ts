@@ -1,0 +1,33 @@
+import { and, eq, isNull, or, type SQL, sql } from 'drizzle-orm';
+import type { PgColumn } from 'drizzle-orm/pg-core';
+import type { Role } from '../../contract/roles.ts';
+import { capture, membership } from '../db/schema.ts';
+import type { PersonCaller } from './caller.ts';
+
+/** Things hidden longer than this are gone. */
+const RESTORABLE = sql`now() - interval '30 days'`;
+
+/**
+ * The condition under which a person sees a capture, given the role held in its workshop (a value, or the membership's
+ * column): practice captures are for their maker, instructors and owners; learners see nothing else.
+ */
+export function captureVisible(personId: string, role: Role | typeof membership.role): SQL {
+  const own = eq(capture.createdBy, personId);
+  const held = typeof role === 'string' ? sql`${role}::text` : sql`${role}`;
+  return sql`(${held} in ('owner', 'instructor')
+    or (${held} = 'technician' and (not ${capture.practice} or ${own}))
+    or (${held} = 'learner' and ${capture.practice} and ${own}))`;
+}
+
+/** Membership in the thing's workshop: any of a session's person, the token's only for tokens. */
+export function memberOf(person: PersonCaller, workshopId: PgColumn): SQL | undefined {
+  return and(
+    eq(membership.workshopId, workshopId),
+    eq(membership.personId, person.personId),
+    person.via === 'token' ? eq(membership.workshopId, person.workshopId) : undefined,
+  );
+}
+
+/** Not hidden, or hidden so lately that it can still be brought back. */
+export const reachable = (deletedAt: PgColumn, deleted = false): SQL | undefined =>
+  deleted ? or(isNull(deletedAt), sql`${deletedAt} > ${RESTORABLE}`) : isNull(deletedAt);

@@ -1,0 +1,21 @@
+import type { Thing } from '../../contract/endpoint.ts';
+import { openThrough } from './door.ts';
+import { answerDoor } from './doors/answer.ts';
+import { captureDoor } from './doors/capture.ts';
+import { comparisonDoor } from './doors/comparison.ts';
+import { knownGoodDoor } from './doors/known-good.ts';
+import { markDoor } from './doors/mark.ts';
+import { shareLinkDoor } from './doors/share-link.ts';
+
+/** The way in to each kind of thing. */
+export const OPENERS = {
+  capture: openThrough(captureDoor),
+  mark: openThrough(markDoor),
+  shareLink: openThrough(shareLinkDoor),
+  answer: openThrough(answerDoor),
+  knownGood: openThrough(knownGoodDoor),
+  comparison: openThrough(comparisonDoor),
+} as const satisfies Record<Thing, unknown>;
+
+/** What each kind of thing opens as. */
+export type Opened = { readonly [T in Thing]: Awaited<ReturnType<(typeof OPENERS)[T]>> };
