@@ -13,6 +13,7 @@ import { startTestCopy } from './lib/test-copy.mjs';
 
 /**
  * `npm test`: everything that a change must pass, in one run. It ends with one line, `N passed, N failed, N skipped`.
+ * `npm test -- tests/api/marks.test.ts …` runs the named files only, with what they need started for them.
  *
  * @typedef {import('./lib/vitest-counts.mjs').Counts} Counts
  */
@@ -20,6 +21,14 @@ import { startTestCopy } from './lib/test-copy.mjs';
 /** What has not finished this long after the preparation has failed. A machine with much else to do may be given more. */
 const WHOLE_RUN_MS = Number(process.env.GAPMARK_TEST_MINUTES || 13) * 60_000;
 let deadline = Date.now() + WHOLE_RUN_MS;
+
+/** Files or folders named by the caller; none: everything. */
+const named = process.argv.slice(2).map((path) => path.replace(/^\.\//, ''));
+const wholeRun = named.length === 0;
+
+/** @param {string} folder what is named below it */
+const namedIn = (folder) => named.filter((path) => path.startsWith(folder));
+const outsideServer = named.filter((path) => !/^tests\/(api|browser)\b/.test(path));
 
 /** @type {Counts} */
 const total = { passed: 0, failed: 0, skipped: [] };
@@ -44,9 +53,9 @@ async function stage(title, work) {
 
 /**
  * @param {string} config
- * @param {{ limitMs: number, env?: Record<string, string> }} options
+ * @param {{ limitMs: number, files: string[], env?: Record<string, string> }} options `files` none: all of the config's
  */
-async function vitest(config, { limitMs, env = {} }) {
+async function vitest(config, { limitMs, files, env = {} }) {
   const file = join(counts, `${config}.json`);
   const left = deadline - Date.now();
   if (left < 1000) throw new Error('not run: the whole run’s time is over');
@@ -55,7 +64,7 @@ async function vitest(config, { limitMs, env = {} }) {
     // biome-ignore format: one option and its value a line
     [
       join(root, 'node_modules/vitest/vitest.mjs'), 'run', '--config', config,
-      '--reporter', join(root, 'scripts/lib/vitest-counts.mjs'), '--reporter', 'dot', '--silent=passed-only',
+      '--reporter', join(root, 'scripts/lib/vitest-counts.mjs'), '--reporter', 'dot', '--silent=passed-only', ...files,
     ],
     {
       cwd: root,
@@ -101,13 +110,23 @@ async function main() {
   await installChromium(say);
   deadline = Date.now() + WHOLE_RUN_MS;
 
-  await stage('Types, lint and import rules', async () => {
-    const { passed, failed } = await runChecks({ limitMs: minutes(5) });
-    total.passed += passed;
-    total.failed += failed;
-  });
-  await stage('Unit tests and outside checks', () => vitest('vitest.config.ts', { limitMs: minutes(6) }));
+  if (wholeRun) {
+    await stage('Types, lint and import rules', async () => {
+      const { passed, failed } = await runChecks({ limitMs: minutes(5) });
+      total.passed += passed;
+      total.failed += failed;
+    });
+  }
+  if (wholeRun || outsideServer.length > 0) {
+    await stage('Unit tests and outside checks', () =>
+      vitest('vitest.config.ts', { limitMs: minutes(6), files: outsideServer }),
+    );
+  }
+  if (wholeRun || outsideServer.length < named.length) await testAgainstCopy();
+  conclude();
+}
 
+async function testAgainstCopy() {
   /** @type {Record<string, string>} */
   let env = {};
   await stage('A copy to test against', async () => {
@@ -117,10 +136,13 @@ async function main() {
     env = copy.env;
   });
   if (env.GAPMARK_TEST_ORIGIN !== undefined) {
-    if (hasTests('tests/api'))
-      await stage('API tests', () => vitest('vitest.api.config.ts', { limitMs: minutes(6), env }));
-    if (hasTests('tests/browser')) {
-      await stage('Browser tests', () => vitest('vitest.browser.config.ts', { limitMs: minutes(7), env }));
+    for (const [title, folder, config, share] of /** @type {const} */ ([
+      ['API tests', 'tests/api', 'vitest.api.config.ts', 6],
+      ['Browser tests', 'tests/browser', 'vitest.browser.config.ts', 7],
+    ])) {
+      const files = namedIn(folder);
+      if (!(wholeRun ? hasTests(folder) : files.length > 0)) continue;
+      await stage(title, () => vitest(config, { limitMs: minutes(share), files, env }));
     }
     await stage('Nothing is left running', async () => {
       const left = await stopCopy();
@@ -129,7 +151,6 @@ async function main() {
       total.passed += 1;
     });
   }
-  conclude();
 }
 
 function conclude() {
