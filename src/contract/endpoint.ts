@@ -29,7 +29,17 @@ export interface Endpoint {
 }
 
 /** What is opened by id through the access door. */
-export const THINGS = ['capture', 'mark', 'shareLink', 'answer', 'knownGood', 'comparison'] as const;
+export const THINGS = [
+  'capture',
+  'mark',
+  'shareLink',
+  'answer',
+  'knownGood',
+  'comparison',
+  'set',
+  'exercise',
+  'attempt',
+] as const;
 export type Thing = (typeof THINGS)[number];
 
 /** Keeps the keys' and schemas' types while checking the shape. */

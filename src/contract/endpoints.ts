@@ -2,6 +2,7 @@ import { captureEndpoints, uploadEndpoints } from './areas/captures.ts';
 import { libraryEndpoints } from './areas/library.ts';
 import { markEndpoints } from './areas/marks.ts';
 import { sharingEndpoints } from './areas/sharing.ts';
+import { teachingEndpoints } from './areas/teaching.ts';
 import { workshopEndpoints } from './areas/workshop.ts';
 import { defineEndpoints } from './endpoint.ts';
 
@@ -13,6 +14,7 @@ export const ENDPOINTS = defineEndpoints({
   ...markEndpoints,
   ...sharingEndpoints,
   ...libraryEndpoints,
+  ...teachingEndpoints,
 });
 
 export type EndpointId = keyof typeof ENDPOINTS;

@@ -6,8 +6,8 @@ export type Role = (typeof ROLES)[number];
 export const SCOPES = ['read', 'write', 'manage'] as const;
 export type Scope = (typeof SCOPES)[number];
 
-/** A cell of the access table. `own`: only for things the person made. */
-export type Grant = 'yes' | 'own' | 'no';
+/** A cell of the access table. `own`: only for things the person made; `set`: those, and what is set for them. */
+export type Grant = 'yes' | 'own' | 'set' | 'no';
 
 /** What a holder of a share link may do with the endpoint: not at all, look, or answer (when the link allows it). */
 export type ShareGrant = 'no' | 'look' | 'answer';
@@ -34,8 +34,8 @@ const row = (
 
 /** The rows of the access table in words; each endpoint names one. */
 export const ACCESS = {
-  /** See the workshop's captures, known-goods, comparisons; a learner only own practice captures. */
-  see: row('yes', 'yes', 'yes', 'own', 'read'),
+  /** See the workshop's captures, known-goods, comparisons; a learner own practice captures and what is set for them. */
+  see: row('yes', 'yes', 'yes', 'set', 'read'),
   /** Upload: a learner's upload becomes an own practice capture. */
   upload: row('yes', 'yes', 'yes', 'own', 'write'),
   /** Change, mark, share. */
@@ -47,6 +47,8 @@ export const ACCESS = {
   propose: row('yes', 'yes', 'yes', 'no', 'write'),
   review: row('yes', 'yes', 'no', 'no', 'write'),
   teach: row('yes', 'yes', 'no', 'no', 'write'),
+  /** Results of others. */
+  seeTeach: row('yes', 'yes', 'no', 'no', 'read'),
   attempt: row('yes', 'yes', 'yes', 'yes', 'write'),
   manage: row('yes', 'no', 'no', 'no', 'manage'),
   seeManage: row('yes', 'no', 'no', 'no', 'manage'),

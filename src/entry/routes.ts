@@ -1,6 +1,8 @@
 import { ENDPOINTS, type EndpointId } from '../contract/endpoints.ts';
 import { createCaptureEndpoint } from './endpoints/create-capture.ts';
+import { exerciseWindowEndpoint } from './endpoints/exercise-window.ts';
 import { exportEndpoint } from './endpoints/export.ts';
+import { exportResultsEndpoint } from './endpoints/export-results.ts';
 import { originalEndpoint } from './endpoints/original.ts';
 import { uploadsEndpoint } from './endpoints/uploads.ts';
 import { sharedWindowEndpoint, windowEndpoint } from './endpoints/window.ts';
@@ -19,6 +21,8 @@ const HANDLERS: Record<InFrontId, FrontEndpoint> = {
   'captures.original': originalEndpoint,
   'captures.export': exportEndpoint,
   'shared.window': sharedWindowEndpoint,
+  'exercises.window': exerciseWindowEndpoint,
+  'sets.exportResults': exportResultsEndpoint,
   'uploads.options': uploadsEndpoint('uploads.options'),
   'uploads.create': uploadsEndpoint('uploads.create'),
   'uploads.head': uploadsEndpoint('uploads.head'),

@@ -10,9 +10,13 @@ export {
 } from './access/caller.ts';
 export { captureVisible } from './access/conditions.ts';
 export type { AnswerRecord } from './access/doors/answer.ts';
+export type { AttemptRecord } from './access/doors/attempt.ts';
 export type { CaptureRecord } from './access/doors/capture.ts';
 export type { ComparisonRecord } from './access/doors/comparison.ts';
+export type { ExerciseRecord } from './access/doors/exercise.ts';
 export type { KnownGoodRecord } from './access/doors/known-good.ts';
 export type { MarkRecord } from './access/doors/mark.ts';
+export type { SetRecord } from './access/doors/set.ts';
 export type { ShareLinkRecord } from './access/doors/share-link.ts';
 export { OPENERS, type Opened } from './access/openers.ts';
+export { exerciseVisible, setVisible } from './access/teaching-conditions.ts';

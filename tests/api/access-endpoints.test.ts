@@ -1,9 +1,10 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { Endpoint } from '../../src/contract/endpoint.ts';
 import { ENDPOINTS, type EndpointId } from '../../src/contract/endpoints.ts';
-import { ACCESS, type Role } from '../../src/contract/roles.ts';
+import { ACCESS, type Grant, type Role } from '../../src/contract/roles.ts';
 import {
   bearer,
+  exerciseContent,
   forgetRates,
   join,
   makePerson,
@@ -89,12 +90,21 @@ const BODIES: Partial<Record<EndpointId, (things: Things) => unknown>> = {
   }),
   'knownGoods.patch': () => ({ note: 'n' }),
   'knownGoods.review': () => ({ decision: 'return' }),
+  'sets.create': () => ({ title: 'S' }),
+  'sets.patch': () => ({ title: 'T' }),
+  'sets.addItem': () => ({ kind: 'text', text: 'Look at the gap first.' }),
+  'sets.putItems': ({ exercise }) => ({ items: [{ kind: 'exercise', exerciseId: exercise }] }),
+  'exercises.create': ({ capture }) => ({ title: 'E', content: exerciseContent(capture) }),
+  'exercises.patch': () => ({ title: 'F' }),
+  'attempts.create': () => ({ cause: 'wide-gap' }),
+  'attempts.judge': () => ({ mark: 'right' }),
   'comparisons.create': ({ knownGood }) => ({ signal: 0, knownGoodId: knownGood }),
 };
 
 const QUERIES: Partial<Record<EndpointId, string>> = {
   'captures.window': '?from=0&to=1&columns=1000',
   'shared.window': '?from=0&to=1&columns=1000',
+  'exercises.window': '?from=0&to=1&columns=1000',
 };
 
 interface Extra {
@@ -165,10 +175,13 @@ function expectedFor(row: Endpoint, caller: CallerName): Expected {
   }
 }
 
-function forRole(grant: 'yes' | 'own' | 'no', row: Endpoint, role: Role): Expected {
+function forRole(grant: Grant, row: Endpoint, role: Role): Expected {
   if (row.opens === undefined) return grant === 'no' ? 403 : 'goes on';
-  // A learner does not see what the technician made, whatever they want with it; a workshop's known-goods do exist for them.
-  if (role === 'learner') return row.opens === 'knownGood' ? 403 : 404;
+  // What is set for everybody is there for a learner and a technician, an attempt of another person is not.
+  if (row.opens === 'set' || row.opens === 'exercise') return grant === 'no' ? 403 : 'goes on';
+  if (row.opens === 'attempt') return grant === 'no' ? 404 : 'goes on';
+  // A learner does not see what the technician made, whatever they want with it, while an exercise rests on it.
+  if (role === 'learner') return 404;
   return grant === 'no' ? 403 : 'goes on';
 }
 
@@ -186,6 +199,7 @@ const NEEDS_SAMPLES: readonly EndpointId[] = [
   'captures.original',
   'captures.export',
   'shared.window',
+  'exercises.window',
   'knownGoods.create',
 ];
 
@@ -219,7 +233,7 @@ describe.each(rows)('%s', (id, row) => {
     if (id === 'me.workshop' && caller === 'owner of another workshop')
       return expect(answer.status).toBe(404);
     // And what they propose names a capture that does not exist for them.
-    if (id === 'knownGoods.create' && caller === 'owner of another workshop')
+    if ((id === 'knownGoods.create' || id === 'exercises.create') && caller === 'owner of another workshop')
       return expect(answer.status).toBe(404);
     expect(refusals).not.toContain(answer.status);
     expect(answer.status, answer.text).toBeLessThan(500);

@@ -6,10 +6,11 @@ import { ACCESS, type AccessName, ROLES } from '../../src/contract/roles.ts';
 
 /**
  * The table of who may do what, written out once more by hand from the product's rules on security, so that a change of a
- * row shows here. Columns: owner, instructor, technician, learner; y yes, o own, n no.
+ * row shows here. Columns: owner, instructor, technician, learner; y yes, o own, s own and
+ * what is set for them, n no.
  */
 const ROWS: Readonly<Record<AccessName, string>> = {
-  see: 'yyyo',
+  see: 'yyys',
   upload: 'yyyo',
   change: 'yyyo',
   remove: 'yyoo',
@@ -17,6 +18,7 @@ const ROWS: Readonly<Record<AccessName, string>> = {
   propose: 'yyyn',
   review: 'yynn',
   teach: 'yynn',
+  seeTeach: 'yynn',
   attempt: 'yyyy',
   manage: 'ynnn',
   seeManage: 'ynnn',

@@ -166,9 +166,14 @@ export interface Things {
   readonly answer: string;
   readonly knownGood: string;
   readonly comparison: string;
+  /** Open and set for everybody; it holds the exercise. */
+  readonly set: string;
+  readonly exercise: string;
+  /** Somebody else's, with a text that waits to be judged. */
+  readonly attempt: string;
 }
 
-/** A capture of two signals with a mark, two links, an answer, a known-good and a comparison. */
+/** A capture of two signals with a mark, two links, an answer, a known-good and a comparison, and an exercise on it in a set. */
 export async function makeThings(
   workshopId: string,
   maker: Person,
@@ -183,6 +188,9 @@ export async function makeThings(
     answer: newId(),
     knownGood: newId(),
     comparison: newId(),
+    set: newId(),
+    exercise: newId(),
+    attempt: newId(),
   };
   const axis = JSON.stringify({ kind: 'even', startS: 0, stepS: 0.001, count: 1000 });
   await pool.query(
@@ -236,7 +244,70 @@ export async function makeThings(
       }),
     ],
   );
+  await makeTeaching(workshopId, maker, things);
   return things;
+}
+
+/** What an exercise asks and answers, with words that occur nowhere else. */
+export const exerciseContent = (captureId: string) => ({
+  question: 'Which cause fits?',
+  facts: [{ label: 'Complaint', value: 'cranks, does not start' }],
+  captureId,
+  signals: [0],
+  from: null,
+  to: null,
+  scales: false,
+  asks: {
+    stretch: null,
+    circuit: null,
+    cause: {
+      choices: [
+        { key: 'bent-tooth', text: 'Bent tooth', hint: '' },
+        { key: 'wide-gap', text: 'Wide air gap', hint: '' },
+      ],
+      answer: 'bent-tooth',
+    },
+    value: null,
+    text: null,
+  },
+  answer: {
+    sentence: 'One tooth passes short, the zanzibar way.',
+    evidence: [{ signal: 0, from: 0.4, to: 0.45, label: 'the zanzibar tooth' }],
+    reasoning: [{ title: 'One or all?', text: 'Only one, says zanzibar.' }],
+    proof: 'Seen bent, zanzibar.',
+    caution: '',
+  },
+});
+
+async function makeTeaching(workshopId: string, maker: Person, things: Things): Promise<void> {
+  await pool.query(
+    `insert into teaching_set (id, workshop_id, created_by, title, state, audience) values ($1, $2, $3, 'First steps', 'open', 'everyone')`,
+    [things.set, workshopId, maker.id],
+  );
+  await pool.query(
+    `insert into exercise (id, workshop_id, created_by, capture_id, capture_sha256, title, state)
+     select $1, $2, $3, id, sha256, 'What is wrong?', 'open' from capture where id = $4`,
+    [things.exercise, workshopId, maker.id, things.capture],
+  );
+  await pool.query(
+    'insert into exercise_version (exercise_id, version, content, samples_version) values ($1, 1, $2, 1)',
+    [things.exercise, JSON.stringify(exerciseContent(things.capture))],
+  );
+  await pool.query(
+    `insert into teaching_set_item (id, set_id, position, kind, exercise_id) values ($1, $2, 0, 'exercise', $3)`,
+    [newId(), things.set, things.exercise],
+  );
+  const other = await makePerson('Somebody else');
+  await pool.query(
+    `insert into attempt (id, exercise_id, person_id, version, answers, marks, outcome) values ($1, $2, $3, 1, $4, $5, 'waiting')`,
+    [
+      things.attempt,
+      things.exercise,
+      other.id,
+      JSON.stringify({ text: 'It is bent.' }),
+      JSON.stringify({ text: { mark: 'waiting', why: '' } }),
+    ],
+  );
 }
 
 const store = new S3Client({

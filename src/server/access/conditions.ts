@@ -1,22 +1,24 @@
 import { and, eq, isNull, or, type SQL, sql } from 'drizzle-orm';
 import type { PgColumn } from 'drizzle-orm/pg-core';
-import type { Role } from '../../contract/roles.ts';
 import { capture, membership } from '../db/schema.ts';
 import type { PersonCaller } from './caller.ts';
+import { captureSetFor, captureWithheld, type HeldRole, heldSql } from './teaching-conditions.ts';
 
 /** Things hidden longer than this are gone. */
 const RESTORABLE = sql`now() - interval '30 days'`;
 
 /**
  * The condition under which a person sees a capture, given the role held in its workshop (a value, or the membership's
- * column): practice captures are for their maker, instructors and owners; learners see nothing else.
+ * column): practice captures are for their maker, instructors and owners. A learner sees their own and what is set for
+ * them, and nothing that an open exercise rests on until they have answered it.
  */
-export function captureVisible(personId: string, role: Role | typeof membership.role): SQL {
+export function captureVisible(personId: string, role: HeldRole): SQL {
   const own = eq(capture.createdBy, personId);
-  const held = typeof role === 'string' ? sql`${role}::text` : sql`${role}`;
+  const held = heldSql(role);
   return sql`(${held} in ('owner', 'instructor')
     or (${held} = 'technician' and (not ${capture.practice} or ${own}))
-    or (${held} = 'learner' and ${capture.practice} and ${own}))`;
+    or (${held} = 'learner' and ((${capture.practice} and ${own}) or ${captureSetFor(personId)})
+      and not ${captureWithheld(personId)}))`;
 }
 
 /** Membership in the thing's workshop: any of a session's person, the token's only for tokens. */

@@ -15,6 +15,8 @@ export interface Found<T> {
   readonly thing: T;
   readonly role: Role;
   readonly madeBy: string | null;
+  /** Whether it is set for the caller, as the door's query holds it (for grants of `set`). */
+  readonly setFor?: boolean;
 }
 
 /** How one kind of thing is looked up, with membership in the query's WHERE. */
@@ -34,9 +36,9 @@ export type Opener<T> = (
 
 const notThere = () => new ApiError('not_found');
 
-/** Role too low in the right workshop is 403; `own` also needs the caller to be the maker. */
-function grantOrThrow(grant: Grant, isOwn: boolean): void {
-  if (grant === 'yes' || (grant === 'own' && isOwn)) return;
+/** Role too low in the right workshop is 403; `own` also needs the caller to be the maker, `set` that or a set that holds it. */
+function grantOrThrow(grant: Grant, isOwn: boolean, isSet: boolean): void {
+  if (grant === 'yes' || (grant === 'own' && isOwn) || (grant === 'set' && (isOwn || isSet))) return;
   throw new ApiError('role_too_low');
 }
 
@@ -55,6 +57,6 @@ export const openThrough =
     const person = personOf(caller);
     const [found] = await door.find(person, thingId, options);
     if (found === undefined) throw notThere();
-    grantOrThrow(accessOf(endpoint)[found.role], found.madeBy === person.personId);
+    grantOrThrow(accessOf(endpoint)[found.role], found.madeBy === person.personId, found.setFor === true);
     return found.thing;
   };

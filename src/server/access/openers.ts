@@ -1,10 +1,13 @@
 import type { Thing } from '../../contract/endpoint.ts';
 import { openThrough } from './door.ts';
 import { answerDoor } from './doors/answer.ts';
+import { attemptDoor } from './doors/attempt.ts';
 import { captureDoor } from './doors/capture.ts';
 import { comparisonDoor } from './doors/comparison.ts';
+import { exerciseDoor } from './doors/exercise.ts';
 import { knownGoodDoor } from './doors/known-good.ts';
 import { markDoor } from './doors/mark.ts';
+import { setDoor } from './doors/set.ts';
 import { shareLinkDoor } from './doors/share-link.ts';
 
 /** The way in to each kind of thing. */
@@ -15,6 +18,9 @@ export const OPENERS = {
   answer: openThrough(answerDoor),
   knownGood: openThrough(knownGoodDoor),
   comparison: openThrough(comparisonDoor),
+  set: openThrough(setDoor),
+  exercise: openThrough(exerciseDoor),
+  attempt: openThrough(attemptDoor),
 } as const satisfies Record<Thing, unknown>;
 
 /** What each kind of thing opens as. */

@@ -1,4 +1,5 @@
 /** Every table, one file an area; the migrations are generated from here. */
 export * from './schema/captures.ts';
 export * from './schema/library.ts';
+export * from './schema/teaching.ts';
 export * from './schema/workshop.ts';

@@ -8,8 +8,8 @@ export type CaptureRecord = typeof capture.$inferSelect;
 
 /** A capture; a share link opens its own capture only. */
 export const captureDoor: Door<CaptureRecord> = {
-  find: (person, captureId, { deleted }) =>
-    db()
+  find: async (person, captureId, { deleted }) => {
+    const rows = await db()
       .select({ thing: capture, role: membership.role, madeBy: capture.createdBy })
       .from(capture)
       .innerJoin(membership, memberOf(person, capture.workshopId))
@@ -19,7 +19,10 @@ export const captureDoor: Door<CaptureRecord> = {
           reachable(capture.deletedAt, deleted),
           captureVisible(person.personId, membership.role),
         ),
-      ),
+      );
+    // What a learner finds here and did not make is set for them: the condition lets nothing else through.
+    return rows.map((row) => ({ ...row, setFor: true }));
+  },
   findShared: async (link, captureId) =>
     captureId !== link.captureId
       ? []

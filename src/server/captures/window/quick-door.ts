@@ -42,7 +42,9 @@ export async function quickDoor(caller: PersonCaller, captureId: string): Promis
     );
   if (found === undefined) return null;
   const grant = access[found.role];
-  const granted = grant === 'yes' || (grant === 'own' && found.createdBy === caller.personId);
+  const own = found.createdBy === caller.personId;
+  // As in the capture's door: what a learner finds and did not make is set for them.
+  const granted = grant === 'yes' || grant === 'set' || (grant === 'own' && own);
   return granted ? found : null;
 }
 
