@@ -180,8 +180,8 @@ function forRole(grant: Grant, row: Endpoint, role: Role): Expected {
   // What is set for everybody is there for a learner and a technician, an attempt of another person is not.
   if (row.opens === 'set' || row.opens === 'exercise') return grant === 'no' ? 403 : 'goes on';
   if (row.opens === 'attempt') return grant === 'no' ? 404 : 'goes on';
-  // A learner does not see what the technician made, whatever they want with it, while an exercise rests on it.
-  if (role === 'learner') return 404;
+  // A learner does not see what the technician made, whatever they want with it; a workshop's known-goods do exist for them.
+  if (role === 'learner') return row.opens === 'knownGood' ? 403 : 404;
   return grant === 'no' ? 403 : 'goes on';
 }
 
@@ -216,7 +216,8 @@ describe.each(rows)('%s', (id, row) => {
     const expected = expectedFor(row, caller);
     const changes = row.method !== 'GET' && expected === 'goes on';
     const things = changes ? await makeThings(here.id, here.technician) : await thingsFor(id);
-    if (NEEDS_SAMPLES.includes(id)) await storeSamples(things.capture);
+    if (NEEDS_SAMPLES.includes(id))
+      await Promise.all([storeSamples(things.capture), storeSamples(things.exerciseCapture)]);
     const answer = await call(id, row, caller, things);
     // These end a session that other rows need.
     if (id === 'session.signOut' || id === 'session.signUp') await revive();

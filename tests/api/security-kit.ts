@@ -169,11 +169,13 @@ export interface Things {
   /** Open and set for everybody; it holds the exercise. */
   readonly set: string;
   readonly exercise: string;
+  /** What the exercise rests on: a capture of its own. */
+  readonly exerciseCapture: string;
   /** Somebody else's, with a text that waits to be judged. */
   readonly attempt: string;
 }
 
-/** A capture of two signals with a mark, two links, an answer, a known-good and a comparison, and an exercise on it in a set. */
+/** A capture of two signals with a mark, two links, an answer, a known-good and a comparison, and a set with an exercise. */
 export async function makeThings(
   workshopId: string,
   maker: Person,
@@ -190,6 +192,7 @@ export async function makeThings(
     comparison: newId(),
     set: newId(),
     exercise: newId(),
+    exerciseCapture: newId(),
     attempt: newId(),
   };
   const axis = JSON.stringify({ kind: 'even', startS: 0, stepS: 0.001, count: 1000 });
@@ -281,17 +284,33 @@ export const exerciseContent = (captureId: string) => ({
 
 async function makeTeaching(workshopId: string, maker: Person, things: Things): Promise<void> {
   await pool.query(
+    `insert into capture (id, workshop_id, created_by, title, status, samples_version, axis, samples, sha256, bytes, file_name,
+       original_key) select $1, workshop_id, created_by, 'One short tooth', 'ready', 1, axis, 1000, $3, 10, 'short-tooth.csv', $4
+     from capture where id = $2`,
+    [
+      things.exerciseCapture,
+      things.capture,
+      sha256(things.exerciseCapture),
+      `captures/${things.exerciseCapture}/original`,
+    ],
+  );
+  await pool.query(
+    `insert into capture_signal (capture_id, index, "column", name, circuit, circuit_confidence, unit)
+     values ($1, 0, 1, 'Short', 'crank-vr', 1, 'V'), ($1, 1, 2, 'B', 'cam-hall', 1, 'V')`,
+    [things.exerciseCapture],
+  );
+  await pool.query(
     `insert into teaching_set (id, workshop_id, created_by, title, state, audience) values ($1, $2, $3, 'First steps', 'open', 'everyone')`,
     [things.set, workshopId, maker.id],
   );
   await pool.query(
     `insert into exercise (id, workshop_id, created_by, capture_id, capture_sha256, title, state)
      select $1, $2, $3, id, sha256, 'What is wrong?', 'open' from capture where id = $4`,
-    [things.exercise, workshopId, maker.id, things.capture],
+    [things.exercise, workshopId, maker.id, things.exerciseCapture],
   );
   await pool.query(
     'insert into exercise_version (exercise_id, version, content, samples_version) values ($1, 1, $2, 1)',
-    [things.exercise, JSON.stringify(exerciseContent(things.capture))],
+    [things.exercise, JSON.stringify(exerciseContent(things.exerciseCapture))],
   );
   await pool.query(
     `insert into teaching_set_item (id, set_id, position, kind, exercise_id) values ($1, $2, 0, 'exercise', $3)`,
