@@ -23,6 +23,7 @@ export const PAGES = {
   '/library': 'seeStaff',
   '/library/{id}': 'seeStaff',
   '/teaching': 'self',
+  '/teaching/exercises/{id}': 'self',
   '/workshop': 'self',
 } as const satisfies Record<string, AccessName>;
 
@@ -36,4 +37,5 @@ export const PAGE_OPENS: Readonly<Partial<Record<keyof typeof PAGES, EndpointId>
   '/captures/{id}/compare': 'comparisons.create',
   '/comparisons/{id}': 'comparisons.get',
   '/library/{id}': 'knownGoods.get',
+  '/teaching/exercises/{id}': 'exercises.get',
 };

@@ -16,6 +16,8 @@ const addressOf = (path: string) =>
   path
     .replace('/comparisons/{id}', `/comparisons/${things.comparison}`)
     .replace('/library/{id}', `/library/${things.knownGood}`)
+    .replace('/teaching/exercises/{id}', `/teaching/exercises/${things.exercise}`)
+    .replace('/teaching/sets/{id}', `/teaching/sets/${things.set}`)
     .replace('{id}', things.capture)
     .replace('{secret}', things.answerSecret);
 

@@ -79,7 +79,11 @@ export function Plot(props: PlotProps) {
   const lines = useMemo<LaneLine[]>(() => {
     const dash = dashes(model.capture.signals.map((signal) => signal.circuit));
     return model.capture.signals
-      .map((signal, place) => ({ signal, role: circuitWords(signal.circuit).role, dash: dash[place] ?? [] }))
+      .map((signal, place) => ({
+        signal,
+        role: signal.plain ? 'ink' : circuitWords(signal.circuit).role,
+        dash: signal.plain ? [] : (dash[place] ?? []),
+      }))
       .filter(({ signal }) => !hidden.has(signal.index));
   }, [model, hidden]);
   const lanes = useMemo(

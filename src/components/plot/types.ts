@@ -13,6 +13,8 @@ export interface PlotSignal {
   readonly unit: string;
   readonly factor: number;
   readonly offset: number;
+  /** Drawn in ink with a solid line: what circuit it is must not show. */
+  readonly plain?: boolean;
 }
 
 /** What is drawn: the whole stretch recorded, its steps, its signals. Never the samples themselves. */
