@@ -23,7 +23,13 @@ export const PAGES = {
   '/library': 'seeStaff',
   '/library/{id}': 'seeStaff',
   '/teaching': 'self',
+  '/teaching/exercises/new': 'teach',
   '/teaching/exercises/{id}': 'self',
+  '/teaching/exercises/{id}/edit': 'teach',
+  '/teaching/exercises/{id}/answers': 'seeTeach',
+  '/teaching/sets/new': 'teach',
+  '/teaching/sets/{id}': 'self',
+  '/teaching/sets/{id}/edit': 'teach',
   '/workshop': 'self',
 } as const satisfies Record<string, AccessName>;
 
@@ -38,4 +44,8 @@ export const PAGE_OPENS: Readonly<Partial<Record<keyof typeof PAGES, EndpointId>
   '/comparisons/{id}': 'comparisons.get',
   '/library/{id}': 'knownGoods.get',
   '/teaching/exercises/{id}': 'exercises.get',
+  '/teaching/exercises/{id}/edit': 'exercises.patch',
+  '/teaching/exercises/{id}/answers': 'attempts.list',
+  '/teaching/sets/{id}': 'sets.get',
+  '/teaching/sets/{id}/edit': 'sets.patch',
 };

@@ -42,7 +42,8 @@ describe.each(pages)('page %s (%s)', (path, access) => {
     if (byLink) return expect(answer.status).toBe(200);
     if (row[role] === 'yes' || row.nobody) return expect([200, 302, 303]).toContain(answer.status);
     // A thing that is not theirs does not exist for a learner; a place without part for them says so.
-    const refused = path.includes('{id}') && !path.startsWith('/library') ? [404] : [403];
+    const there = path.startsWith('/library') || path.startsWith('/teaching');
+    const refused = path.includes('{id}') && !there ? [404] : [403];
     if ((row[role] === 'own' || row[role] === 'set') && !path.includes('{id}'))
       return expect(answer.status).toBe(200);
     expect(refused).toContain(answer.status);
