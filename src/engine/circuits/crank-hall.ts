@@ -5,6 +5,7 @@ import type { MeasuredSignal } from './types.ts';
 import { findPattern } from './wheel/find-pattern.ts';
 import { chooseEdge, pulseWidths } from './wheel/leading-edge.ts';
 import { levelNotices } from './wheel/level-notices.ts';
+import { lowRateNotice, PULSE, samplingOf, TOO_FEW_SAMPLES } from './wheel/sample-rate.ts';
 import { type TwoLevels, twoLevels } from './wheel/two-levels.ts';
 import { type CrankContext, wheelFindings, withoutWheel } from './wheel/wheel-findings.ts';
 
@@ -26,9 +27,16 @@ export function measureCrankHall(
   }
   const edge = chooseEdge(levels);
   const timesS = edge.rising ? levels.risingS : levels.fallingS;
-  const result = findPattern(timesS, pulseWidths(levels, edge.rising), context.camEdgesS);
-  const found = wheelFindings({ timesS, swing: null, height: null, halfWidth: null }, result, context);
+  const places = levels.places ?? new Float64Array(0);
+  const sampling = samplingOf(places, PULSE);
+  const result = sampling.tooFew
+    ? TOO_FEW_SAMPLES
+    : findPattern(timesS, pulseWidths(levels, edge.rising), context.camEdgesS);
+  const train = { timesS, swing: null, height: null, halfWidth: null, coarse: sampling.coarse };
+  const found = wheelFindings(train, result, context);
   const notices: Notice[] = [...found.notices, ...levelNotices(signal, levels)];
+  const low = lowRateNotice(signal.axis, places, sampling, PULSE, 'the shortest pulse');
+  if (low) notices.push(low);
   if (result.ok && result.pattern.gaps.length === 0) {
     notices.push({
       code: 'rising-edge-without-gap',

@@ -7,13 +7,15 @@ import { absent, type Notice, type Value } from '../value.ts';
 import { measureCrankHall } from './crank-hall.ts';
 import type { MeasuredSignal } from './types.ts';
 import { findPattern } from './wheel/find-pattern.ts';
-import { isOrdinaryDivision } from './wheel/gap-pattern.ts';
 import { gapRatio } from './wheel/gap-ratio.ts';
 import { type Passages, placePassages } from './wheel/passages.ts';
 import type { PatternResult } from './wheel/pattern.ts';
 import { findPickup, type Pickup } from './wheel/pickup.ts';
 import { pickupNotices } from './wheel/pickup-notices.ts';
-import { type Polarity, tellPolarity } from './wheel/polarity.ts';
+import { layOnPlaces } from './wheel/places.ts';
+import { type Polarity, tellPolarity, tellSteepness } from './wheel/polarity.ts';
+import { isOrdinaryDivision } from './wheel/proof.ts';
+import { PICKUP, type Sampling, samplingOf, TOO_FEW_SAMPLES } from './wheel/sample-rate.ts';
 import { joinWheel, type ToothTrain } from './wheel/train.ts';
 import { type CrankContext, wheelFindings, withoutWheel } from './wheel/wheel-findings.ts';
 
@@ -43,7 +45,7 @@ export function measureCrankPickup(signal: MeasuredSignal, context: CrankContext
     };
   }
   const reading = readTeeth(signal, pickup, context);
-  const { passages, train, result, polarity } = reading;
+  const { passages, train, result, polarity, sampling } = reading;
   const found = wheelFindings(train, result, context);
   const polarityValue: Value =
     polarity !== null && result.ok
@@ -62,13 +64,14 @@ export function measureCrankPickup(signal: MeasuredSignal, context: CrankContext
         );
   return {
     values: [...found.values, polarityValue, peakToPeak(train.timesS, passages.swing, signal.unit)],
-    notices: [...found.notices, ...pickupNotices(signal, span, passages, polarityValue)],
+    notices: [...found.notices, ...pickupNotices(signal, span, passages, sampling, polarityValue)],
     wheel: found.wheel,
   };
 }
 
 interface Reading {
   readonly passages: Passages;
+  readonly sampling: Sampling;
   readonly train: ToothTrain;
   readonly result: PatternResult;
   readonly polarity: Polarity | null;
@@ -77,6 +80,14 @@ interface Reading {
 /** Gaps this much longer (in tooth periods) by one kind of passage than by the other show which one is the teeth's. */
 const LONGER_GAP = 0.4;
 
+/** Of few teeth, a gap by the other passages that is no shorter than this many periods less speaks against. */
+const NEARLY_AS_LONG = 0.15;
+const FEW_TEETH = 12;
+/** With fewer samples a tooth the heights of single passages are a matter of chance. */
+const FEW_SAMPLES = 5;
+/** Unless the teeth's own passages are this much more evenly spaced: between far teeth the signal is flat. */
+const MORE_EVEN = 0.6;
+
 /**
  * The tooth events by the polarity that the heights tell. Where they do not, both kinds of passage are tried: between
  * teeth the passage lies anywhere in the gap and cuts it in two, so the longer gap is the teeth's own.
@@ -84,16 +95,33 @@ const LONGER_GAP = 0.4;
 function readTeeth(signal: MeasuredSignal, pickup: Pickup, context: CrankContext): Reading {
   const read = (kind: 'falling' | 'rising', polarity: Polarity | null): Reading => {
     const passages = placePassages(pickup, kind);
+    const sampling = samplingOf(passages.at, PICKUP);
     const train = {
       timesS: mapped(passages.at, (at) => timeAt(signal.axis, at)),
       swing: passages.swing,
       height: passages.height,
       halfWidth: passages.halfWidth,
+      coarse: sampling.coarse,
     };
-    return { passages, train, result: findPattern(train.timesS, null, context.camEdgesS), polarity };
+    const result = sampling.tooFew ? TOO_FEW_SAMPLES : findPattern(train.timesS, null, context.camEdgesS);
+    return { passages, sampling, train, result, polarity };
   };
   const told = tellPolarity(pickup);
-  if (told) return read(told === 'normal' ? 'falling' : 'rising', told);
+  if (told) {
+    const [own, other] =
+      told === 'normal' ? (['falling', 'rising'] as const) : (['rising', 'falling'] as const);
+    const reading = read(own, told);
+    const { shortest } = reading.sampling;
+    if (shortest !== null && shortest < FEW_SAMPLES && !tellSteepness(pickup)) return unclear(reading);
+    // Few teeth, of which one may be weak: the passages between them must not make a wheel as well.
+    if (!reading.result.ok || reading.result.pattern.teeth > FEW_TEETH || tellSteepness(pickup))
+      return reading;
+    const against = read(other, null);
+    const asGood =
+      longestGap(against) > longestGap(reading) - NEARLY_AS_LONG &&
+      unevenness(reading) > MORE_EVEN * unevenness(against);
+    return asGood ? unclear(reading) : reading;
+  }
   const falling = read('falling', null);
   const rising = read('rising', null);
   const difference = longestGap(falling) - longestGap(rising);
@@ -104,10 +132,27 @@ function readTeeth(signal: MeasuredSignal, pickup: Pickup, context: CrankContext
   if (!falling.result.ok && !rising.result.ok) return falling;
   // An even wave without a gap, counted against a cam: both passages make the same wheel.
   const [one, other] = [falling.result, rising.result];
-  if (one.ok && other.ok && one.pattern.name === other.pattern.name) return falling;
-  const unclear =
-    'the teeth can be read from the falling and from the rising passages, and neither fits clearly';
-  return { ...falling, result: { ok: false, evenly: false, reason: unclear } };
+  if (one.ok && other.ok && one.pattern.name === other.pattern.name && one.pattern.gaps.length === 0)
+    return falling;
+  return unclear(falling);
+}
+
+const unclear = (reading: Reading): Reading => ({
+  ...reading,
+  polarity: null,
+  result: {
+    ok: false,
+    evenly: false,
+    reason: 'the teeth can be read from the falling and from the rising passages, and neither fits clearly',
+  },
+});
+
+/** How far (root mean square, in periods) intervals are from whole numbers of places. */
+function unevenness({ train }: Reading): number {
+  const { ratio } = layOnPlaces(train.timesS);
+  let squares = 0;
+  for (const r of ratio) squares += Math.min(0.25, (r - Math.max(1, Math.round(r))) ** 2);
+  return Math.sqrt(squares / Math.max(1, ratio.length));
 }
 
 /** Where only one reading makes a wheel, it must be an ordinary one, seen over three turns. */

@@ -19,15 +19,22 @@ export interface CrankSignalOptions {
   /** Part of the speed lost at each compression, 0 to 1. */
   readonly dip: number;
   readonly cylinders: number;
+  /** How much of `dip` each compression takes, in turn, from the first at `compressionDeg` on; empty: all the whole of it. */
+  readonly compressions: readonly number[];
+  /** Crank angle of the lowest speed of the first compression; null: anywhere, by the seed. */
+  readonly compressionDeg: number | null;
   /** Time constant of the rise from rest, seconds; 0: turning at speed from the start. */
   readonly spinUpS: number;
+  /** Moment at which the shaft begins to stop, seconds (it stands 0.3 s later); null: it does not. */
+  readonly stallS: number | null;
   /** Peak voltage of one tooth at `rpm`. */
   readonly peak: number;
   readonly inverted: boolean;
   /** Deviation of white noise, as a part of the tooth's peak. */
   readonly noise: number;
-  /** Height of 50 Hz hum, as a part of the tooth's peak. */
+  /** Height of mains hum, as a part of the tooth's peak, and its frequency. */
   readonly hum: number;
+  readonly humHz: number;
   /** Swing of tooth height over one turn, 0 to 1. */
   readonly runOut: number;
   readonly offset: number;
@@ -41,6 +48,8 @@ export interface CrankSignalOptions {
   readonly clip: number | null;
   /** Height of tooth number (from 1) as a part of its usual height. */
   readonly weak: { readonly tooth: number; readonly height: number } | null;
+  /** One tooth's swing: one period of a sine, or the slope of a bell-shaped flux. */
+  readonly shape: 'sine' | 'bell';
   readonly kind: 'pickup' | 'two-level';
 }
 
@@ -64,11 +73,15 @@ export const steady: CrankSignalOptions = {
   widthDeg: 6,
   dip: 0.08,
   cylinders: 4,
+  compressions: [],
+  compressionDeg: null,
   spinUpS: 0,
+  stallS: null,
   peak: 2,
   inverted: false,
   noise: 0,
   hum: 0,
+  humHz: 50,
   runOut: 0,
   offset: 0,
   drift: 0,
@@ -76,6 +89,7 @@ export const steady: CrankSignalOptions = {
   spikes: 0,
   clip: null,
   weak: null,
+  shape: 'sine',
   kind: 'pickup',
 };
 
@@ -86,6 +100,25 @@ export function dividedWheel(places: number, missing: readonly number[]): number
     .map((place) => (place * 360) / places);
 }
 
+/** Part by which the speed differs from its mean: a compression that takes less stays near the highest speed. */
+function swingOf(o: CrankSignalOptions, cycles: number, compression: number): number {
+  const half = o.dip / (2 - o.dip);
+  if (o.compressions.length === 0) return half * compression;
+  const count = o.compressions.length;
+  const taken = o.compressions[((Math.floor(cycles) % count) + count) % count]!;
+  return half * (1 - taken * (1 - compression));
+}
+
+/** One tooth's swing, highest 1, at `x` widths after its centre. */
+function sine(x: number): number {
+  return Math.sin(2 * Math.PI * x);
+}
+
+function bell(x: number): number {
+  const u = x / 0.15;
+  return u * Math.exp((1 - u * u) / 2);
+}
+
 export function crankSignal(options: CrankSignalOptions): CrankSignal {
   const o = options;
   const rng = random(o.seed);
@@ -93,13 +126,16 @@ export function crankSignal(options: CrankSignalOptions): CrankSignal {
   const stepS = 1 / o.sampleRateHz;
   const angles = new Float64Array(count + 1);
   const speeds = new Float64Array(count + 1);
-  const phase = rng.between(0, 720);
+  const anywhere = rng.between(0, 720);
+  const phase = o.compressionDeg === null ? anywhere : o.compressionDeg - 360 / o.cylinders;
   let angle = o.startDeg;
   for (let i = 0; i <= count; i += 1) {
     // The lowest speed is (1 - dip) of the highest.
-    const compression = Math.cos((2 * Math.PI * (angle - phase) * o.cylinders) / 720);
+    const cycles = ((angle - phase) * o.cylinders) / 720;
+    const compression = Math.cos(2 * Math.PI * cycles);
     const rise = o.spinUpS > 0 ? 1 - Math.exp(-(i * stepS) / o.spinUpS) : 1;
-    const speed = o.rpm * 6 * rise * (1 + (o.dip / (2 - o.dip)) * compression);
+    const stop = o.stallS === null ? 1 : Math.min(1, Math.max(0, 1 - (i * stepS - o.stallS) / 0.3));
+    const speed = o.rpm * 6 * rise * stop * (1 + swingOf(o, cycles, compression));
     angles[i] = angle;
     speeds[i] = speed;
     angle += speed * stepS;
@@ -107,6 +143,7 @@ export function crankSignal(options: CrankSignalOptions): CrankSignal {
 
   const samples = new Float64Array(count);
   const { teethDeg, widthDeg } = o;
+  const swingAt = o.shape === 'sine' ? sine : bell;
   const runOutPhase = rng.between(0, 360);
   let near = 0;
   for (let i = 0; i < count; i += 1) {
@@ -121,7 +158,7 @@ export function crankSignal(options: CrankSignalOptions): CrankSignal {
         off -= 360 * Math.round(off / 360);
         if (Math.abs(off) >= widthDeg / 2 || (teethDeg.length < 4 && t !== near && tooth === near)) continue;
         const height = o.weak?.tooth === tooth + 1 ? o.weak.height : 1;
-        value -= height * Math.sin((2 * Math.PI * off) / widthDeg);
+        value -= height * swingAt(off / widthDeg);
       }
       value *= (o.peak * speeds[i]!) / (o.rpm * 6);
       value *= 1 + o.runOut * Math.cos(((angles[i]! - runOutPhase) * Math.PI) / 180);
@@ -146,7 +183,7 @@ export function crankSignal(options: CrankSignalOptions): CrankSignal {
     samples[i]! +=
       o.offset +
       o.noise * o.peak * (o.noise > 0 ? rng.normal() : 0) +
-      o.hum * o.peak * Math.sin(2 * Math.PI * 50 * time + humPhase) +
+      o.hum * o.peak * Math.sin(2 * Math.PI * o.humHz * time + humPhase) +
       o.drift * Math.sin(2 * Math.PI * 0.7 * time + driftPhase);
   }
   for (let n = 0; n < o.spikes * o.durationS; n += 1) {

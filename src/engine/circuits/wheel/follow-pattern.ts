@@ -1,4 +1,4 @@
-import type { Laid } from './laid.ts';
+import type { Feature, Laid } from './laid.ts';
 import type { Pattern, PatternGap } from './pattern.ts';
 import { LEAST_MATCH } from './turn-length.ts';
 
@@ -27,6 +27,32 @@ function turnedTo(template: readonly PatternGap[], index: number, turn: number):
     size,
     after: (((after - mark) % turn) + turn) % turn,
   }));
+}
+
+/** Of two marks less than a turn apart the one with fewer like it, turn by turn, is no mark. */
+function oneATurn(features: readonly Feature[], turn: number): Feature[] {
+  const support = (list: readonly Feature[]) => {
+    const run = new Map<number, number>();
+    const total = new Map<number, number>();
+    for (const { place } of list) run.set(place, (run.get(place - turn) ?? 0) + 1);
+    for (const { place } of list.slice().reverse())
+      total.set(place, Math.max(run.get(place)!, total.get(place + turn) ?? 0));
+    return list.map(({ place }) => total.get(place)!);
+  };
+  let kept = features.slice();
+  for (;;) {
+    const like = support(kept);
+    const out = new Set<number>();
+    for (let k = 1; k < kept.length; k += 1) {
+      if (kept[k]!.place - kept[k - 1]!.place >= turn - 1) continue;
+      if (like[k]! <= like[k - 1]!) out.add(k);
+      if (like[k]! >= like[k - 1]!) out.add(k - 1);
+    }
+    if (out.size === 0) return kept;
+    // The weakest first: what stands beside it may be right.
+    const weakest = Math.min(...Array.from(out, (k) => like[k]!));
+    kept = kept.filter((_, k) => !(out.has(k) && like[k] === weakest));
+  }
 }
 
 export function follow(laid: Laid, turn: number, template: readonly PatternGap[]): Pattern | null {
@@ -61,9 +87,12 @@ export function follow(laid: Laid, turn: number, template: readonly PatternGap[]
   }
   const referenceSize = gaps.at(-1)!.size;
 
-  const candidates = features.filter(
+  const possible = features.filter(
     (f) => f.size === referenceSize && (gaps.length === 1 || fits(f.place + f.size, gaps) >= 0.6),
   );
+  const candidates = oneATurn(possible, turn);
+  // Lost teeth make gaps of their own; where they are many, the wheel may be another.
+  if (candidates.length < LEAST_MATCH * possible.length) return null;
   const marked = new Set(candidates.map((f) => f.place + f.size));
   const eventAt = (wanted: number) => {
     let low = 0;

@@ -1,21 +1,32 @@
-import { median } from '../../signal/statistics.ts';
+import { mapped } from '../../signal/mapped.ts';
+import { mean, median } from '../../signal/statistics.ts';
 import { FEWEST_TEETH, findAdded } from './added-tooth.ts';
 import { follow } from './follow-pattern.ts';
-import { commonTemplate, nearlyShorter } from './gap-template.ts';
+import { commonTemplates, nearlyShorter } from './gap-template.ts';
 import type { Feature, Laid } from './laid.ts';
 import type { PatternGap, PatternResult } from './pattern.ts';
 import { layOnPlaces, type Placed, SINGLE_MOST } from './places.ts';
+import { isOrdinaryDivision, isProved } from './proof.ts';
 import { smallestTurn } from './turn-length.ts';
 
 /** Teeth scattered more than this about their places (deviation, in periods) are no evenly divided wheel. */
 const MOST_SCATTER = 0.24;
-const MOST_GAPS_A_TURN = 6;
 /** Periods that shrink (or grow) by this much over three teeth, noise aside: the shaft comes from rest or to a stop. */
 const STARTING = 1.12;
-/** Fewer teeth a gap than this are few. */
-const FEW_TEETH = 16;
+/** Periods that grow by this much from tooth to tooth, twice in a row, at the end of the train. */
+const STOPPING = 1.15;
+/** Fewer teeth a gap than this are few: the speed may swing while a gap of two teeth passes. */
+const FEW_TEETH = 40;
+/** One reading of the gaps' lengths must fit better than another by this, in places. */
+const CLEARLY = 0.3;
+/** What each further size of gap costs, in places. */
+const UNLIKE = 0.25;
+/** Among fewer places than this an odd division is believed only of a gap that fits it well. */
+const FEW_PLACES = 20;
 /** With fewer gaps than this share of the intervals, the rest is an even division. */
 const MOST_GAPS = 0.2;
+/** Intervals this near to whole numbers of periods are places of an even division. */
+const WHOLE = 0.15;
 /** The pattern is searched in this many gaps; the whole train is then followed with it. */
 const SEARCHED_GAPS = 2000;
 
@@ -31,9 +42,15 @@ export function findGapPattern(times: Float64Array): PatternResult {
   const placed = trimmed(times, layOnPlaces(times));
   if (!(placed.scatter < MOST_SCATTER)) return no('the teeth follow no even division');
   let best: Found | null = null;
+  let second: Found | null = null;
   for (const sizes of sizings(placed)) {
     const found = findTurn(laidWith(placed, sizes));
-    if (found && (!best || found.rank > best.rank)) best = found;
+    if (!found) continue;
+    if (!best || found.rank > best.rank) [best, second] = [found, best];
+    else if (!second || found.rank > second.rank) second = found;
+  }
+  if (best && second && nameOf(second) !== nameOf(best) && best.rank - second.rank < CLEARLY) {
+    return no(`the gaps' lengths fit ${nameOf(best)} as well as ${nameOf(second)}`);
   }
   if (best) {
     const pattern = follow(resized(best), best.turn, best.template);
@@ -46,7 +63,8 @@ export function findGapPattern(times: Float64Array): PatternResult {
     return no('evenly spaced teeth without a gap: nothing marks the turn', true);
   }
   // Mostly single places: an evenly divided wheel, whose gaps were not seen often or well enough.
-  const evenly = gaps < MOST_GAPS * placed.ratio.length;
+  const wholes = placed.ratio.every((r) => Math.abs(r - Math.max(1, Math.round(r))) < WHOLE);
+  const evenly = gaps < MOST_GAPS * placed.ratio.length || wholes;
   if (gaps <= 1) {
     return no('no complete turn: fewer than two gaps with a tooth on both sides are in the capture', evenly);
   }
@@ -74,6 +92,13 @@ function trimmed(times: Float64Array, placed: Placed): Placed {
     const a = interval(to - 2);
     const b = interval(to - 3);
     if (a > SINGLE_MOST * b && b > starting * interval(to - 6)) to -= 1;
+    else break;
+  }
+  // At the very end nothing follows to tell a gap from a shaft that comes to rest: one long interval behind another.
+  while (to - from > 8) {
+    const a = interval(to - 2);
+    const b = interval(to - 3);
+    if (a > STOPPING * b && a < 1.8 * b && b > STOPPING * interval(to - 4)) to -= 1;
     else break;
   }
   if (from === 0 && to === times.length) return placed;
@@ -153,8 +178,8 @@ function resized({ laid, template, turn }: Found): Laid {
   return { placed, place, features };
 }
 
-/** Whether so many places are a whole number of degrees, or of half degrees, apart. */
-export const isOrdinaryDivision = (places: number) => 720 % places === 0;
+const nameOf = ({ turn, template }: Found) =>
+  [turn, ...template.map(({ size }) => size - 1).sort((a, b) => b - a)].join('-');
 
 interface Found {
   readonly laid: Laid;
@@ -168,20 +193,25 @@ function findTurn(laid: Laid): Found | null {
   const end = features.length < laid.features.length ? features.at(-1)!.place : (laid.place.at(-1) ?? 0);
   const turn = smallestTurn(features, end);
   if (turn === null) return null;
-  const template = commonTemplate(features, turn, end);
-  if (!template) return null;
-  const missing = template.reduce((sum, gap) => sum + gap.size - 1, 0);
-  // Several gaps seen over no more than one turn could be anything: only an ordinary division is believed.
-  const ordinary = isOrdinaryDivision(turn) && template.length <= 3;
-  if (template.length > 1 && !ordinary && end < 2 * turn + missing) return null;
-  if (template.length > 3 && (template.length > MOST_GAPS_A_TURN || end < 3 * turn)) return null;
-  if (turn - missing < FEWEST_TEETH || nearlyShorter(template, turn)) return null;
-  // Wheels are divided into a whole number of degrees or halves; this decides only where a gap's length is open.
-  const natural = isOrdinaryDivision(turn);
-  const nearness = median(
-    laid.features.slice(0, 200).map((f) => Math.abs(laid.placed.ratio[f.event - 1]! - f.size)),
+  const nearness = mean(
+    mapped(laid.features.slice(0, 200), (f) =>
+      Math.min(1, Math.abs(laid.placed.ratio[f.event - 1]! - f.size)),
+    ),
   )!;
+  const template = commonTemplates(features, turn, end).find((gaps) => {
+    const missing = gaps.reduce((sum, gap) => sum + gap.size - 1, 0);
+    return (
+      turn - missing >= FEWEST_TEETH && !nearlyShorter(gaps, turn) && isProved(features, turn, gaps, nearness)
+    );
+  });
+  if (!template) return null;
+  // More teeth that come doubled than gaps: what is missing is not what marks this wheel.
+  if (laid.placed.extras.length > 2 + 1.5 * laid.features.length) return null;
+  // Wheels are divided into a whole number of degrees, halves or quarters; this decides only where a gap's length is open.
+  const natural = isOrdinaryDivision(turn);
   // Among few teeth the speed swings while the gap passes: an odd division is believed only of a gap that fits it well.
-  if (!natural && turn < FEW_TEETH + 4 && nearness > 0.12) return null;
-  return { laid, turn, template, rank: (natural ? 1 : 0) - nearness };
+  if (!natural && turn < FEW_PLACES && nearness > 0.12) return null;
+  // Gaps of one size, or of two, are usual; the swing of speed makes equal gaps look different.
+  const sizes = new Set(template.map(({ size }) => size)).size;
+  return { laid, turn, template, rank: (natural ? 1 : 0) - nearness - UNLIKE * (sizes - 1) };
 }

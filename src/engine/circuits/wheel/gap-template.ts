@@ -17,8 +17,11 @@ export function nearlyShorter(template: readonly PatternGap[], turn: number): bo
   return least >= 6 && steps.every((step) => Math.abs(step - least * Math.round(step / least)) <= 2);
 }
 
-/** The commonest sequence of gaps over one turn, starting anywhere; `after` counts from the first tooth after its first gap. */
-export function commonTemplate(features: readonly Feature[], turn: number, end: number): PatternGap[] | null {
+/**
+ * Sequences of gaps over one turn, starting anywhere, the commonest first; of equally common ones that with fewer gaps.
+ * `after` counts from the first tooth after its first gap.
+ */
+export function commonTemplates(features: readonly Feature[], turn: number, end: number): PatternGap[][] {
   const counts = new Map<string, { count: number; gaps: PatternGap[] }>();
   for (let i = 0; i < features.length; i += 1) {
     const start = features[i]!.place;
@@ -35,9 +38,9 @@ export function commonTemplate(features: readonly Feature[], turn: number, end: 
     if (entry) entry.count += 1;
     else counts.set(key, { count: 1, gaps: asPlaces(turned, turn) });
   }
-  let best: { count: number; gaps: PatternGap[] } | null = null;
-  for (const entry of counts.values()) if (!best || entry.count > best.count) best = entry;
-  return best?.gaps ?? null;
+  return Array.from(counts.values())
+    .sort((a, b) => b.count - a.count || a.gaps.length - b.gaps.length)
+    .map(({ gaps }) => gaps);
 }
 
 function smallestRotation<T extends { size: number; step: number }>(gaps: T[]): T[] {

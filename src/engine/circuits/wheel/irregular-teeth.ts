@@ -10,6 +10,8 @@ const SHARE = 0.8;
 const MOST_TURNS = 60;
 /** With fewer places the speed swings too much from tooth to tooth to say where one is due. */
 const FEWEST_PLACES = 20;
+/** So many teeth on either side show what is usual around one. */
+const AROUND = 5;
 /** Neighbours are looked for within so many places. */
 const REACH = 4;
 
@@ -29,9 +31,10 @@ export function irregularTeeth(wheel: FoundWheel, gaps: Value): Irregular {
   const { pattern, timesS, height, halfWidth } = wheel;
   const { places, teeth } = pattern;
   const none = new Array<number>(teeth).fill(0);
-  if (places === null || pattern.marks.length < 3) {
-    const reason =
-      places === null
+  if (places === null || pattern.marks.length < 3 || wheel.coarse) {
+    const reason = wheel.coarse
+      ? 'too few samples fall on a tooth to compare single teeth'
+      : places === null
         ? 'the teeth stand unevenly by design'
         : 'fewer than two complete turns to compare teeth over';
     return { value: absent('irregular_teeth', '1', reason), offDeg: none };
@@ -48,6 +51,7 @@ export function irregularTeeth(wheel: FoundWheel, gaps: Value): Irregular {
     }
   }
 
+  const flux = height ? toothFlux(height, timesS, place, starts, most) : null;
   // The teeth beside a gap that is no whole number of periods long are shifted by the sensor: no measure for others.
   const ratio = typeof gaps.value === 'number' ? [gaps.value] : ((gaps.value ?? []) as readonly number[]);
   const trusted = ratio.length > 0 && ratio.every((value) => Math.abs(value - Math.round(value)) < 0.05);
@@ -96,30 +100,35 @@ export function irregularTeeth(wheel: FoundWheel, gaps: Value): Irregular {
     const heights: number[][] = Array.from({ length: teeth + 1 }, () => []);
     const offsets: number[][] = Array.from({ length: teeth + 1 }, () => []);
     const doubts: number[][] = Array.from({ length: teeth + 1 }, () => []);
+    const round = flux
+      ? runOutOf(flux, number, place, places!, teeth, (tooth) => flagged.has(tooth) || beside.has(tooth))
+      : null;
     for (let k = 1; k + 1 < most; k += 1) {
       const tooth = number[k]!;
       if (flagged.has(tooth) || beside.has(tooth)) continue;
       const near = neighbours(k);
-      const ratio = height ? heightRatio(k, near) : null;
+      const ratio = height ? heightRatio(k, near, round) : null;
       if (ratio !== null) heights[tooth]!.push(ratio);
       const off = offset(k, near);
       if (off === null) continue;
       offsets[tooth]!.push(off.degrees);
       doubts[tooth]!.push(off.doubt);
     }
+    // With few teeth nothing tells a swing of speed between two of them from a tooth of another height.
+    const swings = places! < FEWEST_PLACES ? speedSwings() : [];
     const heightNoise = pooledDeviation(heights);
     const offNoise = pooledDeviation(offsets);
-    // What all teeth are off by comes from the curve, from hum in step with the turn or the like, not from a tooth.
-    const usualOff =
-      3 * (median(offsets.filter((list) => list.length > 0).map((list) => Math.abs(mean(list)!))) ?? 0);
-    const usualHeight =
-      3 * (median(heights.filter((list) => list.length > 0).map((list) => Math.abs(mean(list)! - 1))) ?? 0);
+    // What the teeth around are off by comes from the curve, from run-out, from hum in step with the turn or the like.
+    const usualOff = usualAround(offsets, 0);
+    const usualHeight = usualAround(heights, 1);
     let worst: (IrregularTooth & { off: number }) | null = null;
     let badness = 1;
     for (let tooth = 1; tooth <= teeth; tooth += 1) {
-      const limit = Math.max(OFF_DEGREES, usualOff) + (median(doubts[tooth]!) ?? 0);
+      const limit = Math.max(OFF_DEGREES, usualOff(tooth)) + (median(doubts[tooth]!) ?? 0);
+      const low = Math.min(LOW, 1 - usualHeight(tooth)) - (swings[tooth] ?? 0);
+      const high = Math.max(HIGH, 1 + usualHeight(tooth)) + (swings[tooth] ?? 0);
       const ratio = consistent(heights[tooth]!, heightNoise, 1, (value) =>
-        value < Math.min(LOW, 1 - usualHeight) ? -1 : value > Math.max(HIGH, 1 + usualHeight) ? 1 : 0,
+        value < low ? -1 : value > high ? 1 : 0,
       );
       const off = consistent(offsets[tooth]!, offNoise, 0, (value) =>
         value < -limit ? -1 : value > limit ? 1 : 0,
@@ -139,6 +148,33 @@ export function irregularTeeth(wheel: FoundWheel, gaps: Value): Irregular {
       }
     }
     return worst;
+  }
+
+  /** Spread of the tooth periods about each tooth, as a part of their mean, over the turns: the middle one. */
+  function speedSwings(): number[] {
+    const lists: number[][] = Array.from({ length: teeth + 1 }, () => []);
+    for (let k = 2; k + 2 < most; k += 1) {
+      if (crossesBreak(k - 2, k + 2)) continue;
+      const periods = [k - 2, k - 1, k, k + 1].map(
+        (j) => (timesS[j + 1]! - timesS[j]!) / (place[j + 1]! - place[j]!),
+      );
+      lists[number[k]!]!.push((Math.max(...periods) - Math.min(...periods)) / mean(periods)!);
+    }
+    return lists.map((list) => median(list) ?? 0);
+  }
+
+  /** Three times the middle of what the teeth around each are off by. */
+  function usualAround(lists: readonly (readonly number[])[], usual: number): (tooth: number) => number {
+    const off = lists.map((list) => (list.length > 0 ? Math.abs(mean(list)! - usual) : Number.NaN));
+    const known = off.filter((value) => !Number.isNaN(value));
+    const everywhere = median(known) ?? 0;
+    return (tooth) => {
+      const around = Array.from(
+        { length: 2 * AROUND + 1 },
+        (_, i) => off[((tooth - 1 + i - AROUND + 2 * teeth) % teeth) + 1]!,
+      );
+      return 3 * Math.max(everywhere, median(around.filter((value) => !Number.isNaN(value))) ?? 0);
+    };
   }
 
   /** The two nearest teeth that are not flagged on either side, at most four places away. */
@@ -161,24 +197,49 @@ export function irregularTeeth(wheel: FoundWheel, gaps: Value): Irregular {
     return false;
   }
 
-  /** Over the mean of its neighbours, and over a cubic through them where they lie on a bend: the one nearer to 1. */
-  function heightRatio(k: number, near: readonly number[]): number | null {
+  /**
+   * Over the mean of its neighbours, over a cubic through them where they lie on a bend, both also with the speed taken
+   * out, and over the wheel's run-out: the one nearest to 1, for only a tooth that none of these explains is irregular.
+   */
+  function heightRatio(
+    k: number,
+    near: readonly number[],
+    round: ((k: number) => number | null) | null,
+  ): number | null {
     const usable = near.filter((j) => !beside.has(number[j]!) && halfWidth![j] === halfWidth![k]);
     if (!usable.some((j) => j < k) || !usable.some((j) => j > k)) return null;
-    const around = mean(usable.map((j) => height![j]!));
-    if (!around) return null;
-    const plain = height![k]! / around;
-    if (usable.length < 4) return plain;
-    const bent =
-      height![k]! /
+    const plain = overNeighbours(height!, k, usable);
+    if (plain === null) return null;
+    const found = [plain];
+    const level = usable.every((j) => !Number.isNaN(flux![j]!)) && !Number.isNaN(flux![k]!);
+    if (level) found.push(overNeighbours(flux!, k, usable) ?? plain);
+    if (usable.length === 4) {
+      const bent = overBend(height!, k, usable);
+      // With few teeth the two differ widely: what lies between them is no fault of the tooth.
+      if (places! < FEWEST_PLACES && Math.abs(bent - plain) > 0.1 && round === null) return null;
+      found.push(bent);
+      if (level) found.push(overBend(flux!, k, usable));
+    }
+    const due = round?.(k) ?? null;
+    if (due !== null && level) found.push(flux![k]! / due);
+    if (Math.min(...found) < 1 && Math.max(...found) > 1) return 1;
+    return found.reduce((best, ratio) => (Math.abs(ratio - 1) < Math.abs(best - 1) ? ratio : best));
+  }
+
+  function overNeighbours(of: Float64Array, k: number, near: readonly number[]): number | null {
+    const around = mean(near.map((j) => of[j]!));
+    return around ? of[k]! / around : null;
+  }
+
+  function overBend(of: Float64Array, k: number, near: readonly number[]): number {
+    return (
+      of[k]! /
       interpolated(
-        usable.map((j) => place[j]! - place[k]!),
-        usable.map((j) => height![j]!),
+        near.map((j) => place[j]! - place[k]!),
+        near.map((j) => of[j]!),
         0,
-      );
-    const nearer = Math.abs(bent - 1) < Math.abs(plain - 1) ? bent : plain;
-    // With few teeth the two differ widely: what lies between them is no fault of the tooth.
-    return places! < FEWEST_PLACES && Math.abs(bent - plain) > 0.1 ? null : nearer;
+      )
+    );
   }
 
   /**
@@ -209,7 +270,7 @@ export function irregularTeeth(wheel: FoundWheel, gaps: Value): Irregular {
 
 /**
  * Mean of the values when at least 80 % of them lie on one side (by `side`), at least two, and the mean is clear of
- * chance: four deviations of the mean away from `usual`. Else null.
+ * chance: five deviations of the mean away from `usual`. Else null.
  */
 function consistent(
   values: readonly number[],
@@ -227,7 +288,82 @@ function consistent(
   }
   if (Math.max(above, below) < SHARE * values.length) return null;
   const middle = mean(values)!;
-  return Math.abs(middle - usual) > (4 * noise) / Math.sqrt(values.length) ? middle : null;
+  // On the far side of a run-out a tooth has more noise than the others; two turns say little of their own.
+  const own = spread(values)!.sd * (values.length < 4 ? 1.5 : 1);
+  return Math.abs(middle - usual) > (5 * Math.max(noise, own)) / Math.sqrt(values.length) ? middle : null;
+}
+
+/** Height over the speed at each tooth (a pick-up's voltage is in proportion to it); NaN where that is not known. */
+function toothFlux(
+  height: Float64Array,
+  timesS: Float64Array,
+  place: Int32Array,
+  starts: ReadonlySet<number>,
+  most: number,
+): Float64Array {
+  const out = new Float64Array(most).fill(Number.NaN);
+  for (let k = 1; k + 1 < most; k += 1) {
+    if (starts.has(k) || starts.has(k + 1)) continue;
+    out[k] = (height[k]! * (timesS[k + 1]! - timesS[k - 1]!)) / (place[k + 1]! - place[k - 1]!);
+  }
+  return out;
+}
+
+/** Fewest teeth through which one wave a turn can be laid and still leave something to judge by. */
+const FEWEST_ROUND = 7;
+
+/**
+ * What run-out makes of each tooth: mean and one wave a turn through the middle flux of all other teeth. Null with too
+ * few teeth.
+ */
+function runOutOf(
+  flux: Float64Array,
+  number: Int32Array,
+  place: Int32Array,
+  places: number,
+  teeth: number,
+  leftOut: (tooth: number) => boolean,
+): ((k: number) => number | null) | null {
+  const lists: number[][] = Array.from({ length: teeth + 1 }, () => []);
+  const angle = new Float64Array(teeth + 1);
+  for (let k = 0; k < flux.length; k += 1) {
+    const tooth = number[k]!;
+    if (tooth < 1 || Number.isNaN(flux[k]!) || leftOut(tooth)) continue;
+    lists[tooth]!.push(flux[k]!);
+    angle[tooth] = (2 * Math.PI * place[k]!) / places;
+  }
+  const points = lists.flatMap((list, tooth) => (list.length > 0 ? [{ tooth, value: median(list)! }] : []));
+  if (points.length < FEWEST_ROUND + 1) return null;
+  const due = new Map<number, number>();
+  for (const left of points) {
+    const others = points.filter((point) => point !== left);
+    const wave = oneWave(
+      others.map(({ tooth }) => angle[tooth]!),
+      others.map(({ value }) => value),
+    );
+    if (wave) due.set(left.tooth, wave(angle[left.tooth]!));
+  }
+  return (k) => due.get(number[k]!) ?? null;
+}
+
+/** Least squares of a + b cos x + c sin x; null where the points do not settle it. */
+function oneWave(x: readonly number[], y: readonly number[]): ((at: number) => number) | null {
+  const rows = x.map((at) => [1, Math.cos(at), Math.sin(at)] as const);
+  const m = [0, 1, 2].map((i) => [
+    ...[0, 1, 2].map((j) => rows.reduce((sum, row) => sum + row[i]! * row[j]!, 0)),
+    rows.reduce((sum, row, k) => sum + row[i]! * y[k]!, 0),
+  ]);
+  for (let i = 0; i < 3; i += 1) {
+    const pivot = m[i]![i]!;
+    if (!(Math.abs(pivot) > 1e-9 * x.length)) return null;
+    for (let r = 0; r < 3; r += 1) {
+      if (r === i) continue;
+      const share = m[r]![i]! / pivot;
+      for (let c = i; c < 4; c += 1) m[r]![c]! -= share * m[i]![c]!;
+    }
+  }
+  const [a, b, c] = m.map((row, i) => row[3]! / row[i]!) as [number, number, number];
+  return (at) => a + b * Math.cos(at) + c * Math.sin(at);
 }
 
 /** Deviation of a tooth from turn to turn, over all teeth. */

@@ -7,6 +7,7 @@ import type { TwoLevels } from './two-levels.ts';
 const LONG = 1.5;
 /** The level after it belongs to the gap too when it is, as a rule, held this much longer than its like. */
 const ALSO_LONG = 1.25;
+const SURELY_SHORT = 1.1;
 
 /**
  * Which edge is the tooth event: the one that ends the gap's long level. Where the next level is longer than usual as
@@ -20,6 +21,9 @@ export function chooseEdge(levels: TwoLevels): { readonly rising: boolean } {
   // The end of a long low level is a rising edge, that of a long high level after it a falling one.
   const lowFirst = low.count > 0 && (high.count === 0 || low.longest >= high.longest);
   let rising = lowFirst ? !(low.after > ALSO_LONG) : high.after > ALSO_LONG;
+  // Only one level is ever held long, and what follows is not: the edge is told, whatever is made of it.
+  const told = lowFirst ? high.count === 0 : low.count === 0;
+  if (told && (lowFirst ? low.after : high.after) < SURELY_SHORT) return { rising };
   const made = findGapPattern(rising ? levels.risingS : levels.fallingS).ok;
   if (!made && findGapPattern(rising ? levels.fallingS : levels.risingS).ok) rising = !rising;
   else if (!made) rising = true;
@@ -54,7 +58,8 @@ function longHolds(levels: TwoLevels, level: 0 | 1): LongHolds {
     const ratio = overUsual(k);
     if (ratio <= LONG) continue;
     ratios.push(ratio);
-    after.push(overUsual(k + 1));
+    // A pulse long because the shaft is slow there has a long one before the gap as well.
+    after.push(Math.min(overUsual(k + 1), held[k + 1]! / held[k - 1]!));
   }
   return { count: ratios.length, longest: median(ratios) ?? 0, after: median(after) ?? 1 };
 }

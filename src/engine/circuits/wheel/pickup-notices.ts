@@ -1,20 +1,18 @@
 import type { Extent } from '../../signal/levels.ts';
-import { quantile } from '../../signal/statistics.ts';
 import { timeAt } from '../../signal/time.ts';
 import type { Evidence, Notice, Value } from '../../value.ts';
 import type { MeasuredSignal } from '../types.ts';
 import type { Passages } from './passages.ts';
+import { lowRateNotice, PICKUP, type Sampling } from './sample-rate.ts';
 
 /** What a two-wire trace says about its own recording: leads, clipping, sample rate, a floating input. */
 export function pickupNotices(
   signal: MeasuredSignal,
   span: Extent,
   passages: Passages,
+  sampling: Sampling,
   polarity: Value,
 ): Notice[] {
-  const all: Evidence[] = [
-    { from: timeAt(signal.axis, passages.at[0]!), to: timeAt(signal.axis, passages.at[passages.count - 1]!) },
-  ];
   const out: Notice[] = [];
   if (polarity.value === 'inverted') {
     out.push({
@@ -33,8 +31,8 @@ export function pickupNotices(
       evidence: clipped,
     });
   }
-  const low = lowRate(signal, passages);
-  if (low) out.push({ ...low, evidence: all });
+  const low = lowRateNotice(signal.axis, passages.at, sampling, PICKUP, 'the shortest tooth period');
+  if (low) out.push(low);
   return out;
 }
 
@@ -62,28 +60,4 @@ function clippedEvidence(signal: MeasuredSignal, span: Extent): Evidence[] {
     run = 0;
   }
   return places >= FLAT_PLACES ? out : [];
-}
-
-/** Fewest samples in the shortest tooth period for crossings to be placed well. */
-const FEWEST_SAMPLES = 8;
-
-function lowRate(signal: MeasuredSignal, passages: Passages): Omit<Notice, 'evidence'> | null {
-  const intervals = passages.at.slice(1).map((at, k) => at - passages.at[k]!);
-  const short = quantile(intervals, 0.05);
-  if (short === null || short >= FEWEST_SAMPLES) return null;
-  const step =
-    (timeAt(signal.axis, passages.at[passages.count - 1]!) - timeAt(signal.axis, passages.at[0]!)) /
-    (passages.at[passages.count - 1]! - passages.at[0]!);
-  const rate = roundUp((1 / step) * (20 / short));
-  return {
-    code: 'low-sample-rate',
-    severity: short < 5 ? 'bad' : 'watch',
-    text: `Only about ${short.toFixed(1)} samples fall on the shortest tooth period. Heights and tooth-to-tooth speed are coarse, and teeth may be missed. About ${rate.toLocaleString('en-US')} samples a second would do at this speed.`,
-  };
-}
-
-function roundUp(value: number): number {
-  const power = 10 ** Math.floor(Math.log10(value));
-  const lead = [1, 2, 5, 10].find((step) => step * power >= value) ?? 10;
-  return lead * power;
 }

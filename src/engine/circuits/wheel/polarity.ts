@@ -26,11 +26,9 @@ const LEAST_DIFFERENCE = 0.15;
  * @returns null when there is no gap and no difference in height: an even wave has no flanks to tell by.
  */
 export function tellPolarity(pickup: Pickup): Polarity | null {
-  const falling = middleHeight(pickup, pickup.falling);
-  const rising = middleHeight(pickup, pickup.rising);
-  if (falling === null || rising === null) return null;
-  if (falling > STEEPER * rising) return 'normal';
-  if (rising > STEEPER * falling) return 'inverted';
+  const steep = tellSteepness(pickup);
+  if (steep) return steep;
+  if (pickup.falling.length === 0 || pickup.rising.length === 0) return null;
   const falls = pickup.falling.subarray(0, 2 * MOST_PASSAGES);
   const rises = pickup.rising.subarray(0, 2 * MOST_PASSAGES);
   const betweenFalling = heightInGaps(pickup, falls, rises);
@@ -39,6 +37,15 @@ export function tellPolarity(pickup: Pickup): Polarity | null {
   const difference = (betweenRising ?? 1) - (betweenFalling ?? 1);
   if (Math.abs(difference) < LEAST_DIFFERENCE) return null;
   return difference > 0 ? 'normal' : 'inverted';
+}
+
+/** As `tellPolarity`, from the heights of all passages alone: where teeth stand far apart they differ clearly. */
+export function tellSteepness(pickup: Pickup): Polarity | null {
+  const falling = middleHeight(pickup, pickup.falling);
+  const rising = middleHeight(pickup, pickup.rising);
+  if (falling === null || rising === null) return null;
+  if (falling > STEEPER * rising) return 'normal';
+  return rising > STEEPER * falling ? 'inverted' : null;
 }
 
 function middleHeight(pickup: Pickup, kind: Int32Array): number | null {

@@ -57,8 +57,8 @@ const CHANGE_COST = 1.2;
  */
 export function trackScale(means: BlockMeans, noise: number): ScaleTrack | null {
   const { top } = means;
-  const whole = new Float64Array(top);
-  for (let j = Math.min(SAMPLED_BELOW, top - 1); j < top; j += 1) whole[j] = energyOf(means.level(j));
+  const whole = new Float64Array(top + 1);
+  for (let j = Math.min(SAMPLED_BELOW, top); j <= top; j += 1) whole[j] = energyOf(means.level(j));
   for (let j = 0; j < Math.min(SAMPLED_BELOW, top); j += 1) whole[j] = sampledEnergy(means, j);
   const dominant = dominantOctave(whole, noise);
   if (dominant === null) return null;

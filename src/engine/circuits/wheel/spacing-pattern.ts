@@ -25,7 +25,8 @@ export function findSpacingPattern(times: Float64Array): PatternResult {
   );
   for (let teeth = FEWEST; teeth <= Math.min(MOST_TEETH, Math.floor(intervals.length / 2)); teeth += 1) {
     const shares = sharesOfTurn(intervals, teeth);
-    if (shares.length < teeth + Math.max(3, teeth / 2)) break;
+    // Two turns are needed for a repetition, a third to prove that it was one.
+    if (shares.length < 2 * teeth + 1) break;
     if (largestStep(shares) < Math.log(LEAST_RATIO)) continue;
     const variation = deviation(shares);
     const scatter = laggedDeviation(shares, teeth);

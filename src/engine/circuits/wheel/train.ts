@@ -8,6 +8,8 @@ export interface ToothTrain {
   /** Answer of the tooth filter and its half-width, for comparing teeth. */
   readonly height: Float64Array | null;
   readonly halfWidth: Float64Array | null;
+  /** So few samples fall on a tooth that heights and places of single teeth mean nothing. */
+  readonly coarse: boolean;
 }
 
 /** A pattern joined with its times: what every turn-based value is computed from. */
@@ -18,6 +20,7 @@ export interface FoundWheel {
   readonly swing: Float64Array | null;
   readonly height: Float64Array | null;
   readonly halfWidth: Float64Array | null;
+  readonly coarse: boolean;
   /** Times of the reference marks. */
   readonly marksS: Float64Array;
 }
@@ -32,6 +35,7 @@ export function joinWheel(train: ToothTrain, pattern: Pattern): FoundWheel {
     swing: pick(train.swing),
     height: pick(train.height),
     halfWidth: pick(train.halfWidth),
+    coarse: train.coarse,
     marksS: mapped(pattern.marks, (position) => timesS[position]!),
   };
 }
@@ -47,8 +51,11 @@ export function toothNumbers(wheel: FoundWheel): Int32Array {
   const out = new Int32Array(degrees.length);
   if (marks.length === 0) return out;
   if (places === null) {
-    const first = marks[0]!;
-    for (let k = 0; k < out.length; k += 1) out[k] = ((((k - first) % teeth) + teeth) % teeth) + 1;
+    let mark = 0;
+    for (let k = 0; k < out.length; k += 1) {
+      while (mark + 1 < marks.length && marks[mark + 1]! <= k) mark += 1;
+      out[k] = ((((k - marks[mark]!) % teeth) + teeth) % teeth) + 1;
+    }
     return out;
   }
   const numberAt = new Int32Array(places);

@@ -1,7 +1,7 @@
 import { crossings } from '../../signal/crossings.ts';
-import { stateLevels } from '../../signal/levels.ts';
+import { extent, type StateLevels, stateLevels } from '../../signal/levels.ts';
 import { mapped } from '../../signal/mapped.ts';
-import { noiseDeviation } from '../../signal/statistics.ts';
+import { noiseDeviation, quantileSorted } from '../../signal/statistics.ts';
 import { timeAt } from '../../signal/time.ts';
 import type { Notice } from '../../value.ts';
 import type { MeasuredSignal } from '../types.ts';
@@ -13,6 +13,8 @@ export interface TwoLevels {
   readonly high: number;
   readonly edgesS: Float64Array;
   readonly rising: Uint8Array;
+  /** The edges' places among the samples; null where values hold until the next row. */
+  readonly places: Float64Array | null;
   readonly risingS: Float64Array;
   readonly fallingS: Float64Array;
   /** Time high from the first to the last rising edge, per cent; null with fewer than two rising edges. */
@@ -27,8 +29,15 @@ export interface NotTwoLevels {
 
 /** Dead band about the mesial level, as a share of the swing. */
 const DEAD_BAND = 0.4;
-/** Noise (deviation) above this share of the swing is averaged down before edges are looked for. */
-const MOST_NOISE = 0.06;
+/**
+ * Noise (deviation) above this share of the swing is damped before edges are looked for. From a level to the far side of
+ * the dead band it is 0.7 of the swing: seven deviations.
+ */
+const MOST_NOISE = 0.1;
+/** Two levels as clear as this are not smoothed: with few samples a pulse its own edges look like noise. */
+const CLEAR = 0.95;
+/** Otsu's ratio under which the mode of a level is a matter of chance. */
+const SHARP = 0.985;
 /** Otsu's ratio under which the trace has no two levels. */
 const LEAST_BIMODALITY = 0.8;
 /** Pulses shorter than this share of their like are disturbances. */
@@ -37,18 +46,26 @@ const GLITCH = 0.1;
 export function twoLevels(signal: MeasuredSignal): TwoLevels | NotTwoLevels {
   const { axis } = signal;
   const holds = axis.kind === 'uneven' && axis.holds;
-  const raw = stateLevels(signal.values);
+  const range = holds ? undefined : withoutSpikes(signal.values);
+  const raw = stateLevels(signal.values, range);
   if (!raw) return flat(signal);
   let values = signal.values;
   let levels = raw;
   if (!holds) {
     const noise = noiseDeviation(values) ?? 0;
     const share = noise / (raw.high - raw.low);
-    if (share > MOST_NOISE) {
-      values = runningMean(values, Math.min(63, 2 * Math.ceil((share / MOST_NOISE) ** 2 / 2) + 1));
-      levels = stateLevels(values) ?? raw;
+    if (range || (share > MOST_NOISE && raw.bimodality < CLEAR)) {
+      // The median takes spikes of one or two samples and leaves half of the noise; a mean takes what is too much then.
+      const left = 0.54 * share;
+      values = runningMedian5(values);
+      if (left > MOST_NOISE) {
+        values = runningMean(values, Math.min(63, 2 * Math.ceil((left / MOST_NOISE) ** 2 / 2) + 1));
+      }
+      levels = stateLevels(values, range) ?? raw;
     }
     if (levels.bimodality < LEAST_BIMODALITY) return flat(signal, true);
+    // Hum has its modes at its crests: where the levels are not sharp, the middle of each is meant.
+    if (levels.bimodality < SHARP) levels = middleLevels(values, levels);
   }
   const swing = levels.high - levels.low;
   const found = crossings(values, { level: levels.mesial, hysteresis: DEAD_BAND * swing, holds });
@@ -64,10 +81,59 @@ export function twoLevels(signal: MeasuredSignal): TwoLevels | NotTwoLevels {
     high: levels.high,
     edgesS,
     rising,
+    places: holds ? null : mapped(kept, (k) => found.at[k]!),
     risingS,
     fallingS: edgesS.filter((_, k) => rising[k] === 0),
     dutyPercent: duty(edgesS, rising),
   };
+}
+
+/** Median of the samples on either side of the middle, which then lies between them; twice. */
+function middleLevels(values: Float32Array, from: StateLevels): StateLevels {
+  const step = Math.max(1, Math.floor(values.length / 30_000));
+  const some = values.filter((value, i) => i % step === 0 && !Number.isNaN(value)).sort();
+  let { low, high, mesial } = from;
+  for (let round = 0; round < 2; round += 1) {
+    const split = some.findIndex((value) => value >= mesial);
+    if (split <= 0) break;
+    low = quantileSorted(some.subarray(0, split), 0.5);
+    high = quantileSorted(some.subarray(split), 0.5);
+    mesial = (low + high) / 2;
+  }
+  return { ...from, low, high, mesial };
+}
+
+/** Samples beyond these shares of all are spikes when they widen the span by more than a third. */
+const SPIKES = 0.003;
+const WIDENED = 1.33;
+
+/** The range of the samples without rare spikes, which would move the middle of the span; undefined where there are none. */
+function withoutSpikes(values: Float32Array): { low: number; high: number } | undefined {
+  const span = extent(values);
+  if (!span) return undefined;
+  const step = Math.max(1, Math.floor(values.length / 30_000));
+  const some = values.filter((value, i) => i % step === 0 && !Number.isNaN(value)).sort();
+  if (some.length === 0) return undefined;
+  const low = quantileSorted(some, SPIKES);
+  const high = quantileSorted(some, 1 - SPIKES);
+  return span.highest - span.lowest > WIDENED * (high - low) && high > low ? { low, high } : undefined;
+}
+
+/** Median of five; holes stay, and what lies beside them is left as it is. */
+function runningMedian5(values: Float32Array): Float32Array {
+  const out = values.slice();
+  for (let i = 2; i + 2 < values.length; i += 1) {
+    const a = values[i - 2]!;
+    const b = values[i - 1]!;
+    const c = values[i]!;
+    const d = values[i + 1]!;
+    const e = values[i + 2]!;
+    const low = Math.max(Math.min(a, b), Math.min(d, e));
+    const high = Math.min(Math.max(a, b), Math.max(d, e));
+    const middle = Math.max(Math.min(low, high), Math.min(c, Math.max(low, high)));
+    if (!Number.isNaN(middle)) out[i] = middle;
+  }
+  return out;
 }
 
 function runningMean(values: Float32Array, width: number): Float32Array {
