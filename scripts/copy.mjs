@@ -54,7 +54,14 @@ export async function startCopy({ dataDir, host, port: wanted, origin: given, du
   const services = await startServices({ dataDir, say, durable, instance });
   const address = `http://${printable(host)}:${port}`;
   const origin = given ?? address;
-  const env = productEnv({ services: services.env, dataDir: instance.dataDir, host, port, origin });
+  const env = productEnv({
+    services: services.env,
+    secret: instance.secrets.seal,
+    dataDir: instance.dataDir,
+    host,
+    port,
+    origin,
+  });
   const tool = (/** @type {string} */ name) =>
     recorded(instance, name)(process.execPath, ['--enable-source-maps', join(dist, 'tools', `${name}.js`)], {
       cwd: root,

@@ -36,7 +36,14 @@ async function main() {
   const services = await startServices({ dataDir, instance, say });
   const origin = process.env.GAPMARK_ORIGIN || `http://${host}:${port}`;
   const env = {
-    ...productEnv({ services: services.env, dataDir: instance.dataDir, host, port, origin }),
+    ...productEnv({
+      services: services.env,
+      secret: instance.secrets.seal,
+      dataDir: instance.dataDir,
+      host,
+      port,
+      origin,
+    }),
     NODE_ENV: 'development',
   };
 

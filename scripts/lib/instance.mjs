@@ -26,6 +26,7 @@ import { writeFileAtomically } from './write-file.mjs';
  * @property {string} databasePassword
  * @property {string} storeAccessKeyId
  * @property {string} storeSecretAccessKey
+ * @property {string} seal the product's own: GAPMARK_SECRET
  *
  * @typedef {object} Instance one GAPMARK_DATA folder, held by this process alone until `stop()`
  * @property {string} id random, kept in the folder
@@ -216,13 +217,17 @@ export function setAside(dataDir, say) {
 /** @param {string} dataDir @returns {Secrets} */
 function readOrMakeSecrets(dataDir) {
   const path = join(dataDir, 'secrets.json');
-  if (existsSync(path)) return JSON.parse(readFileSync(path, 'utf8'));
   const secret = () => randomBytes(24).toString('base64url');
+  const stored = existsSync(path) ? JSON.parse(readFileSync(path, 'utf8')) : {};
+  if (typeof stored.seal === 'string') return stored;
   const secrets = {
     databaseAdminPassword: secret(),
     databasePassword: secret(),
     storeAccessKeyId: randomBytes(10).toString('hex'),
     storeSecretAccessKey: secret(),
+    seal: secret(),
+    // A folder of an earlier version has all but the newest.
+    ...stored,
   };
   writeFileAtomically(path, `${JSON.stringify(secrets, null, 2)}\n`);
   return secrets;

@@ -3,10 +3,10 @@
 /**
  * The environment of the product's processes: little of ours, so that what happens to be set at this terminal (another
  * database, a profile of some cloud) does not leak into a copy, and every GAPMARK_ setting.
- * @param {{ services: Record<string, string>, dataDir: string, host: string, port: number, origin: string }} options
+ * @param {{ services: Record<string, string>, secret: string, dataDir: string, host: string, port: number, origin: string }} options
  * @returns {Record<string, string>}
  */
-export function productEnv({ services, dataDir, host, port, origin }) {
+export function productEnv({ services, secret, dataDir, host, port, origin }) {
   const settings = Object.entries(process.env).flatMap(([name, value]) =>
     name.startsWith('GAPMARK_') && value !== undefined ? [/** @type {const} */ ([name, value])] : [],
   );
@@ -17,6 +17,7 @@ export function productEnv({ services, dataDir, host, port, origin }) {
     TZ: 'UTC',
     NODE_ENV: 'production',
     GAPMARK_ENV: 'local',
+    GAPMARK_SECRET: secret,
     ...Object.fromEntries(settings),
     ...services,
     HOST: host,

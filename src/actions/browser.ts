@@ -1,10 +1,9 @@
 import type { ActionAPIContext } from 'astro:actions';
+import { type Browser, browserOfRequest } from '../server/session/browser.ts';
 
-/** Where a form came from: its address, and the cookies that its browser holds. */
-export const browserOf = ({ clientAddress, request }: ActionAPIContext) => ({
-  address: clientAddress,
-  cookieHeader: request.headers.get('cookie') ?? undefined,
-});
+/** Where a form came from. */
+export const browserOf = ({ clientAddress, request }: ActionAPIContext): Browser =>
+  browserOfRequest(request, clientAddress);
 
 /** A number of days from now as the end date that use cases take. */
 export const endAfter = (days: number | undefined): string | undefined =>

@@ -16,9 +16,13 @@ import { switchWorkshop } from '../server/session/switch-workshop.ts';
 import { changeRole } from '../server/workshop/change-role.ts';
 import { patchWorkshop } from '../server/workshop/patch-workshop.ts';
 import { browserOf, endAfter } from './browser.ts';
+import { ownerActions } from './owner.ts';
+import { peopleActions } from './people.ts';
 import { refusing } from './refusing.ts';
 
 export const server = {
+  ...peopleActions,
+  ...ownerActions,
   signUp: defineAction({
     accept: 'form',
     input: ACTION_INPUTS.signUp,
@@ -42,9 +46,11 @@ export const server = {
     accept: 'form',
     input: ACTION_INPUTS.signIn,
     handler: refusing(async ({ next, ...input }, context) => {
-      const { cookie } = await signIn({ ...input, ...browserOf(context) });
+      const joining = safeNext(next).startsWith('/invitation');
+      const { step, cookie } = await signIn({ ...input, joining, ...browserOf(context) });
       context.cookies.set(cookie.name, cookie.value, cookie.attributes);
-      return { redirectTo: safeNext(next) };
+      const onward = safeNext(next);
+      return { redirectTo: step === 'code' ? `/sign-in/code?next=${encodeURIComponent(onward)}` : onward };
     }),
   }),
   signOut: defineAction({

@@ -1,7 +1,18 @@
 import { z } from 'zod';
 import { id, text } from './areas/common.ts';
+import { webhookInput } from './areas/owner.ts';
+import {
+  acceptInput,
+  codeInput,
+  emailInput,
+  invitationInput,
+  MAIL_SWITCHES,
+  passwordInput,
+  resetInput,
+  withPassword,
+} from './areas/people.ts';
 import { answerInput, shareLinkInput } from './areas/sharing.ts';
-import { confirmInput, signInInput, signUpInput } from './areas/workshop.ts';
+import { auditDays, confirmInput, email, signInInput, signUpInput } from './areas/workshop.ts';
 import type { EndpointId } from './endpoints.ts';
 import { ROLES, SCOPES } from './roles.ts';
 
@@ -20,6 +31,29 @@ export const ACTIONS = {
   withdrawLink: 'shareLinks.delete',
   hideAnswer: 'answers.hide',
   answerShared: 'shared.answer',
+  signInCode: 'session.code',
+  askReset: 'session.askReset',
+  resetPassword: 'session.reset',
+  confirmEmail: 'session.confirmEmail',
+  invite: 'invitations.create',
+  withdrawInvitation: 'invitations.delete',
+  acceptInvitation: 'invitations.accept',
+  removePerson: 'people.remove',
+  leaveWorkshop: 'me.leave',
+  patchMe: 'me.patch',
+  changePassword: 'me.password',
+  changeEmail: 'me.email',
+  eraseMe: 'me.erase',
+  endSession: 'sessions.delete',
+  endOtherSessions: 'sessions.deleteOthers',
+  beginSecondStep: 'secondStep.begin',
+  confirmSecondStep: 'secondStep.confirm',
+  renewRecoveryCodes: 'secondStep.renewCodes',
+  endSecondStep: 'secondStep.end',
+  createWebhook: 'webhooks.create',
+  deleteWebhook: 'webhooks.delete',
+  endWorkshop: 'workshop.end',
+  keepWorkshop: 'workshop.keep',
 } as const satisfies Record<string, EndpointId>;
 
 export type ActionName = keyof typeof ACTIONS;
@@ -35,7 +69,12 @@ export const ACTION_INPUTS = {
   signIn: signInInput.extend({ next }),
   signOut: z.object({}),
   switchWorkshop: z.object({ workshopId: id, next }),
-  patchWorkshop: z.object({ name, timeZone: z.string().max(64), etag: z.string().max(40).optional() }),
+  patchWorkshop: z.object({
+    name,
+    timeZone: z.string().max(64),
+    auditDays: auditDays.optional(),
+    etag: z.string().max(40).optional(),
+  }),
   changeRole: z.object({ id, role: z.enum(ROLES) }),
   createToken: z.object({
     name,
@@ -53,4 +92,28 @@ export const ACTION_INPUTS = {
   withdrawLink: z.object({ id }),
   hideAnswer: z.object({ id }),
   answerShared: answerInput.omit({ mark: true }),
+  signInCode: codeInput.extend({ next }),
+  askReset: z.object({ email }),
+  resetPassword: resetInput,
+  confirmEmail: confirmInput,
+  invite: invitationInput,
+  withdrawInvitation: z.object({ id }),
+  acceptInvitation: acceptInput,
+  removePerson: z.object({ id }),
+  leaveWorkshop: z.object({}),
+  /** What is ticked comes; what is not is switched off. */
+  patchMe: z.object({ name, mails: z.array(z.enum(MAIL_SWITCHES)) }),
+  changePassword: passwordInput,
+  changeEmail: emailInput,
+  eraseMe: withPassword.extend({ name: text(80).optional() }),
+  endSession: z.object({ id: z.string().max(64) }),
+  endOtherSessions: z.object({}),
+  beginSecondStep: withPassword,
+  confirmSecondStep: codeInput,
+  renewRecoveryCodes: withPassword,
+  endSecondStep: withPassword,
+  createWebhook: webhookInput,
+  deleteWebhook: z.object({ id }),
+  endWorkshop: z.object({ name: z.string().max(80), password: z.string().min(1).max(200) }),
+  keepWorkshop: z.object({}),
 } as const satisfies Record<ActionName, z.AnyZodObject>;

@@ -39,6 +39,8 @@ export const THINGS = [
   'set',
   'exercise',
   'attempt',
+  'invitation',
+  'webhook',
 ] as const;
 export type Thing = (typeof THINGS)[number];
 

@@ -1,6 +1,8 @@
 import { captureEndpoints, uploadEndpoints } from './areas/captures.ts';
 import { libraryEndpoints } from './areas/library.ts';
 import { markEndpoints } from './areas/marks.ts';
+import { ownerEndpoints } from './areas/owner.ts';
+import { peopleEndpoints } from './areas/people.ts';
 import { sharingEndpoints } from './areas/sharing.ts';
 import { teachingEndpoints } from './areas/teaching.ts';
 import { workshopEndpoints } from './areas/workshop.ts';
@@ -15,6 +17,8 @@ export const ENDPOINTS = defineEndpoints({
   ...sharingEndpoints,
   ...libraryEndpoints,
   ...teachingEndpoints,
+  ...peopleEndpoints,
+  ...ownerEndpoints,
 });
 
 export type EndpointId = keyof typeof ENDPOINTS;

@@ -5,6 +5,11 @@ import type { AccessName } from './roles.ts';
 export const PAGES = {
   '/': 'open',
   '/sign-in': 'open',
+  '/sign-in/code': 'open',
+  '/reset': 'open',
+  '/reset/new': 'open',
+  '/invitation': 'open',
+  '/e-mail': 'open',
   '/sign-up': 'open',
   '/sign-up/confirm': 'open',
   '/refused': 'open',
@@ -31,6 +36,8 @@ export const PAGES = {
   '/teaching/sets/{id}': 'self',
   '/teaching/sets/{id}/edit': 'teach',
   '/workshop': 'self',
+  '/workshop/sign-in': 'self',
+  '/workshop/owner': 'seeManage',
 } as const satisfies Record<string, AccessName>;
 
 /** Pages of one thing: the access door opens it by `{id}` for this endpoint, so the role held in its workshop counts. */

@@ -52,6 +52,8 @@ export const ACCESS = {
   attempt: row('yes', 'yes', 'yes', 'yes', 'write'),
   manage: row('yes', 'no', 'no', 'no', 'manage'),
   seeManage: row('yes', 'no', 'no', 'no', 'manage'),
+  /** The owner's own doing: no token exports or ends a workshop. */
+  selfManage: row('yes', 'no', 'no', 'no', 'none'),
   self: row('yes', 'yes', 'yes', 'yes', 'read'),
   selfWrite: row('yes', 'yes', 'yes', 'yes', 'write'),
   /** Own sign-in matters: tokens cannot be made or changed with a token. */

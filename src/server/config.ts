@@ -23,6 +23,10 @@ const schema = z.object({
   /** Addresses of proxies whose forwarded headers are believed, comma separated. */
   GAPMARK_TRUSTED_PROXIES: z.string().default(''),
   GAPMARK_WEBHOOK_ALLOW: z.string().default(''),
+  /** What is sealed in the database is sealed with it. */
+  GAPMARK_SECRET: z.string().min(32, 'needs at least 32 characters').optional(),
+  /** Most bytes of originals that a workshop may keep; none: as many as the store takes. */
+  GAPMARK_WORKSHOP_LIMIT: z.coerce.number().int().positive().optional(),
   /** Largest upload in bytes. */
   GAPMARK_UPLOAD_LIMIT: z.coerce
     .number()
@@ -50,6 +54,9 @@ export interface Config {
   readonly trustedProxies: readonly string[];
   readonly webhookAllow: readonly string[];
   readonly uploadLimitBytes: number;
+  /** Seals what the server must read again: see seal.ts. */
+  readonly secret: string;
+  readonly workshopLimitBytes: number | null;
 }
 
 const list = (text: string) =>
@@ -71,6 +78,10 @@ export function readConfig(environment: Record<string, string | undefined>): Con
     throw new Error('GAPMARK_WEBHOOK_ALLOW is for tests and is refused in production.');
   if (e.GAPMARK_ENV === 'production' && e.GAPMARK_ORIGIN === undefined)
     throw new Error('GAPMARK_ORIGIN must be set in production: links in mail use it.');
+  if (e.GAPMARK_ENV === 'production' && e.GAPMARK_SECRET === undefined)
+    throw new Error(
+      'GAPMARK_SECRET must be set in production: it seals the keys of the second sign-in step.',
+    );
   return {
     databaseUrl: e.DATABASE_URL,
     store: {
@@ -89,6 +100,9 @@ export function readConfig(environment: Record<string, string | undefined>): Con
     trustedProxies: list(e.GAPMARK_TRUSTED_PROXIES),
     webhookAllow: list(e.GAPMARK_WEBHOOK_ALLOW),
     uploadLimitBytes: e.GAPMARK_UPLOAD_LIMIT,
+    // A copy on one's own machine has a secret already that no table holds.
+    secret: e.GAPMARK_SECRET ?? e.S3_SECRET_ACCESS_KEY,
+    workshopLimitBytes: e.GAPMARK_WORKSHOP_LIMIT ?? null,
   };
 }
 

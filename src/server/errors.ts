@@ -6,6 +6,14 @@ export const ERRORS = {
   no_file: { status: 400, message: 'No file came with the form. Send it in the field "file".' },
   not_signed_in: { status: 401, message: 'Sign in, or send a token, to do this.' },
   wrong_sign_in: { status: 401, message: 'E-mail and password do not belong together.' },
+  wrong_code: {
+    status: 401,
+    message: 'This code is not right, or was used before. Wait for the next one and try that.',
+  },
+  no_workshop: {
+    status: 403,
+    message: 'You belong to no workshop at present. Ask an owner for an invitation.',
+  },
   role_too_low: { status: 403, message: 'Your role in this workshop does not allow this.' },
   scope_too_low: { status: 403, message: 'This token may not do this.' },
   wrong_origin: { status: 403, message: 'This request came from another site and was refused.' },
@@ -23,6 +31,10 @@ export const ERRORS = {
     status: 410,
     message: 'This link has ended or was withdrawn. Ask the person who sent it for a new one.',
   },
+  step_ended: {
+    status: 410,
+    message: 'The password was given too long ago, or the code was tried too often. Sign in again.',
+  },
   stale: {
     status: 412,
     message: 'Somebody changed this since you opened it. Nothing of theirs was overwritten.',
@@ -30,6 +42,7 @@ export const ERRORS = {
   too_large: { status: 413, message: 'The file is larger than this way of sending takes. Nothing was kept.' },
   wrong_media_type: { status: 415, message: 'The body has a media type that this address does not take.' },
   wrong_host: { status: 421, message: 'This server does not answer for that host.' },
+  wrong_password: { status: 422, message: 'This is not your present password. Nothing was changed.' },
   invalid: { status: 422, message: 'Some fields need attention.' },
   too_many: { status: 429, message: 'That was tried too often. Wait a little and try again.' },
   internal: {

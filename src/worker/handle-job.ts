@@ -8,11 +8,14 @@ import { isServiceAway } from '../server/http/service-away.ts';
 import { giveUpComparisons } from '../server/library/give-up-comparisons.ts';
 import { runComparison } from '../server/library/run-comparison.ts';
 import { log } from '../server/log.ts';
+import { deliverMail, MailAway } from '../server/mail/deliver-mail.ts';
 import { failJob } from '../server/queue/fail-job.ts';
 import { giveBack } from '../server/queue/give-back.ts';
 import { captureJob, comparisonJob, QUEUES } from '../server/queue/names.ts';
 import { StaleAttempt } from '../server/queue/own-job.ts';
 import type { TakenJob } from '../server/queue/take-job.ts';
+import { sweepPeople } from '../server/workshop/sweep-people.ts';
+import { deliverWebhook } from '../server/workshop/webhooks/deliver-webhook.ts';
 import { remeasureCapture } from './remeasure-capture.ts';
 import { Stopping } from './running.ts';
 import { workOnCapture } from './work-on-capture.ts';
@@ -48,8 +51,12 @@ async function work(job: TakenJob, signal: AbortSignal): Promise<void> {
       await dropSamples(captureJob.parse(job.data).captureId);
       return endJob(job);
     case QUEUES.sweep:
-      log.info(await sweep(), 'swept');
+      log.info({ ...(await sweep()), ...(await sweepPeople()) }, 'swept');
       return endJob(job);
+    case QUEUES.mail:
+      return deliverMail(job);
+    case QUEUES.webhook:
+      return deliverWebhook(job);
   }
 }
 
@@ -60,6 +67,10 @@ async function settle(job: TakenJob, error: unknown, about: object): Promise<voi
     return endJob(job);
   }
   if (error instanceof Stopping) return giveBack(job, 0);
+  if (error instanceof MailAway) {
+    log.warn({ ...about, err: error.cause }, 'the mail server is away; the mail is kept');
+    return giveBack(job, restS(job.takes));
+  }
   if ((error instanceof ApiError && error.code === 'service_away') || isServiceAway(error)) {
     log.warn({ ...about, err: error }, 'a service is away; the job rests');
     return giveBack(job, restS(job.takes));

@@ -40,9 +40,9 @@ lock.session.on('lost', () => {
 });
 
 /** Looks for work again and again, and waits for notice of it in between. */
-async function lane(): Promise<void> {
+async function lane(order: readonly QueueName[]): Promise<void> {
   while (!stopping) {
-    const job = await next().catch((error: unknown) => {
+    const job = await next(order).catch((error: unknown) => {
       log.warn({ err: error }, 'no work could be taken');
       return null;
     });
@@ -56,17 +56,20 @@ async function lane(): Promise<void> {
   }
 }
 
-const ORDER: readonly QueueName[] = [
+/** What uses cores. */
+const HEAVY: readonly QueueName[] = [
   QUEUES.compare,
   QUEUES.read,
   QUEUES.dropSamples,
   QUEUES.sweep,
   QUEUES.remeasure,
 ];
+/** What waits for others has lanes of its own: a slow mail server holds up no capture, a slow webhook no mail. */
+const WAITING: readonly (readonly QueueName[])[] = [[QUEUES.mail], [QUEUES.webhook]];
 
-async function next() {
+async function next(order: readonly QueueName[]) {
   if (stopping || lock.number === null) return null;
-  for (const name of ORDER) {
+  for (const name of order) {
     const job = await takeJob(name, lock.number);
     if (job !== null) return job;
   }
@@ -134,4 +137,4 @@ warmThreads(LANES);
 log.info({ worker: lock.number }, 'worker ready');
 every(TAKE_BACK_MS, takeBack);
 every(HOUSEKEEPING_MS, housekeeping);
-await Promise.all(Array.from({ length: LANES }, lane));
+await Promise.all([...Array.from({ length: LANES }, () => HEAVY), ...WAITING].map(lane));

@@ -8,7 +8,7 @@ import { setTimeout as sleep } from 'node:timers/promises';
 import pg from 'pg';
 
 /**
- * Services of their own for tests that take something away: PostgreSQL and store behind gates that can be shut, and as many
+ * Services of their own for tests that take something away: PostgreSQL, store and mail server behind gates that can be shut, and as many
  * web and worker processes as a test wants, each of which it may kill.
  */
 const root = resolve(import.meta.dirname, '../..');
@@ -68,13 +68,17 @@ export interface Process {
 export interface Stage {
   readonly database: Gate;
   readonly store: Gate;
+  readonly mail: Gate;
+  /** Where caught mail is read. */
+  readonly mailPage: string;
   readonly pool: pg.Pool;
   web(): Promise<Process>;
   worker(): Promise<Process>;
   close(): Promise<void>;
 }
 
-export async function openStage(): Promise<Stage> {
+/** `settings`: more of the product's own. */
+export async function openStage(settings: Readonly<Record<string, string>> = {}): Promise<Stage> {
   const dataDir = mkdtempSync(join(tmpdir(), 'gapmark-faults-'));
   chmodSync(dataDir, 0o711);
   const services = start(['scripts/services.mjs', '--data', dataDir], process.env);
@@ -91,7 +95,8 @@ export async function openStage(): Promise<Stage> {
   const storeUrl = new URL(given.S3_ENDPOINT!);
   const database = new Gate(Number(direct.port));
   const store = new Gate(Number(storeUrl.port));
-  await Promise.all([database.open(), store.open()]);
+  const mail = new Gate(Number(new URL(given.SMTP_URL!).port));
+  await Promise.all([database.open(), store.open(), mail.open()]);
   const gated = new URL(given.DATABASE_URL!);
   gated.port = String(database.port);
   const env = {
@@ -99,6 +104,8 @@ export async function openStage(): Promise<Stage> {
     ...given,
     DATABASE_URL: gated.href,
     S3_ENDPOINT: `http://127.0.0.1:${store.port}`,
+    SMTP_URL: `smtp://127.0.0.1:${mail.port}`,
+    ...settings,
     NODE_ENV: 'production',
     HOST: '127.0.0.1',
   };
@@ -113,6 +120,8 @@ export async function openStage(): Promise<Stage> {
   return {
     database,
     store,
+    mail,
+    mailPage: given.MAIL_PAGE!,
     pool,
     async web() {
       const port = await freePort();
@@ -131,7 +140,7 @@ export async function openStage(): Promise<Stage> {
     async close() {
       await Promise.all(running.map((one) => one.end('SIGKILL')));
       await pool.end();
-      await Promise.all([database.shut(), store.shut()]);
+      await Promise.all([database.shut(), store.shut(), mail.shut()]);
       await services.end('SIGTERM');
       rmSync(dataDir, { recursive: true, force: true });
     },

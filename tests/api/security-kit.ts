@@ -173,9 +173,11 @@ export interface Things {
   readonly exerciseCapture: string;
   /** Somebody else's, with a text that waits to be judged. */
   readonly attempt: string;
+  readonly invitation: string;
+  readonly webhook: string;
 }
 
-/** A capture of two signals with a mark, two links, an answer, a known-good and a comparison, and a set with an exercise. */
+/** A capture of two signals with a mark, two links, an answer, a known-good and a comparison; an invitation and a webhook. */
 export async function makeThings(
   workshopId: string,
   maker: Person,
@@ -194,6 +196,8 @@ export async function makeThings(
     exercise: newId(),
     exerciseCapture: newId(),
     attempt: newId(),
+    invitation: newId(),
+    webhook: newId(),
   };
   const axis = JSON.stringify({ kind: 'even', startS: 0, stepS: 0.001, count: 1000 });
   await pool.query(
@@ -248,6 +252,16 @@ export async function makeThings(
     ],
   );
   await makeTeaching(workshopId, maker, things);
+  await pool.query(
+    `insert into invitation (id, workshop_id, email, role, secret_hash, invited_by, expires_at)
+     values ($1, $2, $3, 'learner', $4, $5, now() + interval '7 days')`,
+    [things.invitation, workshopId, `${things.invitation}@people.example`, sha256(newSecret()), maker.id],
+  );
+  await pool.query(
+    `insert into webhook (id, workshop_id, created_by, url, sealed_key, deleted_at)
+     values ($1, $2, $3, 'https://receiver.example/', '', null)`,
+    [things.webhook, workshopId, maker.id],
+  );
   return things;
 }
 

@@ -19,6 +19,9 @@ export const timeZone = z
     }
   }, 'is not a known time zone');
 
+/** Days that lines of the audit list are kept: a month to ten years. */
+export const auditDays = z.number().int().min(30).max(3660);
+
 export const signUpInput = z.object({
   name: text(80).pipe(z.string().min(1)),
   email,
@@ -41,6 +44,8 @@ export const me = z.object({
   workshop: z.object({ id, name: z.string(), timeZone: z.string() }),
   workshops: z.array(z.object({ id, name: z.string(), role })),
   via: z.enum(['session', 'token']),
+  /** Kinds of mail that this person has switched off. */
+  mutedMail: z.array(z.string()),
 });
 export type MeJson = z.infer<typeof me>;
 
@@ -96,10 +101,11 @@ export const workshopEndpoints = defineEndpoints({
   'session.signIn': {
     method: 'POST',
     path: '/sign-in',
-    summary: 'Sign in; sets the session cookie.',
+    summary:
+      'Sign in; sets the session cookie. Where a code is needed too, the answer says so: see /sign-in/code.',
     access: 'open',
     body: signInInput,
-    response: me,
+    response: z.union([me, z.object({ status: z.literal('code_needed') })]),
   },
   'session.signOut': {
     method: 'POST',
@@ -129,18 +135,21 @@ export const workshopEndpoints = defineEndpoints({
       timeZone: z.string(),
       storageBytes: z.number(),
       captures: z.number().int(),
+      limitBytes: z.number().nullable(),
+      auditDays: z.number().int(),
+      endsAt: isoTime.nullable(),
     }),
   },
   'workshop.patch': {
     method: 'PATCH',
     path: '/workshop',
-    summary: 'Change name or time zone.',
+    summary: 'Change name, time zone, or how many days the audit list is kept.',
     access: 'manage',
     body: z
-      .object({ name: text(80).pipe(z.string().min(1)), timeZone })
+      .object({ name: text(80).pipe(z.string().min(1)), timeZone, auditDays })
       .partial()
       .strict(),
-    response: z.object({ id, name: z.string(), timeZone: z.string() }),
+    response: z.object({ id, name: z.string(), timeZone: z.string(), auditDays: z.number().int() }),
     ifMatch: true,
   },
   'people.list': {

@@ -5,10 +5,12 @@ import { attemptDoor } from './doors/attempt.ts';
 import { captureDoor } from './doors/capture.ts';
 import { comparisonDoor } from './doors/comparison.ts';
 import { exerciseDoor } from './doors/exercise.ts';
+import { invitationDoor } from './doors/invitation.ts';
 import { knownGoodDoor } from './doors/known-good.ts';
 import { markDoor } from './doors/mark.ts';
 import { setDoor } from './doors/set.ts';
 import { shareLinkDoor } from './doors/share-link.ts';
+import { webhookDoor } from './doors/webhook.ts';
 
 /** The way in to each kind of thing. */
 export const OPENERS = {
@@ -21,6 +23,8 @@ export const OPENERS = {
   set: openThrough(setDoor),
   exercise: openThrough(exerciseDoor),
   attempt: openThrough(attemptDoor),
+  invitation: openThrough(invitationDoor),
+  webhook: openThrough(webhookDoor),
 } as const satisfies Record<Thing, unknown>;
 
 /** What each kind of thing opens as. */

@@ -120,6 +120,31 @@ export const limitSignUp = async (address: string): Promise<void> => {
   await take(signUps(), keyOf(addressGroup(address)));
 };
 
+const mailsToAccount = once(() => shared('mail-account', 3, 3600));
+const mailsFromAddress = once(() => shared('mail-address', 20, 3600));
+const invitations = once(() => shared('invitations', 60, 3600));
+
+/** Mails that anybody can ask for, such as a reset: twenty an hour from an address. */
+export const limitMailAsked = async (address: string): Promise<void> => {
+  await take(mailsFromAddress(), keyOf(addressGroup(address)));
+};
+
+/** Whether another such mail may go to this account: three an hour. Told to nobody, as it would tell who has an account. */
+export async function mayMailAccount(account: string): Promise<boolean> {
+  try {
+    await take(mailsToAccount(), keyOf(account));
+    return true;
+  } catch (thrown) {
+    if (thrown instanceof ApiError) return false;
+    throw thrown;
+  }
+}
+
+/** Sixty invitations an hour from one workshop. */
+export const limitInvitations = async (workshopId: string): Promise<void> => {
+  await take(invitations(), keyOf(workshopId));
+};
+
 const answersOfAddress = once(() => shared('answer-address', 10, 600));
 const answersOfLink = once(() => shared('answer-link', 60, 3600));
 const looks = once(() => shared('seen', 6, 60));

@@ -36,6 +36,8 @@ async function start(supervise: boolean): Promise<PgBoss> {
   await boss.createQueue(QUEUES.remeasure, { name: QUEUES.remeasure, policy: 'short', ...options });
   await boss.createQueue(QUEUES.dropSamples, { name: QUEUES.dropSamples, policy: 'short', ...options });
   await boss.createQueue(QUEUES.sweep, { name: QUEUES.sweep, policy: 'short', ...options });
+  await boss.createQueue(QUEUES.mail, { name: QUEUES.mail, ...options });
+  await boss.createQueue(QUEUES.webhook, { name: QUEUES.webhook, ...options });
   return boss;
 }
 

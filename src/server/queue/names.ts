@@ -12,6 +12,10 @@ export const QUEUES = {
   dropSamples: 'drop-samples',
   /** Remove what was deleted 30 days ago and uploads that were given up. */
   sweep: 'sweep',
+  /** Send a mail. */
+  mail: 'mail',
+  /** Tell an address of an event. */
+  webhook: 'webhook',
 } as const;
 
 export type QueueName = (typeof QUEUES)[keyof typeof QUEUES];
@@ -26,3 +30,7 @@ export type ReadJob = z.infer<typeof readJob>;
 export const comparisonJob = z.object({ comparisonId: z.string() });
 
 export const captureJob = z.object({ captureId: z.string() });
+
+export const mailJob = z.object({ mailId: z.string() });
+
+export const webhookJob = z.object({ deliveryId: z.string() });

@@ -5,13 +5,12 @@ import { pendingSignUp } from '../db/schema.ts';
 import { ApiError } from '../errors.ts';
 import { limitSignUp } from '../http/limits.ts';
 import { hashSecret } from '../ids.ts';
+import type { Browser } from './browser.ts';
 import { startSession } from './lucia.ts';
 import { makeAccount } from './make-account.ts';
 
-interface Confirmation {
+interface Confirmation extends Browser {
   readonly secret: string;
-  readonly address: string;
-  readonly cookieHeader: string | undefined;
 }
 
 /** Makes what was asked for in the sign-up of this link, once, and signs in. */
@@ -31,5 +30,5 @@ export async function confirmSignUp(given: Confirmation): Promise<{ personId: st
   });
   if (personId === null)
     throw new ApiError('conflict', { message: 'This address has an account by now. Sign in with it.' });
-  return { personId, cookie: await startSession(personId, given.cookieHeader) };
+  return { personId, cookie: await startSession(personId, given) };
 }

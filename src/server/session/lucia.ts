@@ -3,6 +3,7 @@ import { type Cookie, Lucia, TimeSpan } from 'lucia';
 import { db } from '../db/client.ts';
 import { person, session } from '../db/schema.ts';
 import { hashSecret, newSecret } from '../ids.ts';
+import type { Browser } from './browser.ts';
 import { cookieName, secureCookies } from './cookie-name.ts';
 
 interface PersonAttributes {
@@ -15,6 +16,7 @@ declare module 'lucia' {
   interface Register {
     Lucia: ReturnType<typeof makeLucia>;
     DatabaseUserAttributes: PersonAttributes;
+    DatabaseSessionAttributes: { address: string; agent: string };
   }
 }
 
@@ -40,10 +42,11 @@ export function lucia(): ReturnType<typeof makeLucia> {
 }
 
 /** Starts a session; gives its cookie. The session that this browser had ends. */
-export async function startSession(personId: string, earlierCookie: string | undefined): Promise<Cookie> {
-  await endSession(earlierCookie);
+export async function startSession(personId: string, browser: Browser): Promise<Cookie> {
+  await endSession(browser.cookieHeader);
   const secret = newSecret();
-  await lucia().createSession(personId, {}, { sessionId: hashSecret(secret) });
+  const { address, agent } = browser;
+  await lucia().createSession(personId, { address, agent }, { sessionId: hashSecret(secret) });
   return lucia().createSessionCookie(secret);
 }
 
@@ -52,4 +55,20 @@ export async function endSession(cookieHeader: string | undefined): Promise<Cook
   const secret = cookieHeader === undefined ? null : lucia().readSessionCookie(cookieHeader);
   if (secret !== null && secret !== '') await lucia().invalidateSession(hashSecret(secret));
   return lucia().createBlankSessionCookie();
+}
+
+/** Ends every session of a person; where one of them asked for it, that browser gets a new one. */
+export async function renewSession(personId: string, browser: Browser): Promise<Cookie> {
+  await lucia().invalidateUserSessions(personId);
+  return startSession(personId, browser);
+}
+
+/** The person whom a Cookie header names, whether or not they belong to a workshop now. */
+export async function personOfCookie(
+  cookieHeader: string | undefined,
+): Promise<{ id: string; email: string; name: string } | null> {
+  const secret = lucia().readSessionCookie(cookieHeader ?? '');
+  if (secret === null || !/^[\w-]{43}$/.test(secret)) return null;
+  const { user } = await lucia().validateSession(hashSecret(secret));
+  return user;
 }

@@ -17,13 +17,9 @@ export async function makeAccount(
   account: NewAccount,
   address: string,
 ): Promise<string | null> {
-  const { email, name, passwordHash } = account;
-  const [made] = await tx
-    .insert(person)
-    .values({ id: newId(), email, name, passwordHash })
-    .onConflictDoNothing({ target: person.email })
-    .returning({ id: person.id });
-  if (made === undefined) return null;
+  const made = await makePerson(tx, account);
+  if (made === null) return null;
+  const { name } = account;
   const workshopId = newId();
   await tx.insert(workshop).values({ id: workshopId, name: account.workshop });
   await tx.insert(membership).values({ personId: made.id, workshopId, role: 'owner' });
@@ -38,4 +34,17 @@ export async function makeAccount(
   };
   await recordAudit(entry, tx);
   return made.id;
+}
+
+/** Makes a person without a workshop. Null when the address has an account. */
+export async function makePerson(
+  tx: Executor,
+  { email, name, passwordHash }: Omit<NewAccount, 'workshop'>,
+): Promise<{ id: string } | null> {
+  const [made] = await tx
+    .insert(person)
+    .values({ id: newId(), email, name, passwordHash })
+    .onConflictDoNothing({ target: person.email })
+    .returning({ id: person.id });
+  return made ?? null;
 }

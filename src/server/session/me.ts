@@ -12,6 +12,7 @@ export async function me(personId: string, via: MeJson['via'], tokenWorkshopId?:
       id: person.id,
       name: person.name,
       email: person.email,
+      mutedMail: person.mutedMail,
       currentWorkshopId: person.currentWorkshopId,
       role: membership.role,
       workshop: { id: workshop.id, name: workshop.name, timeZone: workshop.timeZone },
@@ -34,6 +35,7 @@ export async function me(personId: string, via: MeJson['via'], tokenWorkshopId?:
     workshop: here.workshop,
     workshops: seen.map((row) => ({ id: row.workshop.id, name: row.workshop.name, role: row.role })),
     via,
+    mutedMail: here.mutedMail,
   };
 }
 

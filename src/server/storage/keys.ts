@@ -23,6 +23,8 @@ export const timesPyramidKey = (captureId: string, samplesVersion: number) =>
 
 /** Everything made from a capture's original, and its original. */
 export const capturePrefix = (captureId: string) => `captures/${captureId}/`;
+/** Everything that a known-good holds of its own. */
+export const knownGoodPrefix = (knownGoodId: string) => `known-goods/${knownGoodId}/`;
 export const originalKey = (captureId: string) => `captures/${captureId}/original`;
 
 /** The samples version that a key belongs to, or null for the original. */

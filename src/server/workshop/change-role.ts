@@ -5,19 +5,15 @@ import { db } from '../db/client.ts';
 import { membership, person } from '../db/schema.ts';
 import { ApiError } from '../errors.ts';
 import { auditedBy, recordAudit } from './audit.ts';
+import { lockOwners } from './end-membership.ts';
 
 /** Changes somebody's role in the current workshop. The last owner stays owner. */
 export async function changeRole(caller: PersonCaller, personId: string, role: Role, address: string) {
   return db().transaction(async (tx) => {
     // All owners are locked, so that two who step down at once do not leave a workshop without one.
-    const owners = await tx
-      .select({ personId: membership.personId })
-      .from(membership)
-      .where(and(eq(membership.workshopId, caller.workshopId), eq(membership.role, 'owner')))
-      .orderBy(membership.personId)
-      .for('update');
+    const owners = await lockOwners(tx, caller.workshopId);
     // The caller's own role is looked at again under the lock: it may have been taken away meanwhile.
-    if (!owners.some((owner) => owner.personId === caller.personId)) throw new ApiError('role_too_low');
+    if (!owners.includes(caller.personId)) throw new ApiError('role_too_low');
     const here = and(eq(membership.workshopId, caller.workshopId), eq(membership.personId, personId));
     const [held] = await tx.select().from(membership).where(here).for('update');
     if (held === undefined) throw new ApiError('not_found');

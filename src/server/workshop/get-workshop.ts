@@ -1,4 +1,5 @@
 import { and, count, eq, isNull, sum } from 'drizzle-orm';
+import { config } from '../config.ts';
 import { db } from '../db/client.ts';
 import { capture, workshop } from '../db/schema.ts';
 import { ApiError } from '../errors.ts';
@@ -11,6 +12,10 @@ export interface WorkshopSummary {
   /** Bytes of the originals, hidden captures included, since they still take room. */
   readonly storageBytes: number;
   readonly captures: number;
+  /** Most bytes of originals that it may keep; null: as many as the store takes. */
+  readonly limitBytes: number | null;
+  readonly auditDays: number;
+  readonly endsAt: Date | null;
 }
 
 /** A workshop and how much it holds. */
@@ -27,7 +32,7 @@ export async function getWorkshop(workshopId: string): Promise<WorkshopSummary> 
       .where(and(eq(capture.workshopId, workshopId), isNull(capture.deletedAt))),
   ]);
   if (found === undefined) throw new ApiError('not_found');
-  const { id, name, timeZone, edition } = found;
+  const { id, name, timeZone, edition, auditDays, endsAt } = found;
   return {
     id,
     name,
@@ -35,5 +40,8 @@ export async function getWorkshop(workshopId: string): Promise<WorkshopSummary> 
     edition,
     storageBytes: Number(bytes?.total ?? 0),
     captures: shown?.total ?? 0,
+    limitBytes: config().workshopLimitBytes,
+    auditDays,
+    endsAt,
   };
 }

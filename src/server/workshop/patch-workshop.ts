@@ -9,6 +9,7 @@ import { auditedBy, recordAudit } from './audit.ts';
 interface WorkshopPatch {
   readonly name?: string | undefined;
   readonly timeZone?: string | undefined;
+  readonly auditDays?: number | undefined;
 }
 
 /** Changes the current workshop's name or time zone. */
@@ -28,6 +29,7 @@ export async function patchWorkshop(
       .set({
         name: patch.name ?? now.name,
         timeZone: patch.timeZone ?? now.timeZone,
+        auditDays: patch.auditDays ?? now.auditDays,
         edition: sql`${workshop.edition} + 1`,
       })
       .where(and(mine, eq(workshop.edition, now.edition)))

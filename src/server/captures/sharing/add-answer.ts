@@ -2,12 +2,12 @@ import { count, eq } from 'drizzle-orm';
 import type { z } from 'zod';
 import type { answerInput } from '../../../contract/areas/sharing.ts';
 import type { ShareCaller } from '../../access.ts';
-import { db } from '../../db/client.ts';
 import { answer, shareLink } from '../../db/schema.ts';
 import { ApiError } from '../../errors.ts';
 import { limitAnswers } from '../../http/limits.ts';
 import { newId } from '../../ids.ts';
 import { mailAnswer } from '../../mail/answer-mail.ts';
+import { inTransaction } from '../../queue/transaction.ts';
 import { addMark } from '../marks/create-mark.ts';
 
 /** A link takes this many answers in all, hidden ones included. */
@@ -20,7 +20,8 @@ export async function addAnswer(
   address: string,
 ): Promise<{ id: string; name: string; text: string; createdAt: string }> {
   await limitAnswers(caller.linkId, address);
-  const given = await db().transaction(async (tx) => {
+  return inTransaction(async (transaction) => {
+    const { tx } = transaction;
     const [link] = await tx.select().from(shareLink).where(eq(shareLink.id, caller.linkId)).for('update');
     if (link === undefined || link.withdrawnAt !== null) throw new ApiError('link_ended');
     const [given] = await tx.select({ total: count() }).from(answer).where(eq(answer.shareLinkId, link.id));
@@ -40,9 +41,7 @@ export async function addAnswer(
       const author = { name: input.name, personId: null, answerId: id };
       await addMark(tx, link.captureId, author, input.mark, 'mark.');
     }
+    await mailAnswer(transaction, { linkId: caller.linkId, ...input });
     return { id, name: made.name, text: made.text, createdAt: made.createdAt.toISOString() };
   });
-  // Not waited for: the answer is kept, whatever becomes of the mail.
-  void mailAnswer({ linkId: caller.linkId, ...input }).catch(() => {});
-  return given;
 }

@@ -4,6 +4,7 @@ import { capture, captureSignal, measurement } from '../../db/schema.ts';
 import { completeJob, ownJob } from '../../queue/own-job.ts';
 import type { TakenJob } from '../../queue/take-job.ts';
 import { inTransaction } from '../../queue/transaction.ts';
+import { queueCaptureMeasured } from '../../workshop/webhooks/queue-webhooks.ts';
 import { Superseded } from './superseded.ts';
 
 export interface MeasuredResult {
@@ -21,7 +22,7 @@ export async function commitMeasured(
   { findings, signals }: MeasuredResult,
   background: boolean,
 ): Promise<void> {
-  await inTransaction(async ({ tx, queueDb }) => {
+  await inTransaction(async ({ tx, send, queueDb }) => {
     await ownJob(queueDb, job);
     const [row] = await tx
       .update(capture)
@@ -38,7 +39,7 @@ export async function commitMeasured(
           eq(capture.status, background ? 'ready' : 'measuring'),
         ),
       )
-      .returning({ id: capture.id });
+      .returning({ workshopId: capture.workshopId, title: capture.title });
     if (row === undefined)
       throw new Superseded(`Capture ${at.id} was changed or stopped while it was measured`);
     for (const { index, ...signal } of background ? [] : signals) {
@@ -60,6 +61,10 @@ export async function commitMeasured(
       .insert(measurement)
       .values({ captureId: at.id, ...values })
       .onConflictDoUpdate({ target: measurement.captureId, set: values });
+    if (!background) {
+      const about = { captureId: at.id, revision: at.revision, engine: findings.engine };
+      await queueCaptureMeasured({ tx, send }, { ...row, ...about });
+    }
     await completeJob(queueDb, job);
   });
 }

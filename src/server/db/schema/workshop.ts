@@ -1,3 +1,4 @@
+import { sql } from 'drizzle-orm';
 import {
   bigint,
   boolean,
@@ -9,6 +10,7 @@ import {
   text,
   uniqueIndex,
 } from 'drizzle-orm/pg-core';
+import type { MailSwitch } from '../../../contract/areas/people.ts';
 import type { Role, Scope } from '../../../contract/roles.ts';
 import { at, createdAt, edition } from './columns.ts';
 
@@ -17,6 +19,10 @@ export const workshop = pgTable('workshop', {
   name: text('name').notNull(),
   timeZone: text('time_zone').notNull().default('Etc/UTC'),
   demo: boolean('demo').notNull().default(false),
+  /** How long lines of the audit list are kept. */
+  auditDays: integer('audit_days').notNull().default(730),
+  /** An owner has asked to delete the workshop: everything in it goes then. */
+  endsAt: at('ends_at'),
   edition: edition(),
   createdAt: createdAt(),
 });
@@ -30,6 +36,8 @@ export const person = pgTable(
     name: text('name').notNull(),
     passwordHash: text('password_hash').notNull(),
     currentWorkshopId: text('current_workshop_id').references(() => workshop.id),
+    /** Kinds of mail that the person has switched off. */
+    mutedMail: text('muted_mail').array().$type<MailSwitch[]>().notNull().default(sql`'{}'::text[]`),
     createdAt: createdAt(),
   },
   (t) => [uniqueIndex('person_email').on(t.email)],
@@ -60,6 +68,9 @@ export const session = pgTable(
       .references(() => person.id),
     expiresAt: at('expires_at').notNull(),
     createdAt: createdAt(),
+    /** Where it began, and with which program, so that its person recognises it. */
+    address: text('address').notNull().default(''),
+    agent: text('agent').notNull().default(''),
   },
   (t) => [index('session_person').on(t.userId)],
 );

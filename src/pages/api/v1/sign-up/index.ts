@@ -1,10 +1,10 @@
 import { reply } from '../../../../server/http/reply.ts';
 import { route } from '../../../../server/http/route.ts';
+import { browserOfRequest } from '../../../../server/session/browser.ts';
 import { signUp } from '../../../../server/session/sign-up.ts';
 
 export const POST = route('session.signUp', async ({ body, address, request }) => {
-  const cookieHeader = request.headers.get('cookie') ?? undefined;
-  const { cookie } = await signUp({ ...body, address, cookieHeader });
+  const { cookie } = await signUp({ ...body, ...browserOfRequest(request, address) });
   if (cookie === null) return reply({ status: 'mail_sent' });
   return reply({ status: 'signed_in' }, { headers: { 'Set-Cookie': cookie.serialize() } });
 });
