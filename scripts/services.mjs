@@ -1,10 +1,12 @@
 // @ts-check
+import { join } from 'node:path';
 import { startMailCatcher } from '../docker-free-fakes/mail.mjs';
 import { startObjectStore } from '../docker-free-fakes/object-store.mjs';
 import { startPostgres } from '../docker-free-fakes/postgres.mjs';
 import { openInstance } from './lib/instance.mjs';
 import { runAlone } from './lib/run-alone.mjs';
 import { step, say as tellTerminal } from './lib/say.mjs';
+import { writeFileAtomically } from './lib/write-file.mjs';
 
 /**
  * @typedef {import('./lib/instance.mjs').Instance} Instance
@@ -37,9 +39,15 @@ export async function startServices({ dataDir, say = tellTerminal, durable = tru
           startMailCatcher(instance, { say }),
         ]),
     );
+    const env = { ...database.env, ...store.env, ...mail.env };
+    // For commands that are given while this copy runs.
+    writeFileAtomically(
+      join(instance.folder('run'), 'services.json'),
+      JSON.stringify({ ...env, GAPMARK_SECRET: instance.secrets.seal }),
+    );
     return {
       instance,
-      env: { ...database.env, ...store.env, ...mail.env },
+      env,
       mailPage: mail.page,
       programs: { database: database.program, store: store.program, mail: mail.program },
       stop: instance.stop,

@@ -8,6 +8,9 @@ const PROGRAMS = {
   'entry/main': 'src/entry/main.ts',
   'worker/main': 'src/worker/main.ts',
   'tools/migrate': 'src/server/db/migrate.ts',
+  'tools/backup': 'src/server/backup/backup-tool.ts',
+  'tools/restore': 'src/server/backup/restore-tool.ts',
+  'tools/reset-password': 'src/server/session/reset-by-hand.ts',
   'tools/seed-demo': 'src/server/workshop/seed-demo.ts',
 };
 

@@ -3,7 +3,7 @@ import { afterAll, beforeEach, describe, expect, it } from 'vitest';
 import { mailAbout, secretMailed } from '../kit/mailed-link.ts';
 import {
   cookieHeaders,
-  forgetRates,
+  forgetRatesOf,
   join,
   makePerson,
   makeThings,
@@ -14,12 +14,16 @@ import {
   origin,
   type Person,
   pool,
-  send,
+  type Sent,
+  send as sendFrom,
   sha256,
 } from './security-kit.ts';
 
 const PASSWORD = 'a quiet afternoon';
-beforeEach(forgetRates);
+const FROM = '127.0.0.2';
+beforeEach(() => forgetRatesOf(FROM));
+const send = (method: string, path: string, sent: Sent = {}) =>
+  sendFrom(method, path, { ...sent, from: FROM });
 afterAll(() => pool.end());
 
 const cheapHash = () => hash(PASSWORD, { memoryCost: 1024, timeCost: 1 });
@@ -156,7 +160,7 @@ describe('sessions', () => {
     expect(json.items).toHaveLength(3);
     expect(json.items.filter((one: { current: boolean }) => one.current)).toHaveLength(1);
     const bench = json.items.find((one: { agent: string }) => one.agent === 'Bench 1');
-    expect(bench.address).toBe('127.0.0.1');
+    expect(bench.address).toBe('127.0.0.2');
     const { rows } = await pool.query('select id from session where user_id = $1', [person.id]);
     for (const { id } of rows) expect(JSON.stringify(json)).not.toContain(id);
     const end = (id: string) => send('DELETE', `/api/v1/sessions/${id}`, { headers: person.browser });

@@ -3,17 +3,21 @@ import { afterAll, beforeEach, describe, expect, it } from 'vitest';
 import { totpCode } from '../../src/server/session/second-step/totp.ts';
 import {
   cookieHeaders,
-  forgetRates,
+  forgetRatesOf,
   join,
   makePerson,
   makeWorkshop,
   origin,
   pool,
-  send,
+  type Sent,
+  send as sendFrom,
 } from './security-kit.ts';
 
 const PASSWORD = 'a quiet afternoon';
-beforeEach(forgetRates);
+const FROM = '127.0.0.3';
+beforeEach(() => forgetRatesOf(FROM));
+const send = (method: string, path: string, sent: Sent = {}) =>
+  sendFrom(method, path, { ...sent, from: FROM });
 afterAll(() => pool.end());
 
 const post = (path: string, body: unknown, headers: Readonly<Record<string, string>> = { origin }) =>

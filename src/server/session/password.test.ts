@@ -15,6 +15,7 @@ describe('verifyPassword()', () => {
     expect(await verifyPassword(hash, 'right')).toBe(true);
     expect(await verifyPassword(hash, 'wrong')).toBe(false);
     expect(await verifyPassword(null, 'right')).toBe(false);
+    expect(await verifyPassword('none', 'right')).toBe(false);
   });
 });
 

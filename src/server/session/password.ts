@@ -36,7 +36,9 @@ let decoy: Promise<string> | undefined;
 /** Verifies a password; for an unknown account (no hash) the same work is done against a hash of nobody's password. */
 export async function verifyPassword(passwordHash: string | null, password: string): Promise<boolean> {
   decoy ??= hashPassword(newSecret());
-  const against = passwordHash ?? (await decoy);
+  // An erased account keeps no hash; what is none is never right.
+  const kept = passwordHash?.startsWith('$argon2') ? passwordHash : null;
+  const against = kept ?? (await decoy);
   const right = await inTurn(() => verify(against, password));
-  return right && passwordHash !== null;
+  return right && kept !== null;
 }
