@@ -118,8 +118,9 @@ describe('PUT /me/password', () => {
 
   it('needs the present password, and slows who tries it', async () => {
     const person = await makeAccount();
-    for (let tries = 0; tries < 6; tries += 1) expect((await put(person, 'guessed')).status).toBe(422);
-    expect((await put(person, PASSWORD)).status).toBe(429);
+    for (let tries = 0; tries < 5; tries += 1) expect((await put(person, 'guessed')).status).toBe(422);
+    const more = await Promise.all(Array.from({ length: 6 }, () => put(person, 'guessed')));
+    expect(more.filter(({ status }) => status === 429).length).toBeGreaterThanOrEqual(3);
     expect((await me(person.browser)).status).toBe(200);
   });
 });
@@ -160,7 +161,7 @@ describe('sessions', () => {
     expect(json.items).toHaveLength(3);
     expect(json.items.filter((one: { current: boolean }) => one.current)).toHaveLength(1);
     const bench = json.items.find((one: { agent: string }) => one.agent === 'Bench 1');
-    expect(bench.address).toBe('127.0.0.2');
+    expect(bench.address).toBe(FROM);
     const { rows } = await pool.query('select id from session where user_id = $1', [person.id]);
     for (const { id } of rows) expect(JSON.stringify(json)).not.toContain(id);
     const end = (id: string) => send('DELETE', `/api/v1/sessions/${id}`, { headers: person.browser });
