@@ -24,7 +24,7 @@ await runMain(
       async (env, instance) => {
         const done = await runTool('restore', [file], env);
         if (instance !== null) keepSecret(join(instance.dataDir, 'secrets.json'), String(done.secret));
-        return { ...done, hosted: instance === null };
+        return { objects: done.objects, secret: done.secret, hosted: instance === null };
       },
       {
         mayRun: false,
