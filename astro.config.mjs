@@ -16,7 +16,11 @@ function manualChunks(id) {
     )
   )
     return 'base';
-  if (/node_modules\/uplot\/|components\/plot\/(?!Keys|OverlayPlot|overlay-canvas|plain-degree)/.test(id))
+  if (
+    /node_modules\/uplot\/|components\/plot\/(?!Keys|SpanFigures|snap|OverlayPlot|overlay-canvas|plain-degree)/.test(
+      id,
+    )
+  )
     return 'plot';
   return undefined;
 }

@@ -30,6 +30,10 @@ const PATHS = {
   more: 'M4 12h2M11 12h2M18 12h2',
   bin: 'M4 7h16M9 7V4h6v3M6 7l1 14h10l1-14M10 11v6M14 11v6',
   person: 'M12 4a4 4 0 1 0 0 8a4 4 0 0 0 0-8zM4 21c0-8 16-8 16 0',
+  lanes: 'M3 4h18v7H3zM3 14h18v6H3zM6 8.5l3-2 3 2 3-2 3 2',
+  out: 'M12 3v12M7 10l5 5 5-5M3 16v5h18v-5',
+  up: 'M4 15l8-8 8 8',
+  flip: 'M3 12h18M12 3v6M9 6l3-3 3 3M12 21v-6M9 18l3 3 3-3',
   pause: 'M8 5v14M16 5v14',
 } as const;
 

@@ -6,7 +6,7 @@ const ShareDialog = lazy(() => import('../share/ShareDialog.tsx').then((m) => ({
 const KeepDialog = lazy(() => import('./KeepDialog.tsx').then((m) => ({ default: m.KeepDialog })));
 
 /** Share, compare, keep: on a phone share stays in sight and the rest folds into a menu. */
-export function CaptureActions({ capture }: { capture: CaptureJson }) {
+export function CaptureActions({ capture, onLanes }: { capture: CaptureJson; onLanes?: () => void }) {
   const [open, setOpen] = useState<'share' | 'keep' | null>(null);
   const close = () => setOpen(null);
   return (
@@ -16,6 +16,12 @@ export function CaptureActions({ capture }: { capture: CaptureJson }) {
           <Icon name="more" />
         </summary>
         <div>
+          {onLanes !== undefined && (
+            <button type="button" className="button" onClick={onLanes}>
+              <Icon name="lanes" small />
+              Lanes
+            </button>
+          )}
           <button type="button" className="button" onClick={() => setOpen('keep')}>
             <Icon name="keep" small />
             Keep as known-good

@@ -1,26 +1,34 @@
 import './capture.css';
-import { lazy, Suspense, useCallback, useMemo, useState } from 'react';
+import './lanes.css';
+import { lazy, Suspense, useCallback, useEffect, useMemo, useState } from 'react';
 import type { MarkJson } from '../../contract/areas/marks.ts';
 import { api, sentenceOf } from '../base/api.ts';
 import { Message } from '../base/Message.tsx';
 import { UndoBar } from '../base/UndoBar.tsx';
+import { type LaneSetup, PLAIN_SETUP } from '../plot/lane-setup.ts';
 import { type MarkPlace, Plot } from '../plot/Plot.tsx';
 import type { ScaleKind } from '../plot/ScaleBar.tsx';
 import type { PlotEvidence } from '../plot/types.ts';
+import { shownInAddress } from './address.ts';
 import { CaptureActions } from './CaptureActions.tsx';
 import { CaptureHead } from './CaptureHead.tsx';
 import { CaptureGone, CaptureSkeleton, CaptureState } from './CaptureState.tsx';
 import { FootLine } from './FootLine.tsx';
+import { LaneGrips } from './LaneGrips.tsx';
 import type { MarkDraft } from './MarkDialog.tsx';
 import { MarksList } from './MarksList.tsx';
 import { type Chosen, Numbers } from './Numbers.tsx';
 import { Sheet } from './Sheet.tsx';
+import { stepsOf } from './steps-of.ts';
 import { ThumbTools, TraceTools } from './TraceTools.tsx';
 import { isPending, useCapture, useFindings, useMarks } from './use-capture.ts';
-import { usePlotModel, useViewInAddress } from './usePlotModel.ts';
-import { bringIntoView, openingView, viewFromAddress } from './view-of.ts';
+import { useAddress } from './useAddress.ts';
+import { usePlotModel } from './usePlotModel.ts';
+import { bringIntoView, openingView } from './view-of.ts';
 
 const MarkDialog = lazy(() => import('./MarkDialog.tsx').then((m) => ({ default: m.MarkDialog })));
+
+const LanesDialog = lazy(() => import('./LanesDialog.tsx').then((m) => ({ default: m.LanesDialog })));
 
 const NO_MARKS: readonly MarkJson[] = [];
 const NARROW = '(width < 40rem)';
@@ -34,10 +42,15 @@ export function CaptureTrace({ id }: { id: string }) {
   const marksAnswer = useMarks(id, there);
   const marks = marksAnswer.data?.items ?? NO_MARKS;
   const wheel = wheelAnswer.data ?? null;
-  const wheelKnown =
-    capture?.status !== 'ready' || wheelAnswer.data !== undefined || wheelAnswer.error !== undefined;
+  const answered = (answer: { data?: unknown; error?: unknown }) =>
+    answer.data !== undefined || answer.error !== undefined;
+  // A turn of the wheel is where a capture opens; without a wheel it is a firing, which the numbers tell.
+  const opens =
+    capture?.status !== 'ready' || wheel !== null || (answered(wheelAnswer) && answered(measurements));
+  const all = useMemo(() => stepsOf(wheel, measurements.data), [wheel, measurements.data]);
 
-  const [hidden, setHidden] = useState<ReadonlySet<number>>(new Set());
+  const [setup, setSetup] = useState<LaneSetup>(PLAIN_SETUP);
+  const [lanesOpen, setLanesOpen] = useState(false);
   const [scale, setScale] = useState<ScaleKind>('degrees');
   const [chosen, setChosen] = useState<Chosen | null>(null);
   const [step, setStep] = useState(0);
@@ -47,13 +60,26 @@ export function CaptureTrace({ id }: { id: string }) {
   const [trouble, setTrouble] = useState<string | null>(null);
 
   const model = usePlotModel({
-    capture: there && wheelKnown ? capture : null,
+    capture: there && opens ? capture : null,
     address: `/api/v1/captures/${id}/window`,
     version: capture?.samplesVersion ?? null,
-    opening: () => viewFromAddress(location.search) ?? openingView(wheel, matchMedia(NARROW).matches),
+    opening: () =>
+      shownInAddress(location.search, []).view ?? openingView(all[0] ?? null, matchMedia(NARROW).matches),
     onRefused: () => void loaded.mutate(),
   });
-  useViewInAddress(model);
+  useAddress(model, setup);
+  useEffect(() => {
+    if (model === null) return;
+    const signals = model.capture.signals.map(({ index }) => index);
+    const { span, cursorS, setup: wanted } = shownInAddress(location.search, signals);
+    model.span.set(span);
+    model.cursorS.set(cursorS);
+    setSetup(wanted);
+  }, [model]);
+  useEffect(() => {
+    if (model !== null && !all.some(({ word }) => word === model.steps.get()?.word))
+      model.steps.set(all[0] ?? null);
+  }, [model, all]);
 
   const evidence = useMemo<PlotEvidence | null>(
     () =>
@@ -103,10 +129,21 @@ export function CaptureTrace({ id }: { id: string }) {
       <CaptureHead
         capture={capture}
         tab="trace"
-        hidden={hidden}
-        onToggle={(index) => setHidden((old) => toggled(old, index))}
-        actions={<CaptureActions capture={capture} />}
-        tools={model && <TraceTools model={model} wheel={wheel} scale={scale} onScale={setScale} />}
+        hidden={setup.hidden}
+        onToggle={(index) => setSetup((old) => ({ ...old, hidden: toggled(old.hidden, index) }))}
+        actions={<CaptureActions capture={capture} onLanes={() => setLanesOpen(true)} />}
+        tools={
+          model && (
+            <TraceTools
+              model={model}
+              wheel={wheel}
+              scale={scale}
+              onScale={setScale}
+              all={all}
+              onLanes={() => setLanesOpen(true)}
+            />
+          )
+        }
       />
       {!there && <CaptureState capture={capture} onChange={() => void loaded.mutate()} />}
       {there && model === null && <CaptureSkeleton />}
@@ -120,7 +157,8 @@ export function CaptureTrace({ id }: { id: string }) {
               marks={marks}
               chosenMark={chosenMark}
               evidence={evidence}
-              hidden={hidden}
+              setup={setup}
+              grips={(lanes) => <LaneGrips lanes={lanes} setup={setup} onSetup={setSetup} />}
               onPlace={place}
               onChooseMark={(markId) => {
                 const mark = marks.find((each) => each.id === markId);
@@ -167,11 +205,21 @@ export function CaptureTrace({ id }: { id: string }) {
               onMake={() => model.tool.set('mark')}
             />
           </Sheet>
-          <ThumbTools model={model} wheel={wheel} />
+          <ThumbTools model={model} />
         </div>
       )}
       {deleted !== null && <UndoBar text="Mark deleted" onUndo={undo} onGone={() => setDeleted(null)} />}
       <Suspense fallback={null}>
+        {lanesOpen && (
+          <LanesDialog
+            capture={capture}
+            etag={loaded.data?.etag ?? null}
+            setup={setup}
+            onSetup={setSetup}
+            onChanged={() => void loaded.mutate()}
+            onClose={() => setLanesOpen(false)}
+          />
+        )}
         {draft !== null && (
           <MarkDialog
             key={draft.id ?? 'new'}

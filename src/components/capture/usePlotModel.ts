@@ -43,25 +43,3 @@ export function usePlotModel({
   }, [key]);
   return model;
 }
-
-/** Keeps the address in step with the view once it rests, so that a copied link opens the same stretch. */
-export function useViewInAddress(model: PlotModel | null): void {
-  useEffect(() => {
-    if (model === null) return;
-    let timer: ReturnType<typeof setTimeout> | undefined;
-    const stop = model.view.subscribe(() => {
-      clearTimeout(timer);
-      timer = setTimeout(() => {
-        const { from, to } = model.view.get();
-        const url = new URL(location.href);
-        url.searchParams.set('from', String(Number(from.toPrecision(9))));
-        url.searchParams.set('to', String(Number(to.toPrecision(9))));
-        history.replaceState(history.state, '', url);
-      }, 500);
-    });
-    return () => {
-      stop();
-      clearTimeout(timer);
-    };
-  }, [model]);
-}

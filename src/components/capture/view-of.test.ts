@@ -1,24 +1,16 @@
 import { describe, expect, it } from 'vitest';
 import { createPlotModel } from '../plot/model.ts';
+import { turnsOf } from '../plot/steps.ts';
 import { evenWheel } from '../plot/testing.ts';
-import { bringIntoView, openingView, presetOf, samplesIn, viewFromAddress } from './view-of.ts';
+import { bringIntoView, openingView, presetOf, samplesIn } from './view-of.ts';
 
-const wheel = evenWheel({ rpm: 200, turns: 4, firstMarkS: 0.1 });
-
-describe('viewFromAddress()', () => {
-  it('takes a stretch and ignores what makes no sense', () => {
-    expect(viewFromAddress('?from=0.1&to=0.5')).toEqual({ from: 0.1, to: 0.5 });
-    expect(viewFromAddress('?from=-0.1&to=-0.05')).toEqual({ from: -0.1, to: -0.05 });
-    for (const search of ['', '?from=1', '?from=2&to=1', '?from=x&to=y'])
-      expect(viewFromAddress(search)).toBeNull();
-  });
-});
+const turns = turnsOf(evenWheel({ rpm: 200, turns: 4, firstMarkS: 0.1 }));
 
 describe('openingView() and presetOf()', () => {
   it('open at the second of several turns, and know it as a turn', () => {
-    const view = openingView(wheel, false)!;
+    const view = openingView(turns, false)!;
     expect(view.from).toBeCloseTo(0.37, 9);
-    expect(presetOf(view, { from: 0, to: 1.4 }, wheel)).toBe('turn');
+    expect(presetOf(view, { from: 0, to: 1.4 }, turns, 58)).toBe('step');
     expect(openingView(null, false)).toBeNull();
   });
 });

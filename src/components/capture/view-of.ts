@@ -1,51 +1,49 @@
 import type { CaptureJson } from '../../contract/areas/captures.ts';
 import type { PlotModel } from '../plot/model.ts';
-import { showTurn, turnInView } from '../plot/plot-keys.ts';
-import type { PlotWheel, View } from '../plot/types.ts';
+import { type Steps, showStep, stepInView } from '../plot/steps.ts';
+import type { View } from '../plot/types.ts';
 import { viewAround } from '../plot/view.ts';
 
-/** The view that the address asks for; null without one or with one that makes no sense. */
-export function viewFromAddress(search: string): View | null {
-  const query = new URLSearchParams(search);
-  const from = Number(query.get('from') ?? Number.NaN);
-  const to = Number(query.get('to') ?? Number.NaN);
-  return Number.isFinite(from) && Number.isFinite(to) && from < to ? { from, to } : null;
+/** Where a capture opens: at one step where something repeats (the second when there are several), else all of it. */
+export function openingView(steps: Steps | null, narrow: boolean): View | null {
+  if (steps === null) return null;
+  const stretch = steps.stretches[steps.stretches.length > 2 ? 1 : 0];
+  if (stretch === undefined) return null;
+  const length = stretch.to - stretch.from;
+  // A phone shows the first two thirds of a turn: its teeth would touch.
+  const to =
+    narrow && steps.word === 'Turn' ? stretch.from + length * 0.62 : stretch.to + length * steps.margin;
+  return { from: stretch.from - length * (narrow ? 0.04 : steps.margin), to };
 }
 
-/** Where a capture opens: at one turn where a wheel is known (the second when there are three or more), else all of it. */
-export function openingView(wheel: PlotWheel | null, narrow: boolean): View | null {
-  if (wheel === null || wheel.marksS.length < 2) return null;
-  const turn = wheel.marksS.length > 3 ? 1 : 0;
-  const from = wheel.marksS[turn]!;
-  const to = wheel.marksS[turn + 1]!;
-  const length = to - from;
-  return narrow
-    ? { from: from - length * 0.04, to: from + length * 0.62 }
-    : { from: from - length * 0.1, to: to + length * 0.1 };
-}
-
-export type Preset = 'whole' | 'turn' | 'tooth';
+export type Preset = 'whole' | 'step' | 'tooth';
 
 /** Which of the set views is shown, roughly; null in between. */
-export function presetOf(view: View, whole: View, wheel: PlotWheel | null): Preset | null {
+export function presetOf(
+  view: View,
+  whole: View,
+  steps: Steps | null,
+  teethPerTurn: number | null,
+): Preset | null {
   const length = view.to - view.from;
   if (length >= (whole.to - whole.from) * 0.999) return 'whole';
-  if (wheel === null || wheel.marksS.length < 2) return null;
-  const turn = (wheel.marksS[wheel.marksS.length - 1]! - wheel.marksS[0]!) / (wheel.marksS.length - 1);
-  if (length > turn * 0.6 && length < turn * 1.5) return 'turn';
-  if (length < (turn / wheel.teethPerTurn) * 6) return 'tooth';
+  if (steps === null || steps.stretches.length === 0) return null;
+  const step = steps.stretches.reduce((sum, { from, to }) => sum + to - from, 0) / steps.stretches.length;
+  if (length > step * 0.6 && length < step * (1.4 + 2 * steps.margin)) return 'step';
+  if (teethPerTurn !== null && length < (step / teethPerTurn) * 6) return 'tooth';
   return null;
 }
 
-export function showPreset(preset: Preset, model: PlotModel, wheel: PlotWheel | null): void {
+export function showPreset(preset: Preset, model: PlotModel, teethPerTurn: number | null): void {
   if (preset === 'whole') model.show(model.bounds.whole);
-  const turn = turnInView(model, wheel);
-  if (wheel === null || turn === null) return;
-  if (preset === 'turn') showTurn(model, wheel, turn);
-  if (preset === 'tooth') {
+  const step = stepInView(model);
+  const stretch = step === null ? undefined : model.steps.get()?.stretches[step];
+  if (step === null || stretch === undefined) return;
+  if (preset === 'step') showStep(model, step);
+  if (preset === 'tooth' && teethPerTurn !== null) {
     const { from, to } = model.view.get();
     const middle = (from + to) / 2;
-    const pitch = (wheel.marksS[turn + 1]! - wheel.marksS[turn]!) / wheel.teethPerTurn;
+    const pitch = (stretch.to - stretch.from) / teethPerTurn;
     model.show({ from: middle - 1.5 * pitch, to: middle + 1.5 * pitch });
   }
 }

@@ -18,6 +18,7 @@ const samples = (times: number[], values: number[], holds = false): DecodedWindo
   count: times.length,
   samplesVersion: 1,
   holds,
+  even: true,
   times: Float64Array.from(times),
   signals: new Map([[0, Float32Array.from(values)]]),
 });

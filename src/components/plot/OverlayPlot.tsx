@@ -81,6 +81,7 @@ export function OverlayPlot({ axis, data, signal, parts, summary }: OverlayPlotP
     top: 0,
     height,
     ...range,
+    inverted: false,
   };
   const scale =
     axis === 'deg' ? plainDegreeScale(view, Math.max(width, 1)) : timeScale(view, Math.max(width, 1));

@@ -1,11 +1,22 @@
 import 'uplot/dist/uPlot.min.css';
 import './plot.css';
-import { type KeyboardEvent, lazy, Suspense, useCallback, useEffect, useId, useMemo, useState } from 'react';
+import {
+  type KeyboardEvent,
+  lazy,
+  type ReactNode,
+  Suspense,
+  useCallback,
+  useEffect,
+  useId,
+  useMemo,
+  useState,
+} from 'react';
 import { circuitWords } from '../base/circuits.ts';
 import { Cursor } from './Cursor.tsx';
 import { dashes } from './dashes.ts';
 import { Gutter } from './Gutter.tsx';
-import { type LaneLine, laneAtY, layLanes, stackHeight, valueAtY } from './lanes.ts';
+import { type LaneSetup, PLAIN_SETUP, shownIn } from './lane-setup.ts';
+import { type Lane, type LaneLine, laneAtY, layLanes, stackHeight, valueAtY } from './lanes.ts';
 import { Balloons } from './Marks.tsx';
 import { placeMarks } from './mark-layout.ts';
 import type { PlotModel } from './model.ts';
@@ -13,7 +24,7 @@ import { Overlay } from './Overlay.tsx';
 import { PlotSummary } from './PlotSummary.tsx';
 import { actOnKey } from './plot-keys.ts';
 import { ScaleBar, type ScaleKind } from './ScaleBar.tsx';
-import { SpanFigures, SpanHandles } from './Span.tsx';
+import { SpanHandles } from './Span.tsx';
 import { Strip } from './Strip.tsx';
 import { nearestValue } from './span-statistics.ts';
 import { Trace } from './Trace.tsx';
@@ -22,6 +33,7 @@ import { type Placed, useLaneGestures } from './useLaneGestures.ts';
 import { useSize } from './useSize.ts';
 import { useStore } from './useStore.ts';
 
+const SpanFigures = lazy(() => import('./SpanFigures.tsx').then((m) => ({ default: m.SpanFigures })));
 const KeysDialog = lazy(() => import('./KeysDialog.tsx').then((m) => ({ default: m.KeysDialog })));
 
 /** A place on the trace that a person chose for a mark, in the trace's own time and value. */
@@ -40,8 +52,9 @@ export interface PlotProps {
   marks?: readonly PlotMark[];
   chosenMark?: string | null;
   evidence?: PlotEvidence | null;
-  /** Indices of signals whose lanes are hidden. */
-  hidden?: ReadonlySet<number>;
+  setup?: LaneSetup;
+  /** Between and over the lanes, at the top left of the stack: what sets their heights. */
+  grips?: (lanes: readonly Lane[]) => ReactNode;
   onPlace?: (place: MarkPlace) => void;
   onChooseMark?: (id: string) => void;
   /** Called once when the first trace stands. */
@@ -49,7 +62,6 @@ export interface PlotProps {
 }
 
 const NO_MARKS: readonly PlotMark[] = [];
-const NONE_HIDDEN: ReadonlySet<number> = new Set();
 const NARROW_PX = 640;
 
 /** Lanes on one time axis with the scale above and the whole capture below. */
@@ -60,7 +72,7 @@ export function Plot(props: PlotProps) {
     scale,
     evidence = null,
     marks = NO_MARKS,
-    hidden = NONE_HIDDEN,
+    setup = PLAIN_SETUP,
     onPlace,
     onDrawn,
   } = props;
@@ -72,23 +84,23 @@ export function Plot(props: PlotProps) {
   const loaded = useStore(model.loader.state);
   const view = useStore(model.view);
   const tool = useStore(model.tool);
+  const span = useStore(model.span);
   const { overview } = loaded.cache;
   const narrow = outerSize.width > 0 && outerSize.width < NARROW_PX;
   const width = stageSize.width;
 
   const lines = useMemo<LaneLine[]>(() => {
     const dash = dashes(model.capture.signals.map((signal) => signal.circuit));
-    return model.capture.signals
-      .map((signal, place) => ({
-        signal,
-        role: signal.plain ? 'ink' : circuitWords(signal.circuit).role,
-        dash: signal.plain ? [] : (dash[place] ?? []),
-      }))
-      .filter(({ signal }) => !hidden.has(signal.index));
-  }, [model, hidden]);
+    const places = new Map(model.capture.signals.map(({ index }, place) => [index, place]));
+    return shownIn(model.capture.signals, setup).map((signal) => ({
+      signal,
+      role: signal.plain ? 'ink' : circuitWords(signal.circuit).role,
+      dash: signal.plain ? [] : (dash[places.get(signal.index) ?? 0] ?? []),
+    }));
+  }, [model, setup]);
   const lanes = useMemo(
-    () => layLanes(lines, frameSize.height, overview),
-    [lines, frameSize.height, overview],
+    () => layLanes(lines, frameSize.height, overview, setup),
+    [lines, frameSize.height, overview, setup],
   );
   const height = stackHeight(lanes);
   const placed = placeMarks(marks, lanes, view, width);
@@ -126,7 +138,7 @@ export function Plot(props: PlotProps) {
     if (event.ctrlKey || event.metaKey || event.altKey || event.defaultPrevented) return;
     if ((event.target as HTMLElement).closest('button, input, textarea, dialog') !== null) return;
     const actions = { mark: markHere, help: () => setHelp(true) };
-    if (actOnKey(event.key, event.shiftKey, model, wheel, actions)) event.preventDefault();
+    if (actOnKey(event.key, event.shiftKey, model, actions)) event.preventDefault();
   };
 
   return (
@@ -173,6 +185,7 @@ export function Plot(props: PlotProps) {
                 onChoose={(id) => props.onChooseMark?.(id)}
               />
             </div>
+            {props.grips?.(lanes)}
           </div>
           {lanes.length === 0 && (
             <p className="plot-empty">Every lane is hidden. Choose a signal above to see it.</p>
@@ -180,13 +193,15 @@ export function Plot(props: PlotProps) {
         </div>
         <Strip model={model} lines={lines} marks={marks} wheel={wheel} />
       </div>
-      <SpanFigures model={model} lanes={lanes} wheel={wheel} />
+      <Suspense fallback={null}>
+        {span !== null && <SpanFigures model={model} lanes={lanes} wheel={wheel} />}
+      </Suspense>
       {loaded.trouble !== null && (
         <p className="plot-trouble" role="status">
           {loaded.trouble}
         </p>
       )}
-      <PlotSummary id={summary} model={model} lanes={lanes} wheel={wheel} />
+      <PlotSummary id={summary} model={model} lanes={lanes} />
       <Suspense fallback={null}>{help && <KeysDialog onClose={() => setHelp(false)} />}</Suspense>
     </div>
   );

@@ -3,32 +3,25 @@ import { digitsFor, fixed, time, withUnit } from './format.ts';
 import type { Lane } from './lanes.ts';
 import { extentOf } from './line-data.ts';
 import type { PlotModel } from './model.ts';
-import { turnInView } from './plot-keys.ts';
-import type { PlotWheel } from './types.ts';
+import { stepInView } from './steps.ts';
 
 /** Words and a table of what the view shows, for those who cannot see it. Follows the view once it rests. */
-export function PlotSummary({
-  id,
-  model,
-  lanes,
-  wheel,
-}: {
-  id: string;
-  model: PlotModel;
-  lanes: readonly Lane[];
-  wheel: PlotWheel | null;
-}) {
+export function PlotSummary({ id, model, lanes }: { id: string; model: PlotModel; lanes: readonly Lane[] }) {
   const view = useRested(model);
   const { whole } = model.bounds;
   const span = view.to - view.from;
   const window = model.loader.best(view, model.devicePixels());
-  const turn = turnInView(model, wheel);
+  const step = stepInView(model);
+  const steps = model.steps.get();
   return (
     <div className="sr-only">
       <p id={id}>
         {lanes.length === 1 ? 'One signal' : `${lanes.length} signals`} over{' '}
         {time(whole.to - whole.from, span)}. Shown: {time(view.from, span)} to {time(view.to, span)}
-        {turn !== null && `, turn ${turn + 1} of ${(wheel?.marksS.length ?? 1) - 1}`}. Press ? for the keys.
+        {steps !== null &&
+          step !== null &&
+          `, ${steps.word.toLowerCase()} ${step + 1} of ${steps.stretches.length}`}
+        . Press ? for the keys.
       </p>
       <table>
         <caption>Values in view</caption>

@@ -2,9 +2,11 @@ import { Mark } from '../base/Mark.tsx';
 import { degreeScale } from './degree-scale.ts';
 import { fixed } from './format.ts';
 import type { PlotModel } from './model.ts';
+import type { Steps } from './steps.ts';
 import { timeScale } from './time-scale.ts';
-import type { PlotWheel } from './types.ts';
+import type { PlotWheel, View } from './types.ts';
 import { useStore } from './useStore.ts';
+import { shareOfTime } from './view.ts';
 
 export type ScaleKind = 'seconds' | 'degrees';
 
@@ -19,25 +21,38 @@ interface ScaleBarProps {
 export function ScaleBar({ model, wheel, kind, narrow }: ScaleBarProps) {
   const view = useStore(model.view);
   const width = useStore(model.widthPx);
+  const steps = useStore(model.steps);
   if (width === 0) return <div className="plot-scale" />;
   const degrees = kind === 'degrees' && wheel !== null ? degreeScale(wheel, view, width) : null;
   const barY = narrow ? 22 : 44;
-  const scale = degrees ?? timeScale(view, width);
+  const origin = degrees === null ? originIn(steps, view) : null;
+  const times = timeScale(view, width, origin ?? 0);
+  const scale = degrees ?? times;
   const box = (dark: boolean) =>
     scale.fields
       .filter((field) => field.dark === dark)
       .map(({ from, to }) => `M${from.toFixed(1)} ${barY}H${to.toFixed(1)}v7H${from.toFixed(1)}z`)
       .join('');
-  const labels = degrees ? degrees.degrees : timeScale(view, width).labels;
+  const labels = degrees ? degrees.degrees : times.labels;
   // On a phone nothing stands left of the lanes: a label at the edge would be cut.
   const edge = (at: number, text: string) => (narrow ? Math.max(at, text.length * 3.6) : at);
-  const ticks = degrees ? degrees.teeth : timeScale(view, width).ticks;
+  const ticks = degrees ? degrees.teeth : times.ticks;
   return (
     <div className="plot-scale" aria-hidden="true">
       {!narrow && <span className="plot-scale-name">{degrees ? 'crank' : 'time'}</span>}
       {!narrow && degrees && <span className="plot-scale-name plot-scale-tooth">tooth</span>}
       <svg aria-hidden="true" className="plot-scale-svg" width={width} height={narrow ? 52 : 76}>
         {!narrow && degrees && <Turns scale={degrees} />}
+        {!narrow && origin !== null && (
+          <text
+            className="plot-label plot-label-mark"
+            x={shareOfTime(view, origin) * width}
+            y={20}
+            textAnchor="middle"
+          >
+            switch-off
+          </text>
+        )}
         <path className="plot-field" d={box(false)} />
         <path className="plot-field plot-field-dark" d={box(true)} />
         <path
@@ -72,6 +87,12 @@ export function ScaleBar({ model, wheel, kind, narrow }: ScaleBarProps) {
       </svg>
     </div>
   );
+}
+
+/** Time is told from the moment of the one step in view; null where several are in view or a step has none. */
+function originIn(steps: Steps | null, view: View): number | null {
+  const inView = steps?.originsS?.filter((origin) => origin > view.from && origin < view.to) ?? [];
+  return inView.length === 1 ? inView[0]! : null;
 }
 
 function Turns({ scale }: { scale: NonNullable<ReturnType<typeof degreeScale>> }) {

@@ -1,11 +1,8 @@
 import { type KeyboardEvent, type PointerEvent, useRef } from 'react';
-import { degreesAt } from './degrees.ts';
 import { Dimension } from './Evidence.tsx';
-import { count, digitsFor, duration, fixed, frequency, time, withUnit } from './format.ts';
+import { duration, time } from './format.ts';
 import { type Lane, stackHeight } from './lanes.ts';
 import type { PlotModel } from './model.ts';
-import { spanStatistics } from './span-statistics.ts';
-import type { PlotWheel, View } from './types.ts';
 import { useStore } from './useStore.ts';
 import { shareOfTime, timeAtShare } from './view.ts';
 
@@ -88,76 +85,4 @@ export function SpanHandles({ model, height }: { model: PlotModel; height: numbe
       {handle('to', 'End of the span')}
     </>
   );
-}
-
-interface SpanFiguresProps {
-  model: PlotModel;
-  lanes: readonly Lane[];
-  wheel: PlotWheel | null;
-}
-
-/** What lies between the handles: length, frequency, angle, and each lane's figures. */
-export function SpanFigures({ model, lanes, wheel }: SpanFiguresProps) {
-  const span = useStore(model.span);
-  const view = useStore(model.view);
-  useStore(model.loader.state);
-  if (span === null) return null;
-  const length = span.to - span.from;
-  const window = model.loader.best(covering(view, span), model.devicePixels());
-  const angle = angleOf(wheel, span);
-  return (
-    <section className="plot-figures" aria-label="Span">
-      <p>
-        <b>Span</b> <span className="figures">{duration(length)}</span>
-        {length > 0 && <span className="figures"> {frequency(1 / length)}</span>}
-        {angle !== null && <span className="figures"> {fixed(angle, 1)}°</span>}
-      </p>
-      {window !== null &&
-        lanes.map((lane) => {
-          const { n, lowest, highest, mean, difference } = spanStatistics(
-            window,
-            lane.signal,
-            span.from,
-            span.to,
-          );
-          const text = (value: number) =>
-            withUnit(fixed(value, digitsFor((lane.high - lane.low) / 2000)), lane.signal.unit);
-          const slope = difference !== null && length > 0 ? difference / length : null;
-          return (
-            <p key={lane.signal.index}>
-              <span className="text-soft">{lane.signal.name}</span>{' '}
-              <span className="figures">
-                {lowest === null || highest === null ? 'no sample' : `${text(lowest)} to ${text(highest)}`}
-                {mean !== null && `, mean ${text(mean)}`}
-                {difference !== null && `, change ${text(difference)}`}
-                {slope !== null &&
-                  lane.signal.unit !== '1' &&
-                  `, slope ${slopeText(slope, lane.signal.unit)}`}
-                {n !== null && `, n = ${count(n)}`}
-              </span>
-              {mean === null && lowest !== null && <span className="text-soft"> mean: zoom in</span>}
-            </p>
-          );
-        })}
-    </section>
-  );
-}
-
-const covering = (view: View, span: View): View => ({
-  from: Math.min(view.from, span.from),
-  to: Math.max(view.to, span.to),
-});
-
-function slopeText(perSecond: number, unit: string): string {
-  const perMs = perSecond / 1000;
-  return Math.abs(perMs) >= 0.1
-    ? `${fixed(perMs, digitsFor(Math.abs(perMs) / 1000))} ${unit}/ms`
-    : `${fixed(perSecond, digitsFor(Math.abs(perSecond) / 1000))} ${unit}/s`;
-}
-
-function angleOf(wheel: PlotWheel | null, span: View): number | null {
-  if (wheel === null) return null;
-  const from = degreesAt(wheel, span.from);
-  const to = degreesAt(wheel, span.to);
-  return from === null || to === null ? null : to - from;
 }

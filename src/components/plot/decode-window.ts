@@ -22,6 +22,8 @@ export interface SamplesWindow {
   readonly count: number;
   readonly samplesVersion: number;
   readonly holds: boolean;
+  /** Samples come at one step. */
+  readonly even: boolean;
   readonly times: Float64Array;
   readonly signals: ReadonlyMap<number, Float32Array>;
 }
@@ -56,7 +58,17 @@ export function decodeWindow(headers: WindowHeaders, body: ArrayBuffer): Decoded
   const timeBytes = axis === 'even' ? 0 : count * 8;
   const signals = slices(body, timeBytes, indices, count);
   const times = axis === 'even' ? evenTimes(headers, count) : new Float64Array(body, 0, count);
-  return { layout, from, to, count, samplesVersion, holds: axis === 'holds', times, signals };
+  return {
+    layout,
+    from,
+    to,
+    count,
+    samplesVersion,
+    holds: axis === 'holds',
+    even: axis === 'even',
+    times,
+    signals,
+  };
 }
 
 /** Recorded value at the time of sample `index`; NaN for a hole or a signal that the window does not hold. */

@@ -1,4 +1,5 @@
 import type { DecodedWindow } from './decode-window.ts';
+import { type LaneSetup, PLAIN_SETUP } from './lane-setup.ts';
 import { extentOf } from './line-data.ts';
 import { laneRange } from './ticks.ts';
 import type { PlotSignal } from './types.ts';
@@ -12,6 +13,8 @@ export interface Lane {
   readonly height: number;
   readonly low: number;
   readonly high: number;
+  /** Drawn upside down. */
+  readonly inverted: boolean;
 }
 
 export const LANE_GAP = 4;
@@ -25,23 +28,38 @@ export interface LaneLine {
 
 /**
  * Lanes share the height by weight (1 unless dragged); none is lower than 96 px, then the stack is higher than the place
- * and scrolls. The value range is that of the whole capture, so it stands still while the view moves.
+ * and scrolls. The value range is that of the whole capture, so it stands still while the view moves; on a common scale it
+ * is that of all lanes of the unit.
  */
 export function layLanes(
   lines: readonly LaneLine[],
   height: number,
   overview: DecodedWindow | null,
-  weights: ReadonlyMap<number, number> = new Map(),
+  { weights, inverted, common }: LaneSetup = PLAIN_SETUP,
 ): Lane[] {
   const free = Math.max(height - LANE_GAP * (lines.length - 1), 0);
   const weightOf = (line: LaneLine) => weights.get(line.signal.index) ?? 1;
   const sum = lines.reduce((total, line) => total + weightOf(line), 0);
+  const ranges = lines.map(({ signal }) => (overview === null ? null : extentOf(overview, signal)));
+  const rangeOf = (line: LaneLine, place: number) => {
+    const shared = lines.flatMap((other, at) =>
+      (common && other.signal.unit === line.signal.unit) || at === place ? (ranges[at] ?? []) : [],
+    );
+    return laneRange(
+      shared.length === 0 ? Number.NaN : Math.min(...shared.map(({ lowest }) => lowest)),
+      shared.length === 0 ? Number.NaN : Math.max(...shared.map(({ highest }) => highest)),
+    );
+  };
   let top = 0;
-  return lines.map((line) => {
+  return lines.map((line, place) => {
     const own = Math.max(Math.floor((free * weightOf(line)) / sum), LEAST_LANE);
-    const extent = overview === null ? null : extentOf(overview, line.signal);
-    const { low, high } = laneRange(extent?.lowest ?? Number.NaN, extent?.highest ?? Number.NaN);
-    const lane: Lane = { ...line, top, height: own, low, high };
+    const lane: Lane = {
+      ...line,
+      top,
+      height: own,
+      ...rangeOf(line, place),
+      inverted: inverted.has(line.signal.index),
+    };
     top += own + LANE_GAP;
     return lane;
   });
@@ -52,10 +70,12 @@ export const stackHeight = (lanes: readonly Lane[]) =>
 
 /** Pixel of a value from the top of the stack. */
 export const yOf = (lane: Lane, value: number) =>
-  lane.top + ((lane.high - value) / (lane.high - lane.low)) * lane.height;
+  lane.top + ((lane.inverted ? value - lane.low : lane.high - value) / (lane.high - lane.low)) * lane.height;
 
-export const valueAtY = (lane: Lane, y: number) =>
-  lane.high - ((y - lane.top) / lane.height) * (lane.high - lane.low);
+export function valueAtY(lane: Lane, y: number): number {
+  const down = ((y - lane.top) / lane.height) * (lane.high - lane.low);
+  return lane.inverted ? lane.low + down : lane.high - down;
+}
 
 /** The lane under a pixel; between two lanes the one above. */
 export function laneAtY(lanes: readonly Lane[], y: number): Lane | null {

@@ -20,6 +20,7 @@ const samples = (times: number[], values: number[], holds = false): SamplesWindo
   count: times.length,
   samplesVersion: 1,
   holds,
+  even: true,
   times: Float64Array.from(times),
   signals: new Map([[0, Float32Array.from(values)]]),
 });

@@ -1,7 +1,9 @@
 import type { FetchWindow } from './fetch-window.ts';
+import type { Steps } from './steps.ts';
 import { createStore, type Store } from './store.ts';
 import type { PlotCapture, View } from './types.ts';
 import { boundsOf } from './view.ts';
+import { createViewHistory, type ViewHistory } from './view-history.ts';
 import { createViewModel, type ViewModel } from './view-model.ts';
 import { createWindowLoader, type WindowLoader } from './window-loader.ts';
 
@@ -14,6 +16,10 @@ export interface PlotModel extends ViewModel {
   /** Width of the lanes in CSS pixels; 0 before they were laid out. */
   readonly widthPx: Store<number>;
   readonly loader: WindowLoader;
+  readonly fetchWindow: FetchWindow;
+  /** What n and p go through; null where nothing repeats. */
+  readonly steps: Store<Steps | null>;
+  readonly history: ViewHistory;
   devicePixels(): number;
   close(): void;
 }
@@ -38,5 +44,15 @@ export function createPlotModel(
   };
   view.subscribe(ask);
   widthPx.subscribe(ask);
-  return { ...viewModel, capture, widthPx, loader, devicePixels, close: () => loader.close() };
+  return {
+    ...viewModel,
+    steps: createStore<Steps | null>(null),
+    history: createViewHistory(view),
+    fetchWindow,
+    capture,
+    widthPx,
+    loader,
+    devicePixels,
+    close: () => loader.close(),
+  };
 }

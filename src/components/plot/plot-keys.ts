@@ -1,15 +1,15 @@
-import { turnAt } from './degrees.ts';
 import type { PlotModel } from './model.ts';
-import type { PlotWheel } from './types.ts';
-import { panBy, viewAround, zoomAt } from './view.ts';
+import { stepBy } from './steps.ts';
+import { panBy, zoomAt } from './view.ts';
 
 /** Keys while the plot has focus: what `?` lists. */
 export const PLOT_KEYS: readonly (readonly [keys: string, does: string])[] = [
   ['← →', 'move the view'],
   ['Shift ← →', 'move the cursor'],
   ['+ −', 'zoom at the cursor'],
-  ['n p', 'next and previous turn'],
+  ['n p', 'next and previous turn, firing or pulse'],
   ['0', 'show all'],
+  ['b f', 'back to the view before, and forward again'],
   ['m', 'mark at the cursor'],
   ['s', 'span: measure between two handles'],
   ['Esc', 'put cursor, span and tool away'],
@@ -22,13 +22,7 @@ export interface KeyActions {
 }
 
 /** True when the key was taken. */
-export function actOnKey(
-  key: string,
-  shift: boolean,
-  model: PlotModel,
-  wheel: PlotWheel | null,
-  actions: KeyActions,
-): boolean {
+export function actOnKey(key: string, shift: boolean, model: PlotModel, actions: KeyActions): boolean {
   const view = model.view.get();
   const span = view.to - view.from;
   const cursor = model.cursorS.get();
@@ -52,7 +46,13 @@ export function actOnKey(
       return true;
     case 'n':
     case 'p':
-      stepTurn(model, wheel, key === 'n' ? 1 : -1);
+      stepBy(model, key === 'n' ? 1 : -1);
+      return true;
+    case 'b':
+      model.history.back();
+      return true;
+    case 'f':
+      model.history.forward();
       return true;
     case '0':
       model.show(model.bounds.whole);
@@ -74,34 +74,6 @@ export function actOnKey(
     default:
       return false;
   }
-}
-
-/** The turn whose middle is nearest the middle of the view; null without complete turns. */
-export function turnInView(model: PlotModel, wheel: PlotWheel | null): number | null {
-  if (wheel === null || wheel.marksS.length < 2) return null;
-  const { from, to } = model.view.get();
-  const middle = (from + to) / 2;
-  const inside = turnAt(wheel, middle);
-  if (inside !== null) return inside;
-  return middle < wheel.marksS[0]! ? 0 : wheel.marksS.length - 2;
-}
-
-/** Shows one turn with a little of its neighbours. */
-export function showTurn(model: PlotModel, wheel: PlotWheel, turn: number): void {
-  const from = wheel.marksS[turn];
-  const to = wheel.marksS[turn + 1];
-  if (from !== undefined && to !== undefined) model.show(viewAround({ from, to }, 0.1, model.bounds));
-}
-
-/** Next or previous turn; without a wheel the view moves by its own length. */
-export function stepTurn(model: PlotModel, wheel: PlotWheel | null, step: 1 | -1): void {
-  const view = model.view.get();
-  const turn = turnInView(model, wheel);
-  if (wheel === null || turn === null) {
-    model.show(panBy(view, step * (view.to - view.from), model.bounds));
-    return;
-  }
-  showTurn(model, wheel, Math.min(Math.max(turn + step, 0), wheel.marksS.length - 2));
 }
 
 export function toggleSpan(model: PlotModel): void {

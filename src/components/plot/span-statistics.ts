@@ -9,7 +9,13 @@ export interface SpanStatistics {
   readonly n: number | null;
   readonly lowest: number | null;
   readonly highest: number | null;
-  /** Plain mean of the samples (holes left out); null while only columns are at hand. */
+  /** Value of the sample nearest to the start and to the end. */
+  readonly atStart: number | null;
+  readonly atEnd: number | null;
+  /**
+   * Mean over the span, holes left out: of the samples where they come at one step, else over time (a held value as long as it
+   * holds, a straight line between two samples). Null while only columns are at hand.
+   */
   readonly mean: number | null;
   /** Value at the end less value at the start; null while only columns are at hand. */
   readonly difference: number | null;
@@ -27,7 +33,8 @@ export function spanStatistics(
 ): SpanStatistics {
   const extent = extentOf(window, signal, from, to);
   const ends = { lowest: extent?.lowest ?? null, highest: extent?.highest ?? null };
-  if (window.layout === 'columns') return { n: null, ...ends, mean: null, difference: null };
+  if (window.layout === 'columns')
+    return { n: null, ...ends, atStart: null, atEnd: null, mean: null, difference: null };
 
   const values = window.signals.get(signal.index);
   let n = 0;
@@ -38,14 +45,47 @@ export function spanStatistics(
     n += 1;
     sum += values[i]!;
   }
-  const start = nearestValue(window, signal, from);
-  const end = nearestValue(window, signal, to);
+  const mean =
+    values === undefined
+      ? null
+      : window.even
+        ? n === 0
+          ? null
+          : sum / n
+        : meanOverTime(window, values, from, to);
+  const atStart = nearestValue(window, signal, from);
+  const atEnd = nearestValue(window, signal, to);
   return {
     n,
     ...ends,
-    mean: n === 0 ? null : (sum / n) * signal.factor + signal.offset,
-    difference: start === null || end === null ? null : end - start,
+    atStart,
+    atEnd,
+    mean: mean === null ? null : mean * signal.factor + signal.offset,
+    difference: atStart === null || atEnd === null ? null : atEnd - atStart,
   };
+}
+
+/** Area under what is drawn over its length; null where nothing is. */
+function meanOverTime(
+  { times, count, holds, to: end }: Extract<DecodedWindow, { layout: 'samples' }>,
+  values: Float32Array,
+  from: number,
+  to: number,
+): number | null {
+  let area = 0;
+  let length = 0;
+  for (let i = 0; i < count; i += 1) {
+    const next = i + 1 < count ? times[i + 1]! : holds ? Math.max(end, times[i]!) : times[i]!;
+    const left = Math.max(times[i]!, from);
+    const right = Math.min(next, to);
+    const here = values[i]!;
+    const after = holds ? here : values[i + 1]!;
+    if (!(right > left) || Number.isNaN(here) || Number.isNaN(after)) continue;
+    const slope = (after - here) / (next - times[i]!);
+    area += (right - left) * (here + slope * ((left + right) / 2 - times[i]!));
+    length += right - left;
+  }
+  return length > 0 ? area / length : null;
 }
 
 /** Value of the sample nearest to a time, in the signal's unit; null for a hole, outside, or while only columns are at hand. */

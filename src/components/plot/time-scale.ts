@@ -11,8 +11,9 @@ export interface TimeScale {
 
 const APART = 76;
 
-/** Labels in ms when the view is short and near zero enough to read, else in seconds. */
-export function timeScale(view: View, widthPx: number): TimeScale {
+/** Labels in ms when the view is short and near zero enough to read, else in seconds; told from `originS`. */
+export function timeScale(own: View, widthPx: number, originS = 0): TimeScale {
+  const view = { from: own.from - originS, to: own.to - originS };
   const span = view.to - view.from;
   const pixelsPerS = widthPx / span;
   const step = niceStep(APART / pixelsPerS);

@@ -12,6 +12,7 @@ export interface TraceOptions {
   readonly role: string;
   readonly dash: readonly number[];
   readonly range: { readonly low: number; readonly high: number };
+  readonly inverted: boolean;
 }
 
 export interface TraceCanvas {
@@ -25,7 +26,7 @@ export interface TraceCanvas {
  * theme changed. `data-draws` on the host counts the drawings, for tests.
  */
 export function createTraceCanvas(host: HTMLElement, model: PlotModel, options: TraceOptions): TraceCanvas {
-  const { signal, role, dash } = options;
+  const { signal, role, dash, inverted } = options;
   const holds = model.capture.axis === 'holds';
   let range = options.range;
   let shown: unknown = null;
@@ -45,7 +46,7 @@ export function createTraceCanvas(host: HTMLElement, model: PlotModel, options: 
       axes: [{ show: false }, { show: false }],
       scales: {
         x: { time: false, auto: false, range: () => [model.view.get().from, model.view.get().to] },
-        y: { auto: false, range: () => [range.low, range.high] },
+        y: { auto: false, dir: inverted ? -1 : 1, range: () => [range.low, range.high] },
       },
       series: [
         {},

@@ -25,6 +25,7 @@ const samples = (from: number, to: number): SamplesWindow => ({
   count: 0,
   samplesVersion: 1,
   holds: false,
+  even: true,
   times: new Float64Array(0),
   signals: new Map(),
 });

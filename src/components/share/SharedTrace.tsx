@@ -1,8 +1,9 @@
 import './share.css';
-import { useCallback, useMemo, useRef, useState } from 'react';
+import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
 import { ApiFailure, api, sentenceOf } from '../base/api.ts';
 import { Message } from '../base/Message.tsx';
 import { timeText } from '../base/numbers.ts';
+import { stepsOf } from '../capture/steps-of.ts';
 import { usePlotModel } from '../capture/usePlotModel.ts';
 import { bringIntoView, openingView } from '../capture/view-of.ts';
 import { whereOf } from '../capture/where-of.ts';
@@ -19,20 +20,21 @@ const MOVING = createStore<Tool>('move');
 
 /** What a colleague opens on a phone, without an account: the trace first, then marks, question, numbers, answers. */
 export function SharedTrace({ secret }: { secret: string }) {
-  const { shared, measurements, error, reload } = useShared(secret);
+  const { shared, measurements, asked, error, reload } = useShared(secret);
   const [place, setPlace] = useState<MarkPlace | null>(null);
   const [chosenMark, setChosenMark] = useState<string | null>(null);
   const seen = useRef(false);
   const plot = useRef<HTMLDivElement>(null);
   const wheel = shared?.wheel ?? null;
+  const steps = useMemo(() => stepsOf(wheel, measurements ?? undefined)[0] ?? null, [wheel, measurements]);
   const drawable = shared !== null && shared.capture.samples > 0;
 
   const model = usePlotModel({
-    capture: drawable ? shared.capture : null,
+    capture: drawable && (wheel !== null || asked) ? shared.capture : null,
     address: `/api/v1/shared/${secret}/window`,
     version: shared?.capture.samplesVersion ?? null,
     opening: () => {
-      const view = openingView(wheel, matchMedia('(width < 40rem)').matches);
+      const view = openingView(steps, matchMedia('(width < 40rem)').matches);
       const mark = shared?.marks[0];
       if (view === null || mark === undefined || (mark.from >= view.from && mark.from <= view.to))
         return view;
@@ -41,6 +43,7 @@ export function SharedTrace({ secret }: { secret: string }) {
     },
     onRefused: reload,
   });
+  useEffect(() => model?.steps.set(steps), [model, steps]);
   const tool = useStore(model?.tool ?? MOVING);
 
   /** "Seen" counts once the trace stands, not when the address was asked for. */

@@ -6,6 +6,8 @@ import { api } from '../base/api.ts';
 export interface Shared {
   readonly shared: SharedCaptureJson | null;
   readonly measurements: MeasurementsJson | null;
+  /** The numbers are there, or will not come. */
+  readonly asked: boolean;
   readonly error: unknown;
   readonly reload: () => void;
 }
@@ -14,6 +16,7 @@ export interface Shared {
 export function useShared(secret: string): Shared {
   const [shared, setShared] = useState<SharedCaptureJson | null>(null);
   const [measurements, setMeasurements] = useState<MeasurementsJson | null>(null);
+  const [asked, setAsked] = useState(false);
   const [error, setError] = useState<unknown>(null);
   const reload = useCallback(() => {
     api<SharedCaptureJson>(`/shared/${secret}`).then(({ data }) => {
@@ -22,14 +25,18 @@ export function useShared(secret: string): Shared {
     }, setError);
   }, [secret]);
   useEffect(reload, [reload]);
-  const ready = shared?.capture.status === 'ready';
+  const status = shared?.capture.status;
+  const ready = status === 'ready';
   useEffect(() => {
+    if (status !== undefined && !ready) setAsked(true);
     if (!ready) return;
     // The trace is what counts here; without its numbers the page still serves.
-    api<MeasurementsJson>(`/shared/${secret}/measurements`).then(
-      ({ data }) => setMeasurements(data),
-      () => {},
-    );
-  }, [secret, ready]);
-  return { shared, measurements, error, reload };
+    api<MeasurementsJson>(`/shared/${secret}/measurements`)
+      .then(
+        ({ data }) => setMeasurements(data),
+        () => {},
+      )
+      .finally(() => setAsked(true));
+  }, [secret, status, ready]);
+  return { shared, measurements, asked, error, reload };
 }
