@@ -6,6 +6,7 @@ import { crossings } from '../../src/engine/signal/crossings.ts';
 import { fitExponential } from '../../src/engine/signal/exponential-fit.ts';
 import { findPeaks } from '../../src/engine/signal/peaks.ts';
 import { spectrum, strongestIn } from '../../src/engine/signal/spectrum.ts';
+import { weightOf } from '../../src/engine/signal/window-function.ts';
 
 /** Made by scipy/make-references.py, which says how; kept so that the comparison needs no SciPy. */
 interface References {
@@ -25,6 +26,7 @@ interface References {
     tau: number;
     tauError: number;
   }>;
+  readonly windows: Readonly<Record<'hann' | 'blackman' | 'flattop', number[]>>;
 }
 const references = JSON.parse(
   readFileSync(new URL('./fixtures/scipy.json', import.meta.url), 'utf8'),
@@ -66,6 +68,14 @@ describe('spectrum() and scipy.fft.rfft', () => {
       expect(strongestIn(found, 0.01, 0.4)!.frequencyHz).toBeCloseTo(0.0371, 3);
     },
   );
+});
+
+describe('weightOf() and scipy.signal.get_window', () => {
+  it.each(['hann', 'blackman', 'flattop'] as const)('give the same weights, %s', (name) => {
+    references.windows[name].forEach((weight, i) => {
+      expect(Math.abs(weightOf(name, i, 60) - weight)).toBeLessThan(1e-10);
+    });
+  });
 });
 
 describe('fitExponential() and scipy.optimize.curve_fit', () => {

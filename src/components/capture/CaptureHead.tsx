@@ -79,6 +79,10 @@ export function CaptureHead({ capture, tab, hidden, onToggle, actions, tools }: 
               className="tab"
               href={`/captures/${capture.id}${path}`}
               aria-current={name === tab ? 'page' : undefined}
+              // The stretch that is shown goes along to the other tabs.
+              onClick={(event) => {
+                event.currentTarget.search = location.search;
+              }}
             >
               {label}
             </a>

@@ -1,4 +1,5 @@
 import FFT from 'fft.js';
+import { type WindowFunction, weightOf } from './window-function.ts';
 
 /** Single-sided amplitude spectrum: `amplitude[k]` is that of a sine at `k * stepHz`, in the signal's unit. */
 export interface Spectrum {
@@ -9,7 +10,7 @@ export interface Spectrum {
 export interface SpectrumOptions {
   readonly sampleRateHz: number;
   /** Default: Hann, scaled so that a sine on a bin keeps its amplitude. `none`: the samples as they are. */
-  readonly window?: 'hann' | 'none';
+  readonly window?: WindowFunction;
   /** Zeros are added up to the next power of two at or above this many times the length. Default 1. */
   readonly padding?: number;
   /** Subtract the mean first. Default true. */
@@ -40,7 +41,7 @@ export function spectrum(values: Float32Array | Float64Array, options: SpectrumO
   const data = new Float64Array(size);
   let gain = 0;
   for (let i = 0; i < n; i += 1) {
-    const weight = window === 'hann' ? 0.5 - 0.5 * Math.cos((2 * Math.PI * i) / n) : 1;
+    const weight = weightOf(window, i, n);
     const value = values[i]!;
     data[i] = weight * ((Number.isNaN(value) ? mean : value) - base);
     gain += weight;

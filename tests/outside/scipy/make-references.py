@@ -93,7 +93,18 @@ def charges():
     return cases
 
 
-references = {"peaks": peaks(), "crossings": crossings(), "spectra": spectra(), "charges": charges()}
+def windows():
+    """Weights as scipy.signal.get_window gives them, periodic."""
+    return {name: rounded(signal.get_window(name, 60)) for name in ("hann", "blackman", "flattop")}
+
+
+references = {
+    "peaks": peaks(),
+    "crossings": crossings(),
+    "spectra": spectra(),
+    "charges": charges(),
+    "windows": windows(),
+}
 text = json.dumps(references)
 if "--print" in sys.argv:
     print(text)
