@@ -11,13 +11,13 @@ import { frontHandler } from './src/entry/integration.mjs';
 function manualChunks(id) {
   if (/node_modules\/(react|react-dom|scheduler)\//.test(id)) return 'react';
   if (
-    /preload-helper|components\/(base\/(api|circuits|LineSample|numbers|Mark|Message|Verdict)|plot\/(decode|fetch)-window)\.tsx?$/.test(
+    /preload-helper|components\/(base\/(api|circuits|LineSample|numbers|Mark|Message|Verdict)|plot\/fetch-window)|engine\/drawing\/decode-window\.tsx?$/.test(
       id,
     )
   )
     return 'base';
   if (
-    /node_modules\/uplot\/|components\/plot\/(?!Keys|SpanFigures|snap|OverlayPlot|overlay-canvas|plain-degree)/.test(
+    /node_modules\/uplot\/|(engine\/drawing|components\/plot)\/(?!Keys|SpanFigures|snap|OverlayPlot|overlay-canvas|plain-degree)/.test(
       id,
     )
   )

@@ -1,4 +1,4 @@
-import { captureEndpoints, uploadEndpoints } from './areas/captures.ts';
+import { captureEndpoints, pictureEndpoints, uploadEndpoints } from './areas/captures.ts';
 import { libraryEndpoints } from './areas/library.ts';
 import { markEndpoints } from './areas/marks.ts';
 import { ownerEndpoints } from './areas/owner.ts';
@@ -12,6 +12,7 @@ import { defineEndpoints } from './endpoint.ts';
 export const ENDPOINTS = defineEndpoints({
   ...workshopEndpoints,
   ...captureEndpoints,
+  ...pictureEndpoints,
   ...uploadEndpoints,
   ...markEndpoints,
   ...sharingEndpoints,

@@ -4,6 +4,7 @@ import { exerciseWindowEndpoint } from './endpoints/exercise-window.ts';
 import { exportEndpoint } from './endpoints/export.ts';
 import { exportResultsEndpoint } from './endpoints/export-results.ts';
 import { originalEndpoint } from './endpoints/original.ts';
+import { pictureEndpoint } from './endpoints/picture.ts';
 import { uploadsEndpoint } from './endpoints/uploads.ts';
 import { sharedWindowEndpoint, windowEndpoint } from './endpoints/window.ts';
 import type { FrontRequest } from './types.ts';
@@ -20,6 +21,7 @@ const HANDLERS: Record<InFrontId, FrontEndpoint> = {
   'captures.window': windowEndpoint,
   'captures.original': originalEndpoint,
   'captures.export': exportEndpoint,
+  'captures.picture': pictureEndpoint,
   'shared.window': sharedWindowEndpoint,
   'exercises.window': exerciseWindowEndpoint,
   'sets.exportResults': exportResultsEndpoint,

@@ -52,7 +52,7 @@ describe.each(devices)('turns on a %s', (_name, device) => {
     await expectAccessible(page);
     await page.getByRole('button', { name: 'On one another' }).click();
     expect(await rows.count()).toBe(0);
-    await page.getByRole('button', { name: '720°' }).click();
+    await page.getByRole('button', { name: '720°', exact: true }).click();
     await page.getByRole('button', { name: 'Under each other' }).click();
     expect(await rows.nth(1).innerText()).toContain('Turns 1, 2');
     await page.getByRole('link', { name: /^Turns 1, 2: show its samples/ }).click();

@@ -1,21 +1,6 @@
-/** A stretch of the capture's own time axis, in seconds; `from` is before `to`. */
-export interface View {
-  readonly from: number;
-  readonly to: number;
-}
+import type { PlotSignal, View } from '../../engine/drawing/types.ts';
 
-/** One signal as the plot needs it. `factor` and `offset` apply on drawing: shown = recorded * factor + offset. */
-export interface PlotSignal {
-  readonly index: number;
-  readonly name: string;
-  /** One of the engine's circuits; one that this page does not know is drawn as "other". */
-  readonly circuit: string;
-  readonly unit: string;
-  readonly factor: number;
-  readonly offset: number;
-  /** Drawn in ink with a solid line: what circuit it is must not show. */
-  readonly plain?: boolean;
-}
+export type { PlotSignal, PlotWheel, View } from '../../engine/drawing/types.ts';
 
 /** What is drawn: the whole stretch recorded, its steps, its signals. Never the samples themselves. */
 export interface PlotCapture {
@@ -25,16 +10,6 @@ export interface PlotCapture {
   readonly samplesVersion: number;
   readonly axis: 'even' | 'uneven' | 'holds' | null;
   readonly signals: readonly PlotSignal[];
-}
-
-/** What turns seconds into crank degrees; the parts of the API's wheel that the plot uses. */
-export interface PlotWheel {
-  /** Equal places round the wheel, missing ones included; null for added-tooth and uneven wheels. */
-  readonly places: number | null;
-  readonly teethPerTurn: number;
-  readonly marksS: readonly number[];
-  readonly teethS: readonly number[];
-  readonly teethDeg: readonly number[];
 }
 
 export type MarkKind = 'point' | 'range' | 'level';

@@ -176,6 +176,20 @@ export const windowQuery = z.object({
   v: z.coerce.number().int().min(0).optional(),
 });
 
+const signalList = z
+  .string()
+  .regex(/^\d+(,\d+)*$/)
+  .transform((list) => list.split(',').map(Number));
+
+export const pictureQuery = z.object({
+  from: z.coerce.number().finite().optional(),
+  to: z.coerce.number().finite().optional(),
+  width: z.coerce.number().int().min(360).max(3200).default(1200),
+  theme: z.enum(['paper', 'dim']).default('paper'),
+  format: z.enum(['svg', 'png']).default('svg'),
+  signals: signalList.refine((list) => list.length <= 16, 'at most 16 signals').optional(),
+});
+
 export const windowAnswer = {
   contentType: 'application/octet-stream',
   description:
@@ -334,6 +348,23 @@ export const captureEndpoints = defineEndpoints({
     response: {
       contentType: 'text/csv',
       description: 'Comma, decimal point, seconds, names with units in line 1.',
+    },
+    inFront: true,
+  },
+});
+
+export const pictureEndpoints = defineEndpoints({
+  'captures.picture': {
+    method: 'GET',
+    path: '/captures/{id}/picture',
+    summary:
+      'A stretch as a picture with title, axes, units, marks and a caption. `width` in CSS pixels; PNG has twice as many.',
+    access: 'see',
+    opens: 'capture',
+    query: pictureQuery,
+    response: {
+      contentType: 'image/svg+xml',
+      description: 'SVG, or image/png with format=png; as an attachment.',
     },
     inFront: true,
   },

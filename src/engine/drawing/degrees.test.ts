@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
+import { evenWheel } from '../testing/even-wheel.ts';
 import { degreesAt, lastAtOrBefore, timeAtDegrees, turnAt, turnSpeedRpm } from './degrees.ts';
-import { evenWheel } from './testing.ts';
 
 // 60-2 at 200 rev/min: 5 ms a tooth period, 15 ms across the gap (arithmetic, ../shared/measurements.md).
 const wheel = evenWheel({ rpm: 200, turns: 3, firstMarkS: 0.1 });

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
+import { evenWheel } from '../testing/even-wheel.ts';
 import { degreeScale } from './degree-scale.ts';
-import { evenWheel } from './testing.ts';
 
 const wheel = evenWheel({ rpm: 200, turns: 3, firstMarkS: 0.1 });
 
