@@ -217,6 +217,7 @@ const NEEDS_SAMPLES: readonly EndpointId[] = [
   'captures.window',
   'captures.original',
   'captures.export',
+  'captures.picture',
   'shared.window',
   'exercises.window',
   'knownGoods.create',

@@ -1,3 +1,4 @@
+import './take-out.css';
 import { lazy, Suspense, useState } from 'react';
 import type { CaptureJson } from '../../contract/areas/captures.ts';
 import { Icon } from '../base/Icon.tsx';
@@ -5,9 +6,11 @@ import { Icon } from '../base/Icon.tsx';
 const ShareDialog = lazy(() => import('../share/ShareDialog.tsx').then((m) => ({ default: m.ShareDialog })));
 const KeepDialog = lazy(() => import('./KeepDialog.tsx').then((m) => ({ default: m.KeepDialog })));
 
+const TakeOutDialog = lazy(() => import('./TakeOutDialog.tsx').then((m) => ({ default: m.TakeOutDialog })));
+
 /** Share, compare, keep: on a phone share stays in sight and the rest folds into a menu. */
 export function CaptureActions({ capture, onLanes }: { capture: CaptureJson; onLanes?: () => void }) {
-  const [open, setOpen] = useState<'share' | 'keep' | null>(null);
+  const [open, setOpen] = useState<'share' | 'keep' | 'out' | null>(null);
   const close = () => setOpen(null);
   return (
     <>
@@ -17,16 +20,20 @@ export function CaptureActions({ capture, onLanes }: { capture: CaptureJson; onL
         </summary>
         <div>
           {onLanes !== undefined && (
-            <button type="button" className="button" onClick={onLanes}>
+            <button type="button" className="button capture-folded" onClick={onLanes}>
               <Icon name="lanes" small />
               Lanes
             </button>
           )}
-          <button type="button" className="button" onClick={() => setOpen('keep')}>
+          <button type="button" className="button" onClick={() => setOpen('out')}>
+            <Icon name="out" small />
+            Take out
+          </button>
+          <button type="button" className="button capture-folded" onClick={() => setOpen('keep')}>
             <Icon name="keep" small />
             Keep as known-good
           </button>
-          <a className="button" href={`/captures/${capture.id}/compare`}>
+          <a className="button capture-folded" href={`/captures/${capture.id}/compare`}>
             <Icon name="compare" small />
             Compare
           </a>
@@ -55,6 +62,7 @@ export function CaptureActions({ capture, onLanes }: { capture: CaptureJson; onL
       </button>
       <Suspense fallback={null}>
         {open === 'share' && <ShareDialog capture={capture} onClose={close} />}
+        {open === 'out' && <TakeOutDialog capture={capture} onClose={close} />}
         {open === 'keep' && <KeepDialog capture={capture} onClose={close} />}
       </Suspense>
     </>
