@@ -53,6 +53,8 @@ export interface PlotProps {
   chosenMark?: string | null;
   evidence?: PlotEvidence | null;
   setup?: LaneSetup;
+  /** Signals whose lanes are hidden, where nothing else of the lanes is set. */
+  hidden?: ReadonlySet<number>;
   /** Between and over the lanes, at the top left of the stack: what sets their heights. */
   grips?: (lanes: readonly Lane[]) => ReactNode;
   onPlace?: (place: MarkPlace) => void;
@@ -72,10 +74,12 @@ export function Plot(props: PlotProps) {
     scale,
     evidence = null,
     marks = NO_MARKS,
-    setup = PLAIN_SETUP,
+    setup: given = PLAIN_SETUP,
+    hidden,
     onPlace,
     onDrawn,
   } = props;
+  const setup = useMemo(() => (hidden === undefined ? given : { ...given, hidden }), [given, hidden]);
   const summary = useId();
   const [help, setHelp] = useState(false);
   const [outer, outerSize] = useSize<HTMLDivElement>();
