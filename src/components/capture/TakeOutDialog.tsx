@@ -21,8 +21,12 @@ export function TakeOutDialog({ capture, onClose }: { capture: CaptureJson; onCl
   const [trouble, setTrouble] = useState<string | null>(null);
   const base = `/api/v1/captures/${capture.id}`;
   const query = (more: Record<string, string>) => {
-    const stretch = part === 'shown' && view !== null ? { from: String(view.from), to: String(view.to) } : {};
-    return new URLSearchParams({ ...stretch, ...more });
+    const parameters = new URLSearchParams(more);
+    if (part === 'shown' && view !== null) {
+      parameters.set('from', String(view.from));
+      parameters.set('to', String(view.to));
+    }
+    return parameters;
   };
   const shown = capture.signals.map(({ index }) => index).filter((index) => !setup.hidden.has(index));
   const picture = (format: string) =>
