@@ -39,7 +39,8 @@ export function gainOf(check: CheckId, shares: Shares, known: Known, complaint: 
         ...CAUSES[cause].proof.map((line) => partOf(line, check, known, likelihoods.get(cause) ?? {})),
       );
   }
-  return { bits: Math.max(0, entropy([...shares.values()]) - left) + PROOF_BITS * proof, likely };
+  const seen = Math.max(0, entropy([...shares.values()]) - left);
+  return { bits: seen + PROOF_BITS * proof + (CHECKS[check].pointsBits ?? 0), likely };
 }
 
 /** What a check adds to one proof: the chance of the finding it needs, over the findings still missing; 0 when the proof is off. */

@@ -62,6 +62,8 @@ export interface Check {
   readonly safety?: true;
   /** Only a hint: what does not fit is set back less. */
   readonly hint?: true;
+  /** Halvings of the doubt that the table cannot see, as what trouble codes point at (chosen for this program). */
+  readonly pointsBits?: number;
   /** Shows the moment only: of a fault that comes and goes a good result rules nothing out. */
   readonly momentary?: true;
   readonly complaints?: readonly Complaint[];

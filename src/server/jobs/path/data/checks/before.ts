@@ -162,6 +162,7 @@ export const beforeChecks = {
     minutes: 4,
     risk: 0,
     hint: true,
+    pointsBits: 0.8,
     readings: {},
     findings: {
       none: { result: 'good', says: 'answers, no codes' },

@@ -105,6 +105,7 @@ export const sparkChecks = {
     needs: ['plug socket', 'gauge'],
     minutes: 15,
     risk: 0,
+    hint: true,
     readings: {
       gap: { what: 'Plug gap', unit: 'mm', expected: { text: 'the maker’s figure', source: maker } },
     },
