@@ -18,10 +18,34 @@ export interface Judged {
   readonly factor: number;
 }
 
+const NEUTRAL: Judged = { effect: 'neutral', factor: 1 };
+
+/** The data do not change while the program runs, so each cell of the table is worked out once. */
+const tables = {
+  any: new Map<string, Map<CauseId, Judged>>(),
+  stall: new Map<string, Map<CauseId, Judged>>(),
+};
+
 export function effectOf(check: CheckId, findingId: string, cause: CauseId, complaint: Complaint): Judged {
+  const table = complaint === 'stall' ? tables.stall : tables.any;
+  const key = `${check}:${findingId}`;
+  let row = table.get(key);
+  if (row === undefined) {
+    row = new Map();
+    table.set(key, row);
+  }
+  let judged = row.get(cause);
+  if (judged === undefined) {
+    judged = judge(check, findingId, cause, complaint);
+    row.set(cause, judged);
+  }
+  return judged;
+}
+
+function judge(check: CheckId, findingId: string, cause: CauseId, complaint: Complaint): Judged {
   const { findings, hint, momentary } = CHECKS[check];
   const finding = findings[findingId];
-  if (finding === undefined) return { effect: 'neutral', factor: 1 };
+  if (finding === undefined) return NEUTRAL;
   const passing = momentary === true && complaint === 'stall' && finding.result === 'good';
   if (finding.rulesOut?.includes(cause)) {
     return passing
@@ -29,10 +53,9 @@ export function effectOf(check: CheckId, findingId: string, cause: CauseId, comp
       : { effect: 'rules out', factor: 0 };
   }
   if (finding.fits?.includes(cause)) return { effect: 'fits', factor: 1 };
-  if (finding.result === 'good' && (hint === true || !isMentioned(check, cause)))
-    return { effect: 'neutral', factor: 1 };
+  if (finding.result === 'good' && (hint === true || !isMentioned(check, cause))) return NEUTRAL;
   // A bad finding without causes of its own (a step that makes safe, codes stored) says nothing.
-  if (finding.result === 'bad' && finding.fits === undefined) return { effect: 'neutral', factor: 1 };
+  if (finding.result === 'bad' && finding.fits === undefined) return NEUTRAL;
   if (passing) return { effect: 'against', factor: AGAINST_FOR_THE_MOMENT };
   return { effect: 'against', factor: hint === true ? AGAINST_BY_HINT : AGAINST };
 }

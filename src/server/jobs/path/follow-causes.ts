@@ -4,6 +4,7 @@ import { CHECKS, type CheckId } from './data/checks.ts';
 import { effectOfAny } from './effect.ts';
 import type { Overrule } from './facts.ts';
 import { type Contradiction, type Known, outcomeAt, wordsOf } from './outcomes.ts';
+import { parseRef } from './ref.ts';
 import type { Complaint } from './types.ts';
 
 export interface Because {
@@ -56,7 +57,7 @@ export function followCauses(
     );
     let state: FollowedCause['state'] = out ? 'ruled out' : proof === undefined ? 'possible' : 'shown';
     if (proof !== undefined) {
-      const checks = proof.map((ref) => ref.split(':')[0] as CheckId);
+      const checks = proof.map((ref) => parseRef(ref).check);
       because.push({ effect: 'shows', check: checks[0] ?? null, text: CAUSES[cause].prove });
       if (out) {
         const against = because.filter(({ effect }) => effect === 'rules out');

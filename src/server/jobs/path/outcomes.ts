@@ -2,6 +2,7 @@ import { CHECK_IDS, CHECKS, type CheckId } from './data/checks.ts';
 import { CONFLICTS } from './data/conflicts.ts';
 import type { CheckRecord, Facts, MeasuredReading } from './facts.ts';
 import { judgedFinding } from './judged-finding.ts';
+import { parseRef } from './ref.ts';
 
 /** Two statements that cannot both be right. Neither counts until one is changed or said to stand. */
 export interface Contradiction {
@@ -142,7 +143,7 @@ function suspendConflicting(
 
 /** The outcome when it is exactly this finding. */
 export function outcomeAt(outcomes: ReadonlyMap<CheckId, Outcome>, ref: string): Outcome | null {
-  const [check, finding] = ref.split(':') as [CheckId, string];
+  const { check, finding } = parseRef(ref);
   const outcome = outcomes.get(check);
   return outcome?.findings.length === 1 && outcome.findings[0] === finding ? outcome : null;
 }

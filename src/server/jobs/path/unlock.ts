@@ -1,6 +1,7 @@
 import { ALERT_LIST, type AlertId } from './data/alerts.ts';
 import { CHECKS, type CheckId } from './data/checks.ts';
 import { type Known, outcomeAt } from './outcomes.ts';
+import { parseRef } from './ref.ts';
 
 /**
  * Steps that must come before a check may be proposed, in order; empty: it may be now. Null: something that was found, skipped or
@@ -49,7 +50,7 @@ function addChain(
   return true;
 }
 
-const checkOf = (ref: string) => ref.split(':')[0] as CheckId;
+const checkOf = (ref: string) => parseRef(ref).check;
 
 /** Not answered, not skipped. What is unclear or contradicted stays open. */
 export const isOpen = (check: CheckId, known: Known): boolean =>

@@ -13,15 +13,36 @@ export const BLIND_CASES: readonly TradeCase[] = [
     cause: 'crank-sensor',
     others: 'nothing',
     answers: {
-      cranking: { finding: 'usual', readings: [{ what: 'speed', value: 210, unit: 'rpm' }], words: 'cranking speed: 210 rev/min, even rhythm' },
+      cranking: {
+        finding: 'usual',
+        readings: [{ what: 'speed', value: 210, unit: 'rpm' }],
+        words: 'cranking speed: 210 rev/min, even rhythm',
+      },
       spark: { finding: 'none', words: 'spark at a tester on two cylinders while cranking: none' },
-      'coil-feed': { finding: 'good', readings: [{ what: 'feed', value: 12.4, unit: 'V' }], words: 'coil feed with key on: 12.4 V' },
+      'coil-feed': {
+        finding: 'good',
+        readings: [{ what: 'feed', value: 12.4, unit: 'V' }],
+        words: 'coil feed with key on: 12.4 V',
+      },
       'coil-command': { finding: 'none', words: 'coil command while cranking (scope): no pulses' },
-      'crank-trace': { finding: 'none', words: 'crank sensor signal while cranking (scope): flat line at 0 V' },
-      'injector-pulse': { finding: 'none', words: 'injector pulse while cranking: none, feed 12.3 V present' },
-      'injector-feed': { finding: 'good', readings: [{ what: 'feed', value: 12.3, unit: 'V' }], words: 'injector pulse while cranking: none, feed 12.3 V present' },
+      'crank-trace': {
+        finding: 'none',
+        words: 'crank sensor signal while cranking (scope): flat line at 0 V',
+      },
+      'injector-pulse': {
+        finding: 'none',
+        words: 'injector pulse while cranking: none, feed 12.3 V present',
+      },
+      'injector-feed': {
+        finding: 'good',
+        readings: [{ what: 'feed', value: 12.3, unit: 'V' }],
+        words: 'injector pulse while cranking: none, feed 12.3 V present',
+      },
       'crank-winding': { finding: 'off', words: 'two-wire crank sensor resistance, unplugged: open circuit' },
-      'crank-type': { finding: 'two-wire', words: 'two-wire crank sensor resistance, unplugged: open circuit' },
+      'crank-type': {
+        finding: 'two-wire',
+        words: 'two-wire crank sensor resistance, unplugged: open circuit',
+      },
       codes: { finding: 'stored', codes: ['P0335'], words: 'codes: P0335' },
     },
   },
@@ -32,12 +53,26 @@ export const BLIND_CASES: readonly TradeCase[] = [
     cause: 'timing-broken',
     others: 'nothing',
     answers: {
-      cranking: { finding: 'fast-even', readings: [{ what: 'speed', value: 340, unit: 'rpm' }], words: 'cranking sound and speed: faster than usual and perfectly even, 340 rev/min' },
+      cranking: {
+        finding: 'fast-even',
+        readings: [{ what: 'speed', value: 340, unit: 'rpm' }],
+        words: 'cranking sound and speed: faster than usual and perfectly even, 340 rev/min',
+      },
       rhythm: { finding: 'flat', words: 'starter current rhythm: no humps' },
       'cam-trace': { finding: 'none', words: 'cam signal while cranking: flat line, crank signal healthy' },
-      'crank-trace': { finding: 'regular', words: 'cam signal while cranking: flat line, crank signal healthy' },
-      compression: { finding: 'none', readings: [{ what: 'highest', value: 0, unit: 'bar' }], words: 'compression gauge: 0 bar on cylinders 1 and 2' },
-      'belt-look': { finding: 'broken', words: 'looking through the oil filler while someone touches the key briefly: camshaft does not turn' },
+      'crank-trace': {
+        finding: 'regular',
+        words: 'cam signal while cranking: flat line, crank signal healthy',
+      },
+      compression: {
+        finding: 'none',
+        readings: [{ what: 'highest', value: 0, unit: 'bar' }],
+        words: 'compression gauge: 0 bar on cylinders 1 and 2',
+      },
+      'belt-look': {
+        finding: 'broken',
+        words: 'looking through the oil filler while someone touches the key briefly: camshaft does not turn',
+      },
     },
   },
   {
@@ -48,12 +83,26 @@ export const BLIND_CASES: readonly TradeCase[] = [
     others: 'nothing',
     answers: {
       spark: { finding: 'good', words: 'spark at a tester: strong on all' },
-      'starting-fluid': { finding: 'runs', words: 'short burst of starting fluid, cautions kept: runs for two seconds, dies' },
-      'rail-pressure': { finding: 'none', readings: [{ what: 'pressure', value: 0, unit: 'kPa' }], words: 'rail pressure: 0 kPa' },
+      'starting-fluid': {
+        finding: 'runs',
+        words: 'short burst of starting fluid, cautions kept: runs for two seconds, dies',
+      },
+      'rail-pressure': {
+        finding: 'none',
+        readings: [{ what: 'pressure', value: 0, unit: 'kPa' }],
+        words: 'rail pressure: 0 kPa',
+      },
       'pump-prime': { finding: 'silent', words: 'sound of the pump at key on: silent' },
-      'pump-supply': { finding: 'none', readings: [{ what: 'volts', value: 0, unit: 'V' }], words: 'voltage at the pump connector at key on and while cranking: 0 V' },
+      'pump-supply': {
+        finding: 'none',
+        readings: [{ what: 'volts', value: 0, unit: 'V' }],
+        words: 'voltage at the pump connector at key on and while cranking: 0 V',
+      },
       fuses: { finding: 'good', words: 'pump fuse: whole, battery voltage on both sides' },
-      'pump-relay': { finding: 'bad', words: 'pump with the relay replaced by a fused link: runs, pressure 350 kPa' },
+      'pump-relay': {
+        finding: 'bad',
+        words: 'pump with the relay replaced by a fused link: runs, pressure 350 kPa',
+      },
       // Nothing in the data asks for: pump ground: 0.05 V drop
     },
   },
@@ -66,9 +115,21 @@ export const BLIND_CASES: readonly TradeCase[] = [
     answers: {
       spark: { finding: 'good', words: 'spark: good' },
       'starting-fluid': { finding: 'runs', words: 'starting fluid: runs shortly' },
-      'rail-pressure': { finding: 'low', readings: [{ what: 'pressure', value: 40, unit: 'kPa' }], words: 'rail pressure: 40 kPa' },
-      'pump-supply': { finding: 'good', readings: [{ what: 'volts', value: 11.2, unit: 'V' }], words: 'voltage at pump while cranking: 11.2 V' },
-      'pump-current': { finding: 'worn', readings: [{ what: 'mean', value: 1.1, unit: 'A' }], words: 'pump current: 1.1 A with no ripple' },
+      'rail-pressure': {
+        finding: 'low',
+        readings: [{ what: 'pressure', value: 40, unit: 'kPa' }],
+        words: 'rail pressure: 40 kPa',
+      },
+      'pump-supply': {
+        finding: 'good',
+        readings: [{ what: 'volts', value: 11.2, unit: 'V' }],
+        words: 'voltage at pump while cranking: 11.2 V',
+      },
+      'pump-current': {
+        finding: 'worn',
+        readings: [{ what: 'mean', value: 1.1, unit: 'A' }],
+        words: 'pump current: 1.1 A with no ripple',
+      },
       'injector-pulse': { finding: 'pulses', words: 'injector pulses: present' },
       // Nothing in the data asks for: pump ground drop: 0.08 V
     },
@@ -81,10 +142,21 @@ export const BLIND_CASES: readonly TradeCase[] = [
     others: 'nothing',
     answers: {
       story: { finding: 'work', words: 'no start after the injector rail was cleaned; tank half full' },
-      'fuel-level': { finding: 'enough', words: 'no start after the injector rail was cleaned; tank half full' },
+      'fuel-level': {
+        finding: 'enough',
+        words: 'no start after the injector rail was cleaned; tank half full',
+      },
       spark: { finding: 'good', words: 'spark: good on all' },
-      'rail-pressure': { finding: 'good', readings: [{ what: 'pressure', value: 380, unit: 'kPa' }], words: 'rail pressure: 380 kPa' },
-      'injector-feed': { finding: 'missing', readings: [{ what: 'feed', value: 0, unit: 'V' }], words: 'injector feed voltage at key on and cranking: 0 V at all four' },
+      'rail-pressure': {
+        finding: 'good',
+        readings: [{ what: 'pressure', value: 380, unit: 'kPa' }],
+        words: 'rail pressure: 380 kPa',
+      },
+      'injector-feed': {
+        finding: 'missing',
+        readings: [{ what: 'feed', value: 0, unit: 'V' }],
+        words: 'injector feed voltage at key on and cranking: 0 V at all four',
+      },
       'injector-pulse': { words: 'injector pulse: cannot be seen, no feed' },
       fuses: { finding: 'blown', words: 'fuse of the injectors: blown' },
     },
@@ -97,13 +169,25 @@ export const BLIND_CASES: readonly TradeCase[] = [
     others: 'nothing',
     answers: {
       spark: { finding: 'good', words: 'spark: good' },
-      'rail-pressure': { finding: 'good', readings: [{ what: 'pressure', value: 400, unit: 'kPa' }], words: 'rail pressure: 400 kPa' },
-      'injector-feed': { finding: 'good', readings: [{ what: 'feed', value: 12.2, unit: 'V' }], words: 'injector feed: 12.2 V' },
+      'rail-pressure': {
+        finding: 'good',
+        readings: [{ what: 'pressure', value: 400, unit: 'kPa' }],
+        words: 'rail pressure: 400 kPa',
+      },
+      'injector-feed': {
+        finding: 'good',
+        readings: [{ what: 'feed', value: 12.2, unit: 'V' }],
+        words: 'injector feed: 12.2 V',
+      },
       'injector-pulse': { finding: 'none', words: 'injector pulse while cranking: none' },
       'crank-trace': { finding: 'regular', words: 'crank signal: healthy' },
       'cam-trace': { finding: 'regular', words: 'cam signal: healthy and in place against a known-good' },
       'cam-phase': { finding: 'inside', words: 'cam signal: healthy and in place against a known-good' },
-      'throttle-data': { finding: 'wide-open', readings: [{ what: 'position', value: 96, unit: '%' }], words: 'throttle sensor reading, pedal released: 96 %' },
+      'throttle-data': {
+        finding: 'wide-open',
+        readings: [{ what: 'position', value: 96, unit: '%' }],
+        words: 'throttle sensor reading, pedal released: 96 %',
+      },
       codes: { finding: 'stored', codes: ['P0123'], words: 'codes: P0123 stored' },
     },
   },
@@ -114,12 +198,35 @@ export const BLIND_CASES: readonly TradeCase[] = [
     cause: 'timing-slipped',
     others: 'nothing',
     answers: {
-      story: { finding: 'work', words: 'started badly after belt work, now does not start, pops in the intake' },
+      story: {
+        finding: 'work',
+        words: 'started badly after belt work, now does not start, pops in the intake',
+      },
       spark: { finding: 'good', words: 'spark: present on all' },
-      'rail-pressure': { finding: 'good', readings: [{ what: 'pressure', value: 390, unit: 'kPa' }], words: 'rail pressure: 390 kPa' },
-      cranking: { finding: 'usual', readings: [{ what: 'speed', value: 250, unit: 'rpm' }], words: 'cranking rhythm: even, 250 rev/min' },
-      compression: { finding: 'all-low', readings: [{ what: 'highest', value: 650, unit: 'kPa' }, { what: 'lowest', value: 620, unit: 'kPa' }], words: 'compression gauge: 620 to 650 kPa on all, low and alike' },
-      'cam-phase': { finding: 'outside', readings: [{ what: 'shift', value: 36, unit: 'deg' }], words: 'cam edges against the crank gap, compared with the known-good: 36 crank degrees late at every edge' },
+      'rail-pressure': {
+        finding: 'good',
+        readings: [{ what: 'pressure', value: 390, unit: 'kPa' }],
+        words: 'rail pressure: 390 kPa',
+      },
+      cranking: {
+        finding: 'usual',
+        readings: [{ what: 'speed', value: 250, unit: 'rpm' }],
+        words: 'cranking rhythm: even, 250 rev/min',
+      },
+      compression: {
+        finding: 'all-low',
+        readings: [
+          { what: 'highest', value: 650, unit: 'kPa' },
+          { what: 'lowest', value: 620, unit: 'kPa' },
+        ],
+        words: 'compression gauge: 620 to 650 kPa on all, low and alike',
+      },
+      'cam-phase': {
+        finding: 'outside',
+        readings: [{ what: 'shift', value: 36, unit: 'deg' }],
+        words:
+          'cam edges against the crank gap, compared with the known-good: 36 crank degrees late at every edge',
+      },
       codes: { finding: 'stored', codes: ['P0016'], words: 'codes: P0016' },
     },
   },
@@ -132,8 +239,16 @@ export const BLIND_CASES: readonly TradeCase[] = [
     answers: {
       story: { finding: 'work', words: 'will not start after wheel bearing and gearbox work' },
       spark: { finding: 'come-and-go', words: 'spark: weak and at odd moments' },
-      'crank-trace': { words: 'crank signal: strong pick-up signal, inverted against the known-good taken with the same lead order' },
-      'rail-pressure': { finding: 'good', readings: [{ what: 'pressure', value: 350, unit: 'kPa' }], words: 'rail pressure: 350 kPa' },
+      'crank-trace': {
+        finding: 'inverted',
+        words:
+          'crank signal: strong pick-up signal, inverted against the known-good taken with the same lead order',
+      },
+      'rail-pressure': {
+        finding: 'good',
+        readings: [{ what: 'pressure', value: 350, unit: 'kPa' }],
+        words: 'rail pressure: 350 kPa',
+      },
       'injector-pulse': { words: 'injector pulse: irregular, a few' },
       'cam-phase': { words: 'cam against crank: unstable edges' },
     },
@@ -145,11 +260,33 @@ export const BLIND_CASES: readonly TradeCase[] = [
     cause: 'battery-weak',
     others: 'nothing',
     answers: {
-      'battery-rest': { finding: 'low', readings: [{ what: 'rest', value: 11.6, unit: 'V' }], words: 'battery at rest: 11.6 V' },
-      'supply-cranking': { finding: 'low', readings: [{ what: 'mean', value: 6.9, unit: 'V' }], words: 'supply while cranking: 6.9 V' },
-      cranking: { finding: 'slow', readings: [{ what: 'speed', value: 95, unit: 'rpm' }], words: 'cranking speed: 95 rev/min' },
-      'cable-drop': { finding: 'small', readings: [{ what: 'plus', value: 0.2, unit: 'V' }, { what: 'ground', value: 0.1, unit: 'V' }], words: 'voltage drop battery plus to starter while cranking: 0.2 V' },
-      'battery-test': { finding: 'fails', words: 'with a known good battery connected by proper leads: cranks at 220 rev/min and starts' },
+      'battery-rest': {
+        finding: 'low',
+        readings: [{ what: 'rest', value: 11.6, unit: 'V' }],
+        words: 'battery at rest: 11.6 V',
+      },
+      'supply-cranking': {
+        finding: 'low',
+        readings: [{ what: 'mean', value: 6.9, unit: 'V' }],
+        words: 'supply while cranking: 6.9 V',
+      },
+      cranking: {
+        finding: 'slow',
+        readings: [{ what: 'speed', value: 95, unit: 'rpm' }],
+        words: 'cranking speed: 95 rev/min',
+      },
+      'cable-drop': {
+        finding: 'small',
+        readings: [
+          { what: 'plus', value: 0.2, unit: 'V' },
+          { what: 'ground', value: 0.1, unit: 'V' },
+        ],
+        words: 'voltage drop battery plus to starter while cranking: 0.2 V',
+      },
+      'battery-test': {
+        finding: 'fails',
+        words: 'with a known good battery connected by proper leads: cranks at 220 rev/min and starts',
+      },
       // Nothing in the data asks for: ground drop engine to battery while cranking: 0.1 V
     },
   },
@@ -160,11 +297,31 @@ export const BLIND_CASES: readonly TradeCase[] = [
     cause: 'battery-cable',
     others: 'nothing',
     answers: {
-      'battery-rest': { finding: 'charged', readings: [{ what: 'rest', value: 12.7, unit: 'V' }], words: 'battery at rest: 12.7 V' },
-      'supply-cranking': { finding: 'holds', readings: [{ what: 'mean', value: 11.4, unit: 'V' }], words: 'supply at the battery while cranking: 11.4 V' },
-      cranking: { finding: 'slow', readings: [{ what: 'speed', value: 110, unit: 'rpm' }], words: 'cranking speed: 110 rev/min' },
-      'cable-drop': { finding: 'too-high', readings: [{ what: 'ground', value: 1.9, unit: 'V' }], words: 'ground drop engine to battery while cranking: 1.9 V' },
-      'starter-current': { finding: 'low', readings: [{ what: 'mean', value: 90, unit: 'A' }], words: 'starter current: 90 A mean' },
+      'battery-rest': {
+        finding: 'charged',
+        readings: [{ what: 'rest', value: 12.7, unit: 'V' }],
+        words: 'battery at rest: 12.7 V',
+      },
+      'supply-cranking': {
+        finding: 'holds',
+        readings: [{ what: 'mean', value: 11.4, unit: 'V' }],
+        words: 'supply at the battery while cranking: 11.4 V',
+      },
+      cranking: {
+        finding: 'slow',
+        readings: [{ what: 'speed', value: 110, unit: 'rpm' }],
+        words: 'cranking speed: 110 rev/min',
+      },
+      'cable-drop': {
+        finding: 'too-high',
+        readings: [{ what: 'ground', value: 1.9, unit: 'V' }],
+        words: 'ground drop engine to battery while cranking: 1.9 V',
+      },
+      'starter-current': {
+        finding: 'low',
+        readings: [{ what: 'mean', value: 90, unit: 'A' }],
+        words: 'starter current: 90 A mean',
+      },
     },
   },
   {
@@ -175,9 +332,20 @@ export const BLIND_CASES: readonly TradeCase[] = [
     others: 'nothing',
     answers: {
       'which-cylinder': { finding: 'one', words: 'which cylinder: number 3' },
-      'coil-primary': { finding: 'no-burn', words: 'coil primary voltage of 3 against the others: kick flat at the clamp, no burn line, long ringing' },
+      'coil-primary': {
+        finding: 'no-burn',
+        words:
+          'coil primary voltage of 3 against the others: kick flat at the clamp, no burn line, long ringing',
+      },
       'injector-pulse': { finding: 'pulses', words: 'injector pulse of 3: like the others' },
-      compression: { finding: 'good', readings: [{ what: 'highest', value: 1180, unit: 'kPa' }, { what: 'lowest', value: 1150, unit: 'kPa' }], words: 'compression of 3: 1150 kPa, others 1180' },
+      compression: {
+        finding: 'good',
+        readings: [
+          { what: 'highest', value: 1180, unit: 'kPa' },
+          { what: 'lowest', value: 1150, unit: 'kPa' },
+        ],
+        words: 'compression of 3: 1150 kPa, others 1180',
+      },
       'coil-swap': { finding: 'follows', words: 'coil of 3 swapped with 2: the fault goes to 2' },
       codes: { finding: 'stored', codes: ['P0303'], words: 'codes: P0303' },
     },
@@ -191,7 +359,10 @@ export const BLIND_CASES: readonly TradeCase[] = [
     answers: {
       story: { finding: 'wet', words: 'misfire, hard start when damp' },
       'which-cylinder': { finding: 'one', words: 'which cylinder: number 1' },
-      'coil-primary': { finding: 'long-burn', words: 'coil primary voltage of 1: low kick and long, low burn line' },
+      'coil-primary': {
+        finding: 'long-burn',
+        words: 'coil primary voltage of 1: low kick and long, low burn line',
+      },
       'coil-swap': { finding: 'stays', words: 'coil swapped: the fault stays on 1' },
       'plugs-look': { finding: 'worn', words: 'plug of 1: black, wet' },
       compression: { finding: 'good', words: 'compression of 1: 1200 kPa' },
@@ -205,8 +376,19 @@ export const BLIND_CASES: readonly TradeCase[] = [
     cause: 'weak-cylinder',
     others: 'nothing',
     answers: {
-      rhythm: { finding: 'uneven', readings: [{ what: 'worst', value: -45, unit: '%' }], words: 'starter current humps: one of four 45 % lower' },
-      compression: { finding: 'one-low', readings: [{ what: 'highest', value: 1220, unit: 'kPa' }, { what: 'lowest', value: 480, unit: 'kPa' }], words: 'compression gauge: 1 1210, 2 1190, 3 480, 4 1220 kPa' },
+      rhythm: {
+        finding: 'uneven',
+        readings: [{ what: 'worst', value: -45, unit: '%' }],
+        words: 'starter current humps: one of four 45 % lower',
+      },
+      compression: {
+        finding: 'one-low',
+        readings: [
+          { what: 'highest', value: 1220, unit: 'kPa' },
+          { what: 'lowest', value: 480, unit: 'kPa' },
+        ],
+        words: 'compression gauge: 1 1210, 2 1190, 3 480, 4 1220 kPa',
+      },
       spark: { finding: 'good', words: 'spark on 3: good' },
       'injector-pulse': { finding: 'pulses', words: 'injector pulse of 3: good' },
     },
@@ -219,13 +401,28 @@ export const BLIND_CASES: readonly TradeCase[] = [
     others: 'nothing',
     answers: {
       spark: { finding: 'good', words: 'spark: present' },
-      'rail-pressure': { finding: 'good', readings: [{ what: 'pressure', value: 400, unit: 'kPa' }], words: 'rail pressure: 400 kPa' },
-      'injector-feed': { finding: 'good', readings: [{ what: 'feed', value: 12.3, unit: 'V' }], words: 'injector feed: 12.3 V' },
+      'rail-pressure': {
+        finding: 'good',
+        readings: [{ what: 'pressure', value: 400, unit: 'kPa' }],
+        words: 'rail pressure: 400 kPa',
+      },
+      'injector-feed': {
+        finding: 'good',
+        readings: [{ what: 'feed', value: 12.3, unit: 'V' }],
+        words: 'injector feed: 12.3 V',
+      },
       'injector-pulse': { finding: 'none', words: 'injector pulse: two pulses at first then none' },
       'crank-trace': { finding: 'regular', words: 'crank signal: healthy' },
       'cam-trace': { finding: 'regular', words: 'cam signal: healthy' },
-      'throttle-data': { finding: 'closed', readings: [{ what: 'position', value: 2, unit: '%' }], words: 'throttle sensor, released: 2 %' },
-      'immobiliser-lamp': { finding: 'blocked', words: 'anti-theft lamp at key on: flashes fast, should go out' },
+      'throttle-data': {
+        finding: 'closed',
+        readings: [{ what: 'position', value: 2, unit: '%' }],
+        words: 'throttle sensor, released: 2 %',
+      },
+      'immobiliser-lamp': {
+        finding: 'blocked',
+        words: 'anti-theft lamp at key on: flashes fast, should go out',
+      },
     },
   },
   {
@@ -235,13 +432,31 @@ export const BLIND_CASES: readonly TradeCase[] = [
     cause: 'main-relay',
     others: 'nothing',
     answers: {
-      story: { finding: 'work', words: 'cranks, no spark and no injection after a repair at the engine harness' },
+      story: {
+        finding: 'work',
+        words: 'cranks, no spark and no injection after a repair at the engine harness',
+      },
       spark: { finding: 'none', words: 'spark: none' },
-      'injector-feed': { finding: 'missing', readings: [{ what: 'feed', value: 0, unit: 'V' }], words: 'injector feed: 0 V' },
-      'coil-feed': { finding: 'missing', readings: [{ what: 'feed', value: 0, unit: 'V' }], words: 'coil feed: 0 V' },
+      'injector-feed': {
+        finding: 'missing',
+        readings: [{ what: 'feed', value: 0, unit: 'V' }],
+        words: 'injector feed: 0 V',
+      },
+      'coil-feed': {
+        finding: 'missing',
+        readings: [{ what: 'feed', value: 0, unit: 'V' }],
+        words: 'coil feed: 0 V',
+      },
       codes: { finding: 'no-answer', words: 'communication with the control unit: none' },
-      'control-supply': { finding: 'missing', readings: [{ what: 'supply', value: 0, unit: 'V' }], words: 'control unit supply behind the main relay at key on: 0 V' },
-      'main-relay': { finding: 'no-output', words: 'main relay coil commanded: battery voltage and ground present, contact stays open' },
+      'control-supply': {
+        finding: 'missing',
+        readings: [{ what: 'supply', value: 0, unit: 'V' }],
+        words: 'control unit supply behind the main relay at key on: 0 V',
+      },
+      'main-relay': {
+        finding: 'no-output',
+        words: 'main relay coil commanded: battery voltage and ground present, contact stays open',
+      },
       // Nothing in the data asks for: crank signal: healthy at the sensor
     },
   },
@@ -253,12 +468,27 @@ export const BLIND_CASES: readonly TradeCase[] = [
     others: 'nothing',
     answers: {
       spark: { finding: 'none', words: 'spark: none' },
-      'coil-feed': { finding: 'missing', readings: [{ what: 'feed', value: 0.3, unit: 'V' }], words: 'coil feed at key on and while cranking: 0.3 V' },
-      'coil-feed-cranking': { finding: 'lost', readings: [{ what: 'feed', value: 0.3, unit: 'V' }], words: 'coil feed at key on and while cranking: 0.3 V' },
-      'coil-command': { finding: 'pulses', words: 'coil command: control side pulses seen when a test lamp is fed' },
+      'coil-feed': {
+        finding: 'missing',
+        readings: [{ what: 'feed', value: 0.3, unit: 'V' }],
+        words: 'coil feed at key on and while cranking: 0.3 V',
+      },
+      'coil-feed-cranking': {
+        finding: 'lost',
+        readings: [{ what: 'feed', value: 0.3, unit: 'V' }],
+        words: 'coil feed at key on and while cranking: 0.3 V',
+      },
+      'coil-command': {
+        finding: 'pulses',
+        words: 'coil command: control side pulses seen when a test lamp is fed',
+      },
       'crank-trace': { finding: 'regular', words: 'crank signal: healthy' },
       'injector-pulse': { finding: 'pulses', words: 'injector pulses: present' },
-      'rail-pressure': { finding: 'good', readings: [{ what: 'pressure', value: 350, unit: 'kPa' }], words: 'rail pressure: 350 kPa' },
+      'rail-pressure': {
+        finding: 'good',
+        readings: [{ what: 'pressure', value: 350, unit: 'kPa' }],
+        words: 'rail pressure: 350 kPa',
+      },
     },
   },
   {
@@ -269,10 +499,23 @@ export const BLIND_CASES: readonly TradeCase[] = [
     others: 'nothing',
     answers: {
       spark: { finding: 'none', words: 'spark: none' },
-      'coil-feed': { finding: 'good', readings: [{ what: 'feed', value: 12.3, unit: 'V' }], words: 'coil feed: 12.3 V' },
-      'coil-command': { finding: 'pulses', readings: [{ what: 'dwell', value: 3.4, unit: 'ms' }], words: 'coil command: pulses of 3.4 ms at the connector' },
+      'coil-feed': {
+        finding: 'good',
+        readings: [{ what: 'feed', value: 12.3, unit: 'V' }],
+        words: 'coil feed: 12.3 V',
+      },
+      'coil-command': {
+        finding: 'pulses',
+        readings: [{ what: 'dwell', value: 3.4, unit: 'ms' }],
+        words: 'coil command: pulses of 3.4 ms at the connector',
+      },
+      'coil-current': {
+        finding: 'none',
+        readings: [{ what: 'peak', value: 0, unit: 'A' }],
+        words: 'coil current: stays at 0 A',
+      },
       'crank-trace': { finding: 'regular', words: 'crank signal: healthy' },
-      // Nothing in the data asks for: coil ground: 0.04 V drop; coil current: stays at 0 A
+      // Nothing in the data asks for: coil ground: 0.04 V drop
     },
   },
   {
@@ -283,10 +526,25 @@ export const BLIND_CASES: readonly TradeCase[] = [
     others: 'nothing',
     answers: {
       spark: { finding: 'good', words: 'spark: good' },
-      'rail-pressure': { finding: 'good', readings: [{ what: 'pressure', value: 360, unit: 'kPa' }], words: 'rail pressure: 360 kPa' },
+      'rail-pressure': {
+        finding: 'good',
+        readings: [{ what: 'pressure', value: 360, unit: 'kPa' }],
+        words: 'rail pressure: 360 kPa',
+      },
       'injector-pulse': { finding: 'pulses', words: 'injector pulses: present' },
-      compression: { finding: 'good', readings: [{ what: 'highest', value: 1100, unit: 'kPa' }, { what: 'lowest', value: 1050, unit: 'kPa' }], words: 'compression: 1050 to 1100 kPa' },
-      exhaust: { finding: 'blocked', readings: [{ what: 'pressure', value: 38, unit: 'kPa' }], words: 'exhaust back pressure: 38 kPa at 2000 rev/min' },
+      compression: {
+        finding: 'good',
+        readings: [
+          { what: 'highest', value: 1100, unit: 'kPa' },
+          { what: 'lowest', value: 1050, unit: 'kPa' },
+        ],
+        words: 'compression: 1050 to 1100 kPa',
+      },
+      exhaust: {
+        finding: 'blocked',
+        readings: [{ what: 'pressure', value: 38, unit: 'kPa' }],
+        words: 'exhaust back pressure: 38 kPa at 2000 rev/min',
+      },
       // Nothing in the data asks for: intake vacuum while cranking and running: falls steadily at raised speed; engine with the front pipe loosened (cold): starts and runs
     },
   },
@@ -299,9 +557,24 @@ export const BLIND_CASES: readonly TradeCase[] = [
     answers: {
       story: { finding: 'work', words: 'cranks, tries to catch, dies at once; air box was opened' },
       spark: { finding: 'good', words: 'spark: good' },
-      'rail-pressure': { finding: 'good', readings: [{ what: 'pressure', value: 400, unit: 'kPa' }], words: 'rail pressure: 400 kPa' },
-      'injector-pulse': { finding: 'pulses', readings: [{ what: 'width', value: 12, unit: 'ms' }], words: 'injector pulses: present, 12 ms' },
-      compression: { finding: 'good', readings: [{ what: 'highest', value: 1000, unit: 'kPa' }, { what: 'lowest', value: 1000, unit: 'kPa' }], words: 'compression: 1000 kPa on all when throttle held open and duct removed' },
+      'rail-pressure': {
+        finding: 'good',
+        readings: [{ what: 'pressure', value: 400, unit: 'kPa' }],
+        words: 'rail pressure: 400 kPa',
+      },
+      'injector-pulse': {
+        finding: 'pulses',
+        readings: [{ what: 'width', value: 12, unit: 'ms' }],
+        words: 'injector pulses: present, 12 ms',
+      },
+      compression: {
+        finding: 'good',
+        readings: [
+          { what: 'highest', value: 1000, unit: 'kPa' },
+          { what: 'lowest', value: 1000, unit: 'kPa' },
+        ],
+        words: 'compression: 1000 kPa on all when throttle held open and duct removed',
+      },
       'intake-look': { finding: 'blocked', words: 'air filter and duct: rag found in the duct' },
       exhaust: { finding: 'free', words: 'exhaust back pressure: normal' },
     },
@@ -314,10 +587,20 @@ export const BLIND_CASES: readonly TradeCase[] = [
     others: 'nothing',
     answers: {
       story: { finding: 'heat', words: 'stalls when warm, restarts after twenty minutes' },
-      'crank-trace': { finding: 'breaks', words: 'crank signal at the moment it does not restart (hot): breaks up, then flat' },
-      'crank-heat': { finding: 'fails', words: 'crank signal at the moment it does not restart (hot): breaks up, then flat' },
+      'crank-trace': {
+        finding: 'breaks',
+        words: 'crank signal at the moment it does not restart (hot): breaks up, then flat',
+      },
+      'crank-heat': {
+        finding: 'fails',
+        words: 'crank signal at the moment it does not restart (hot): breaks up, then flat',
+      },
       spark: { finding: 'none', words: 'spark hot: none' },
-      'rail-pressure': { finding: 'good', readings: [{ what: 'pressure', value: 350, unit: 'kPa' }], words: 'rail pressure hot: 350 kPa' },
+      'rail-pressure': {
+        finding: 'good',
+        readings: [{ what: 'pressure', value: 350, unit: 'kPa' }],
+        words: 'rail pressure hot: 350 kPa',
+      },
       'crank-winding': { finding: 'off', words: 'sensor resistance hot: open; cold 870 ohm' },
       'crank-type': { finding: 'two-wire', words: 'sensor resistance hot: open; cold 870 ohm' },
       codes: { finding: 'stored', codes: ['P0336'], words: 'codes: P0336' },
@@ -333,10 +616,22 @@ export const BLIND_CASES: readonly TradeCase[] = [
     answers: {
       story: { finding: 'stood', words: 'cranks long before it starts, sometimes not; worse after standing' },
       spark: { finding: 'good', words: 'spark: good' },
-      'rail-pressure': { finding: 'falls-off', readings: [{ what: 'pressure', value: 350, unit: 'kPa' }, { what: 'after', value: 20, unit: 'kPa' }], words: 'rail pressure ten minutes after key off: 20 kPa' },
+      'rail-pressure': {
+        finding: 'falls-off',
+        readings: [
+          { what: 'pressure', value: 350, unit: 'kPa' },
+          { what: 'after', value: 20, unit: 'kPa' },
+        ],
+        words: 'rail pressure ten minutes after key off: 20 kPa',
+      },
+      'injector-leak': { finding: 'dry', words: 'injector leak test: dry' },
       'injector-pulse': { finding: 'pulses', words: 'injector pulses: present' },
-      'pump-supply': { finding: 'good', readings: [{ what: 'volts', value: 11.4, unit: 'V' }], words: 'pump supply while cranking: 11.4 V' },
-      // Nothing in the data asks for: rail pressure at key on: 350 kPa; injector leak test: dry
+      'pump-supply': {
+        finding: 'good',
+        readings: [{ what: 'volts', value: 11.4, unit: 'V' }],
+        words: 'pump supply while cranking: 11.4 V',
+      },
+      // Nothing in the data asks for: rail pressure at key on: 350 kPa
     },
   },
   {
@@ -350,7 +645,11 @@ export const BLIND_CASES: readonly TradeCase[] = [
       'which-cylinder': { finding: 'one', words: 'misfire on cylinder 2 after the engine was washed' },
       'coil-primary': { finding: 'good', words: 'coil primary of 2: like the others, normal burn' },
       compression: { finding: 'good', words: 'compression of 2: 1180 kPa' },
-      'injector-feed': { finding: 'good', readings: [{ what: 'feed', value: 12.4, unit: 'V' }], words: 'injector feed of 2: 12.4 V' },
+      'injector-feed': {
+        finding: 'good',
+        readings: [{ what: 'feed', value: 12.4, unit: 'V' }],
+        words: 'injector feed of 2: 12.4 V',
+      },
       'injector-one': { finding: 'bad', words: 'injector resistance of 2: open; others 14.2 ohm' },
       codes: { finding: 'stored', codes: ['P0202'], words: 'codes: P0202' },
       // Nothing in the data asks for: injector signal of 2: stays at supply, no kick, control side commanded
@@ -367,8 +666,16 @@ export const BLIND_CASES: readonly TradeCase[] = [
       'injector-pulse': { finding: 'none', words: 'injector pulse: none' },
       'crank-trace': { finding: 'none', words: 'crank signal: stays at 0 V' },
       'crank-type': { finding: 'three-wire', words: 'cranks, no start; three-wire crank sensor' },
-      'crank-supply': { finding: 'missing', readings: [{ what: 'supply', value: 0.1, unit: 'V' }], words: 'sensor supply at its connector, plugged in, key on: 0.1 V' },
-      reference: { finding: 'good', readings: [{ what: 'volts', value: 5.0, unit: 'V' }], words: 'control unit\'s reference voltage at another sensor: 5.0 V' },
+      'crank-supply': {
+        finding: 'missing',
+        readings: [{ what: 'supply', value: 0.1, unit: 'V' }],
+        words: 'sensor supply at its connector, plugged in, key on: 0.1 V',
+      },
+      reference: {
+        finding: 'good',
+        readings: [{ what: 'volts', value: 5.0, unit: 'V' }],
+        words: "control unit's reference voltage at another sensor: 5.0 V",
+      },
       codes: { finding: 'stored', codes: ['P0335'], words: 'codes: P0335' },
       // Nothing in the data asks for: sensor ground: 0.02 V
     },
@@ -380,12 +687,30 @@ export const BLIND_CASES: readonly TradeCase[] = [
     cause: 'wrong-fuel',
     others: 'nothing',
     answers: {
-      story: { finding: 'refuelled', words: 'ran out of petrol last week, refilled, cranks, no start; smells different' },
+      story: {
+        finding: 'refuelled',
+        words: 'ran out of petrol last week, refilled, cranks, no start; smells different',
+      },
       spark: { finding: 'good', words: 'spark: good' },
-      'rail-pressure': { finding: 'good', readings: [{ what: 'pressure', value: 350, unit: 'kPa' }], words: 'rail pressure: 350 kPa' },
+      'rail-pressure': {
+        finding: 'good',
+        readings: [{ what: 'pressure', value: 350, unit: 'kPa' }],
+        words: 'rail pressure: 350 kPa',
+      },
       'injector-pulse': { finding: 'pulses', words: 'injector pulses: present' },
-      'injector-feed': { finding: 'good', readings: [{ what: 'feed', value: 12.4, unit: 'V' }], words: 'injector feed: 12.4 V' },
-      compression: { finding: 'good', readings: [{ what: 'highest', value: 1200, unit: 'kPa' }, { what: 'lowest', value: 1200, unit: 'kPa' }], words: 'compression: 1200 kPa all' },
+      'injector-feed': {
+        finding: 'good',
+        readings: [{ what: 'feed', value: 12.4, unit: 'V' }],
+        words: 'injector feed: 12.4 V',
+      },
+      compression: {
+        finding: 'good',
+        readings: [
+          { what: 'highest', value: 1200, unit: 'kPa' },
+          { what: 'lowest', value: 1200, unit: 'kPa' },
+        ],
+        words: 'compression: 1200 kPa all',
+      },
       'starting-fluid': { finding: 'runs', words: 'starting fluid: runs shortly' },
       'fuel-sample': { finding: 'wrong', words: 'fuel sample: cloudy, separates in a glass' },
       'plugs-look': { finding: 'wet', words: 'plugs: wet' },

@@ -33,12 +33,13 @@ export interface CaseEnd {
   readonly contradictions: readonly string[];
 }
 
-/** Steps that make safe are done when they are asked for: a case has nothing to say about them. */
+/** Steps that make safe are done, and unremarkable, when they are asked for and the case has nothing to say about them. */
 const DONE: Readonly<Partial<Record<CheckId, string>>> = {
   'high-voltage': 'none',
   'fuel-leak': 'dry',
   'fluid-allowed': 'yes',
   'pressure-relieved': 'done',
+  'turn-by-hand': 'free',
 };
 
 export type Choose = (reasoned: Reasoned) => CheckId | null;

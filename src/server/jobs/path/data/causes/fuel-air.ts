@@ -70,8 +70,9 @@ export const fuelAirCauses = {
     part: 'pressure regulator or check valve',
     because: 'Pressure is low or does not stay, so the rail is empty at the next start.',
     weight: { 'cranks-no-start': 1, stall: 1, misfire: 1 },
-    proof: [['fuel-flow:regulator']],
-    prove: 'Pressure comes up with the return closed by the maker’s method, or falls away at the regulator.',
+    proof: [['fuel-flow:regulator'], ['rail-pressure:falls-off', 'injector-leak:dry']],
+    prove:
+      'Pressure comes up with the return closed by the maker’s method, or it falls away after key off with the injectors dry.',
   },
   'injector-feed': {
     name: 'Feed of the injectors',
@@ -97,6 +98,15 @@ export const fuelAirCauses = {
     weight: { 'cranks-no-start': 1, misfire: 1 },
     proof: [['injector-delivery:none']],
     prove: 'Pressure does not drop when an injector is pulsed, pressure, feed and pulse being good.',
+  },
+  'injector-leak': {
+    name: 'Injector leaks',
+    part: 'injector',
+    because: 'It drips with the key off: the rail runs empty and the cylinder floods.',
+    weight: { 'cranks-no-start': 1, misfire: 1 },
+    proof: [['injector-leak:leaks']],
+    prove:
+      'An injector is seen dripping under rail pressure, or its cylinder is wet and its neighbours are not.',
   },
   'throttle-sensor': {
     name: 'Throttle sensor reads wide open',

@@ -7,8 +7,8 @@ export const ignitionCauses = {
     part: 'plugs (dry them), then what flooded it',
     because: 'Wet plugs short the spark to ground.',
     weight: { 'cranks-no-start': 3, misfire: 1 },
-    proof: [['plugs-look:wet', 'spark:good']],
-    prove: 'The plugs come out wet with fuel although there is a spark.',
+    proof: [['plugs-look:wet', 'plugs-dried:starts']],
+    prove: 'The plugs come out wet, and with dry plugs and cleared cylinders it starts.',
   },
   plugs: {
     name: 'Plugs worn, fouled or cracked',
@@ -31,17 +31,27 @@ export const ignitionCauses = {
     part: 'coil',
     because: 'Feed and command arrive and no high voltage leaves.',
     weight: { 'cranks-no-start': 2, misfire: 4, stall: 1 },
-    proof: [['coil-swap:follows'], ['coil-primary:no-kick', 'coil-feed:good', 'coil-command:pulses']],
+    proof: [
+      ['coil-swap:follows'],
+      ['coil-primary:no-kick', 'coil-feed:good', 'coil-command:pulses'],
+      ['coil-current:none', 'coil-feed:good', 'coil-command:pulses'],
+      ['coil-current:step'],
+    ],
     prove:
-      'Feed and command are good and no kick comes, or the fault goes with the coil to another cylinder.',
+      'Feed and command are good and no current flows or no kick comes, or the fault goes with the coil to another cylinder.',
   },
   'coil-feed': {
-    name: 'Feed of the coils: relay or wiring after the fuse',
-    part: 'coil relay or feed wire',
+    name: 'Feed of the coils: their relay, fuse or wire',
+    part: 'relay, fuse or wire of the coil feed',
     because: 'No battery voltage at the coil, so nothing can charge.',
     weight: { 'cranks-no-start': 3, stall: 1, misfire: 1 },
-    proof: [['coil-feed:missing', 'fuses:good', 'coil-feed-trace:open']],
-    prove: 'No feed at the coil although fuse and main relay pass it: the feed wire or its relay is open.',
+    proof: [
+      ['coil-feed:missing', 'fuses:good', 'main-relay:output'],
+      ['coil-feed:missing', 'coil-feed-trace:open'],
+      ['coil-feed:missing', 'coil-command:pulses', 'coil-feed-cranking:lost'],
+    ],
+    prove:
+      'No feed at the coil, key on and cranking, although the control unit is awake, or although fuse and main relay pass it.',
   },
   'coil-driver': {
     name: 'Coil driver, ignition module or command wire',
@@ -70,9 +80,14 @@ export const ignitionCauses = {
     part: 'crank sensor wiring',
     because: 'The signal is made and is lost or broken on its way.',
     weight: { 'cranks-no-start': 3, stall: 4 },
-    proof: [['crank-at-sensor:there'], ['crank-supply:missing', 'reference:good'], ['crank-wiggle:breaks']],
+    proof: [
+      ['crank-at-sensor:there'],
+      ['crank-supply:missing', 'reference:good'],
+      ['crank-wiggle:breaks'],
+      ['crank-trace:inverted'],
+    ],
     prove:
-      'Signal at the sensor and none at the control unit, a supply that does not arrive, or a trace that breaks when the loom is moved.',
+      'Signal at the sensor and none at the control unit, a supply that does not arrive, a trace that breaks when the loom is moved, or one that is upside down against a known-good with the same lead order.',
   },
   'crank-gap': {
     name: 'Crank sensor loose, air gap wide or metal dust on it',
@@ -108,8 +123,13 @@ export const ignitionCauses = {
     part: 'timing belt or chain',
     because: 'Valves and spark come at the wrong time.',
     weight: { 'cranks-no-start': 2, misfire: 2 },
-    proof: [['belt-look:slipped']],
-    prove: 'Timing marks do not line up with the engine turned by hand as the maker has it.',
+    proof: [
+      ['belt-look:slipped'],
+      ['cam-phase:outside', 'compression:all-low'],
+      ['cam-phase:outside', 'compression:one-low'],
+    ],
+    prove:
+      'Timing marks do not line up by hand; or the cam is shifted against a known-good and the compression is low with it.',
   },
   'timing-broken': {
     name: 'Timing belt or chain broken',

@@ -24,7 +24,7 @@ export const startCauses = {
     part: 'starter',
     because:
       'It draws much current and turns slowly although supply and engine are sound, or it does not turn at all with supply at hand.',
-    weight: { 'slow-crank': 4, 'cranks-no-start': 1 },
+    weight: { 'slow-crank': 4 },
     proof: [
       ['starter-current:high', 'turn-by-hand:free'],
       ['starter-feed:there', 'turn-by-hand:free'],
@@ -103,9 +103,12 @@ export const startCauses = {
     part: 'immobiliser, key or aerial',
     because: 'It blocks injection, ignition or the starter although the parts are sound.',
     weight: { 'cranks-no-start': 3, stall: 1 },
-    proof: [['immobiliser-data:refused']],
+    proof: [
+      ['immobiliser-data:refused'],
+      ['immobiliser-lamp:blocked', 'injector-pulse:none', 'crank-trace:regular'],
+    ],
     prove:
-      'The control unit reports that the key was not accepted; a second key that is known to the vehicle starts it.',
+      'The control unit reports that the key was not accepted; or its lamp says so and injection is withheld with a whole crank signal. A second key known to the vehicle starts it.',
   },
   'reference-short': {
     name: 'Sensor supply pulled down by a shorted sensor or wire',

@@ -208,7 +208,7 @@ export const fuelChecks = {
       },
     },
     findings: {
-      good: { result: 'good', says: 'right, and stays', rulesOut: [...fuelSupply] },
+      good: { result: 'good', says: 'right, and stays', rulesOut: [...fuelSupply, 'injector-leak'] },
       none: {
         result: 'bad',
         says: 'none',
@@ -234,7 +234,7 @@ export const fuelChecks = {
       'falls-off': {
         result: 'bad',
         says: 'right, then falls off',
-        fits: ['regulator', 'plugs-wet'],
+        fits: ['regulator', 'injector-leak'],
         rulesOut: ['fuel-cutoff', 'pump-relay', 'pump-wiring', 'tank-empty', 'fuel-filter'],
       },
     },
@@ -538,6 +538,23 @@ export const fuelChecks = {
     cautions: ['fuelPressure', 'fuelVapour'],
     source: practice,
   }),
+  'injector-leak': {
+    title: 'Injectors after key off',
+    question: 'Do the injectors stay dry under rail pressure with the key off?',
+    how: 'Rail pressure up, key off; look at the plugs one by one after ten minutes, or at the rail lifted by the maker’s method.',
+    stage: 'fuel',
+    needs: ['plug socket', 'lamp'],
+    minutes: 20,
+    risk: 1,
+    first: [['fuel-leak:dry'], ['rail-pressure:falls-off', 'plugs-look:wet']],
+    readings: {},
+    findings: {
+      dry: { result: 'good', says: 'dry', rulesOut: ['injector-leak'] },
+      leaks: { result: 'bad', says: 'one drips', fits: ['injector-leak'] },
+    },
+    cautions: ['fuelPressure', 'fuelVapour'],
+    source: practice,
+  },
   'injector-one': {
     title: 'One injector against the others',
     question: 'Does the injector of that cylinder differ from the others?',

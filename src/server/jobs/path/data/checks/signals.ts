@@ -52,6 +52,12 @@ export const signalChecks = {
         fits: ['crank-wheel', 'crank-gap'],
         rulesOut: ['reference-short'],
       },
+      inverted: {
+        result: 'bad',
+        says: 'whole, but upside down against a known-good with the same lead order',
+        fits: ['crank-wiring'],
+        rulesOut: ['crank-sensor', 'crank-gap', 'crank-wheel', 'reference-short'],
+      },
       breaks: {
         result: 'bad',
         says: 'breaks off and returns',
