@@ -41,6 +41,8 @@ export const THINGS = [
   'attempt',
   'invitation',
   'webhook',
+  'job',
+  'jobEntry',
 ] as const;
 export type Thing = (typeof THINGS)[number];
 

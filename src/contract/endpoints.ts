@@ -1,4 +1,5 @@
 import { captureEndpoints, pictureEndpoints, uploadEndpoints } from './areas/captures.ts';
+import { jobEndpoints } from './areas/jobs.ts';
 import { libraryEndpoints } from './areas/library.ts';
 import { markEndpoints } from './areas/marks.ts';
 import { ownerEndpoints } from './areas/owner.ts';
@@ -17,6 +18,7 @@ export const ENDPOINTS = defineEndpoints({
   ...markEndpoints,
   ...sharingEndpoints,
   ...libraryEndpoints,
+  ...jobEndpoints,
   ...teachingEndpoints,
   ...peopleEndpoints,
   ...ownerEndpoints,

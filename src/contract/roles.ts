@@ -44,6 +44,10 @@ export const ACCESS = {
   remove: row('yes', 'yes', 'own', 'own', 'write'),
   /** What a learner has no part in. */
   seeStaff: row('yes', 'yes', 'yes', 'no', 'read'),
+  /** Change what a learner has no part in. */
+  changeStaff: row('yes', 'yes', 'yes', 'no', 'write'),
+  /** The same for deleting: a technician only what they made. */
+  removeStaff: row('yes', 'yes', 'own', 'no', 'write'),
   propose: row('yes', 'yes', 'yes', 'no', 'write'),
   review: row('yes', 'yes', 'no', 'no', 'write'),
   teach: row('yes', 'yes', 'no', 'no', 'write'),

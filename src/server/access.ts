@@ -15,6 +15,8 @@ export type { CaptureRecord } from './access/doors/capture.ts';
 export type { ComparisonRecord } from './access/doors/comparison.ts';
 export type { ExerciseRecord } from './access/doors/exercise.ts';
 export type { InvitationRecord } from './access/doors/invitation.ts';
+export type { JobRecord } from './access/doors/job.ts';
+export type { JobEntryRecord } from './access/doors/job-entry.ts';
 export type { KnownGoodRecord } from './access/doors/known-good.ts';
 export type { MarkRecord } from './access/doors/mark.ts';
 export type { SetRecord } from './access/doors/set.ts';

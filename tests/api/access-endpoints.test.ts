@@ -115,6 +115,10 @@ const BODIES: Partial<Record<EndpointId, (things: Things) => unknown>> = {
   'exercises.patch': () => ({ title: 'F' }),
   'attempts.create': () => ({ cause: 'wide-gap' }),
   'attempts.judge': () => ({ mark: 'right' }),
+  'jobs.create': () => ({ complaint: 'Cranks, does not start' }),
+  'jobs.patch': () => ({ complaint: 'Cranks slowly' }),
+  'jobEntries.create': () => ({ kind: 'note', text: 'n' }),
+  'jobEntries.patch': () => ({ text: 'n' }),
   'comparisons.create': ({ knownGood }) => ({ signal: 0, knownGoodId: knownGood }),
 };
 

@@ -15,6 +15,8 @@ const ROWS: Readonly<Record<AccessName, string>> = {
   change: 'yyyo',
   remove: 'yyoo',
   seeStaff: 'yyyn',
+  changeStaff: 'yyyn',
+  removeStaff: 'yyon',
   propose: 'yyyn',
   review: 'yynn',
   teach: 'yynn',

@@ -177,9 +177,11 @@ export interface Things {
   readonly attempt: string;
   readonly invitation: string;
   readonly webhook: string;
+  readonly job: string;
+  readonly jobEntry: string;
 }
 
-/** A capture of two signals with a mark, two links, an answer, a known-good and a comparison; an invitation and a webhook. */
+/** A capture of two signals with a mark, two links, an answer, a known-good and a comparison, a set with an exercise, a job with a note. */
 export async function makeThings(
   workshopId: string,
   maker: Person,
@@ -200,6 +202,8 @@ export async function makeThings(
     attempt: newId(),
     invitation: newId(),
     webhook: newId(),
+    job: newId(),
+    jobEntry: newId(),
   };
   const axis = JSON.stringify({ kind: 'even', startS: 0, stepS: 0.001, count: 1000 });
   await pool.query(
@@ -264,6 +268,7 @@ export async function makeThings(
      values ($1, $2, $3, 'https://receiver.example/', '', null)`,
     [things.webhook, workshopId, maker.id],
   );
+  await makeJob(workshopId, maker, things);
   return things;
 }
 
@@ -342,6 +347,18 @@ async function makeTeaching(workshopId: string, maker: Person, things: Things): 
       JSON.stringify({ text: 'It is bent.' }),
       JSON.stringify({ text: { mark: 'waiting', why: '' } }),
     ],
+  );
+}
+
+async function makeJob(workshopId: string, maker: Person, { job, jobEntry }: Things): Promise<void> {
+  await pool.query(
+    `insert into job (id, workshop_id, number, created_by, make, model, complaint)
+     values ($1, $2, (random() * 1e9)::int, $3, 'Corvane', 'Talin', 'Cranks, does not start')`,
+    [job, workshopId, maker.id],
+  );
+  await pool.query(
+    `insert into job_entry (id, job_id, created_by, author, kind, text) values ($1, $2, $3, $4, 'note', 'smells of fuel')`,
+    [jobEntry, job, maker.id, maker.name],
   );
 }
 

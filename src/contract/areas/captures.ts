@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { defineEndpoints } from '../endpoint.ts';
-import { finite, id, isoTime, jobReference, listOf, pageQuery, text } from './common.ts';
+import { finite, id, isoTime, listOf, pageQuery, text } from './common.ts';
 import { circuit, notice, value } from './values.ts';
 
 export const CAPTURE_STATUSES = ['queued', 'reading', 'measuring', 'ready', 'failed', 'cancelled'] as const;
@@ -20,7 +20,8 @@ export const signalRequests = z.array(signalRequest).max(256);
 /** Fields beside the file, the same in multipart and in the upload metadata (there all are strings). */
 export const uploadFields = z.object({
   title: text(200).optional(),
-  jobId: jobReference.optional(),
+  /** A job of the workshop that the capture belongs to. */
+  jobId: id.optional(),
   cylinders: z.coerce.number().int().min(1).max(16).optional(),
   signals: z
     .string()
@@ -214,7 +215,7 @@ export const capturePatch = z
     title: text(200).pipe(z.string().min(1)),
     note: text(5_000),
     cylinders: z.number().int().min(1).max(16).nullable(),
-    jobId: jobReference.nullable(),
+    jobId: id.nullable(),
     signals: signalRequests,
     reading: readingHints,
   })

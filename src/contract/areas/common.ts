@@ -1,9 +1,6 @@
 import { z } from 'zod';
 
 export const id = z.string().regex(/^[a-z0-9]{16,40}$/);
-/** The id of a job. Jobs are not kept yet, so an id names none: it is refused rather than stored unchecked. */
-export const jobReference = id.refine(() => false, 'there is no such job');
-
 export const isoTime = z.string().datetime();
 
 /** Seconds of the capture's own axis. */

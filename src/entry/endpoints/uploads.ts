@@ -2,7 +2,9 @@ import type { EndpointId } from '../../contract/endpoints.ts';
 import { beginUpload } from '../../server/captures/uploads/begin-upload.ts';
 import { dropUpload } from '../../server/captures/uploads/drop-upload.ts';
 import { findUpload, type UploadRecord } from '../../server/captures/uploads/find-upload.ts';
+import { db } from '../../server/db/client.ts';
 import { ApiError } from '../../server/errors.ts';
+import { checkJob } from '../../server/jobs/check-job.ts';
 import { call } from '../call.ts';
 import { checkCreation } from '../tus/check-creation.ts';
 import { beginsAs, finish, tus } from '../tus/tus-server.ts';
@@ -26,7 +28,8 @@ export const uploadsEndpoint =
       throw new ApiError('stale', { message: 'This address speaks tus 1.0.0; say so in Tus-Resumable.' });
     }
     if (id === 'uploads.create') {
-      const { length, metadata } = checkCreation(header);
+      const { length, metadata, fields } = checkCreation(header);
+      await checkJob(db(), caller.workshopId, fields.jobId, caller.role === 'learner');
       beginsAs(request, await beginUpload(caller, length, metadata));
       return handle(front);
     }

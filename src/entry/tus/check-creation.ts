@@ -15,8 +15,7 @@ export function checkCreation(header: (name: string) => string | undefined) {
     });
   }
   const metadata = parse(text);
-  fieldsOf(metadata);
-  return { length, metadata };
+  return { length, metadata, fields: fieldsOf(metadata) };
 }
 
 function lengthOf(text: string | undefined, deferred: string | undefined): number {

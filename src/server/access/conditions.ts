@@ -1,4 +1,4 @@
-import { and, eq, isNull, or, type SQL, sql } from 'drizzle-orm';
+import { and, eq, isNull, ne, or, type SQL, sql } from 'drizzle-orm';
 import type { PgColumn } from 'drizzle-orm/pg-core';
 import { capture, membership } from '../db/schema.ts';
 import type { PersonCaller } from './caller.ts';
@@ -29,6 +29,9 @@ export function memberOf(person: PersonCaller, workshopId: PgColumn): SQL | unde
     person.via === 'token' ? eq(membership.workshopId, person.workshopId) : undefined,
   );
 }
+
+/** Jobs and what belongs to them do not exist for learners. */
+export const jobVisible = (): SQL => ne(membership.role, 'learner');
 
 /** Not hidden, or hidden so lately that it can still be brought back. */
 export const reachable = (deletedAt: PgColumn, deleted = false): SQL | undefined =>

@@ -6,6 +6,8 @@ import { captureDoor } from './doors/capture.ts';
 import { comparisonDoor } from './doors/comparison.ts';
 import { exerciseDoor } from './doors/exercise.ts';
 import { invitationDoor } from './doors/invitation.ts';
+import { jobDoor } from './doors/job.ts';
+import { jobEntryDoor } from './doors/job-entry.ts';
 import { knownGoodDoor } from './doors/known-good.ts';
 import { markDoor } from './doors/mark.ts';
 import { setDoor } from './doors/set.ts';
@@ -25,6 +27,8 @@ export const OPENERS = {
   attempt: openThrough(attemptDoor),
   invitation: openThrough(invitationDoor),
   webhook: openThrough(webhookDoor),
+  job: openThrough(jobDoor),
+  jobEntry: openThrough(jobEntryDoor),
 } as const satisfies Record<Thing, unknown>;
 
 /** What each kind of thing opens as. */

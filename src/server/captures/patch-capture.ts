@@ -6,6 +6,7 @@ import type { CaptureRecord, PersonCaller } from '../access.ts';
 import { capture } from '../db/schema.ts';
 import { ApiError } from '../errors.ts';
 import { checkIfMatch } from '../http/etag.ts';
+import { checkJob } from '../jobs/check-job.ts';
 import { QUEUES, type ReadJob } from '../queue/names.ts';
 import { inTransaction } from '../queue/transaction.ts';
 import { STOP_CHANNEL } from './cancel-capture.ts';
@@ -30,6 +31,7 @@ export async function patchCapture(
     const [now] = await tx.select().from(capture).where(eq(capture.id, row.id)).for('update');
     if (now === undefined || now.deletedAt !== null) throw new ApiError('not_found');
     checkIfMatch(ifMatch, now.edition);
+    await checkJob(tx, now.workshopId, patch.jobId, now.practice);
     const kind = await workFor(now, patch, () => pendingKind(queueDb, now));
     const [changed] = await tx
       .update(capture)

@@ -1,5 +1,6 @@
 /** Every table, one file an area; the migrations are generated from here. */
 export * from './schema/captures.ts';
+export * from './schema/jobs.ts';
 export * from './schema/library.ts';
 export * from './schema/owner.ts';
 export * from './schema/people.ts';

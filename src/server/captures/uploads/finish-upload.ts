@@ -5,6 +5,7 @@ import { membership, upload } from '../../db/schema.ts';
 import { ApiError } from '../../errors.ts';
 import { validate } from '../../http/validate.ts';
 import { newId } from '../../ids.ts';
+import { checkJob, hasJob } from '../../jobs/check-job.ts';
 import { inTransaction } from '../../queue/transaction.ts';
 import { createCapture } from '../create-capture.ts';
 import { cleanFileName } from '../title-of.ts';
@@ -33,12 +34,18 @@ export async function finishUpload(uploadId: string, arrived?: Arrived): Promise
       .from(membership)
       .where(and(eq(membership.personId, personId), eq(membership.workshopId, workshopId)));
     if (held === undefined) throw new ApiError('not_found');
+    const practice = held.role === 'learner';
+    const fields = arrived?.fields ?? fieldsOf(row.metadata);
+    if (arrived !== undefined) await checkJob(tx, workshopId, fields.jobId, practice);
+    // A resumable upload was let in for a job; when that has gone since, what was sent is kept all the same.
+    else if (fields.jobId !== undefined && (practice || !(await hasJob(tx, workshopId, fields.jobId))))
+      delete fields.jobId;
     const { id } = await createCapture(
       { tx, send },
       {
         id: newId(),
         caller: { personId, workshopId, role: held.role },
-        fields: arrived?.fields ?? fieldsOf(row.metadata),
+        fields,
         fileName: arrived?.fileName ?? cleanFileName(row.metadata.filename ?? undefined),
         originalKey: uploadId,
         bytes: arrived?.bytes ?? row.length,

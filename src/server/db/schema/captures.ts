@@ -17,6 +17,7 @@ import type { RelationFindings, SignalFindings, Wheel } from '../../../engine/ca
 import type { Circuit } from '../../../engine/circuit.ts';
 import type { PreviewLine, Reading, ReadingHints } from '../../../engine/reading/types.ts';
 import { at, createdAt, edition } from './columns.ts';
+import { job } from './jobs.ts';
 import { person, workshop } from './workshop.ts';
 
 /** A resumable upload; `id` is also the object's key in the store. */
@@ -67,7 +68,7 @@ export const capture = pgTable(
       .references(() => person.id),
     title: text('title').notNull(),
     note: text('note').notNull().default(''),
-    jobId: text('job_id'),
+    jobId: text('job_id').references(() => job.id, { onDelete: 'set null' }),
     /** A learner's own: seen by its maker and by instructors and owners. */
     practice: boolean('practice').notNull().default(false),
     status: text('status').$type<CaptureStatus>().notNull().default('queued'),
@@ -96,6 +97,7 @@ export const capture = pgTable(
   },
   (t) => [
     index('capture_workshop_created').on(t.workshopId, t.createdAt, t.id),
+    index('capture_job').on(t.jobId),
     index('capture_title_trgm').using('gin', sql`${t.title} gin_trgm_ops`),
     index('capture_deleted').on(t.deletedAt).where(sql`${t.deletedAt} is not null`),
   ],
