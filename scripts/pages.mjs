@@ -42,6 +42,13 @@ export const pages = [
   { name: 'library', path: '/library', lookers: people },
   { name: 'known-good', path: '/library/{knownGood}', lookers: staff },
   { name: 'teaching', path: '/teaching', lookers: people },
+  { name: 'set', path: '/teaching/sets/{set}', lookers: people },
+  { name: 'set-new', path: '/teaching/sets/new', lookers: ['instructor'] },
+  { name: 'set-edit', path: '/teaching/sets/{set}/edit', lookers: ['instructor'] },
+  { name: 'exercise', path: '/teaching/exercises/{exercise}', lookers: people },
+  { name: 'exercise-new', path: '/teaching/exercises/new', lookers: ['instructor'] },
+  { name: 'exercise-edit', path: '/teaching/exercises/{exercise}/edit', lookers: ['instructor'] },
+  { name: 'exercise-answers', path: '/teaching/exercises/{exercise}/answers', lookers: ['instructor'] },
   { name: 'workshop', path: '/workshop', lookers: people },
 ];
 

@@ -32,7 +32,9 @@ export async function demoThings(origin, token, say) {
     (await ask(`/captures/${capture}/share-links`, { question: 'Is this gap right?', mayAnswer: true }));
   const share = link ? (new URL(link.url).pathname.split('/').pop() ?? '') : '';
   const comparison = knownGood ? await compare(ask, ready, knownGood) : '';
-  const things = { capture, knownGood, share, comparison };
+  const set = (await ask('/sets?limit=1'))?.items?.[0]?.id ?? '';
+  const exercise = (await ask('/exercises?limit=1'))?.items?.[0]?.id ?? '';
+  const things = { capture, knownGood, share, comparison, set, exercise };
   for (const [name, id] of Object.entries(things))
     if (!id) say(`! The demo has no ${name}: its pages are left out`);
   return things;
