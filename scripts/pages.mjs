@@ -42,6 +42,7 @@ export const pages = [
   { name: 'library', path: '/library', lookers: people },
   { name: 'known-good', path: '/library/{knownGood}', lookers: staff },
   { name: 'teaching', path: '/teaching', lookers: people },
+  { name: 'import', path: '/teaching/import', lookers: ['instructor'] },
   { name: 'set', path: '/teaching/sets/{set}', lookers: people },
   { name: 'set-new', path: '/teaching/sets/new', lookers: ['instructor'] },
   { name: 'set-edit', path: '/teaching/sets/{set}/edit', lookers: ['instructor'] },

@@ -1,4 +1,5 @@
 import { captureEndpoints, pictureEndpoints, uploadEndpoints } from './areas/captures.ts';
+import { importEndpoints } from './areas/import.ts';
 import { jobEndpoints } from './areas/jobs.ts';
 import { libraryEndpoints } from './areas/library.ts';
 import { markEndpoints } from './areas/marks.ts';
@@ -15,6 +16,7 @@ export const ENDPOINTS = defineEndpoints({
   ...captureEndpoints,
   ...pictureEndpoints,
   ...uploadEndpoints,
+  ...importEndpoints,
   ...markEndpoints,
   ...sharingEndpoints,
   ...libraryEndpoints,

@@ -32,6 +32,7 @@ export const PAGES = {
   '/teaching/exercises/{id}': 'self',
   '/teaching/exercises/{id}/edit': 'teach',
   '/teaching/exercises/{id}/answers': 'seeTeach',
+  '/teaching/import': 'teach',
   '/teaching/sets/new': 'teach',
   '/teaching/sets/{id}': 'self',
   '/teaching/sets/{id}/edit': 'teach',

@@ -107,6 +107,7 @@ const BODIES: Partial<Record<EndpointId, (things: Things) => unknown>> = {
   }),
   'knownGoods.patch': () => ({ note: 'n' }),
   'knownGoods.review': () => ({ decision: 'return' }),
+  'captures.checkImport': () => ({ csv: 'file\na.csv\n', files: ['a.csv'] }),
   'sets.create': () => ({ title: 'S' }),
   'sets.patch': () => ({ title: 'T' }),
   'sets.addItem': () => ({ kind: 'text', text: 'Look at the gap first.' }),

@@ -20,6 +20,7 @@ interface SendRequest {
   readonly file: File;
   readonly title: string | null;
   readonly cylinders: number | null;
+  readonly note?: string;
 }
 
 const RETRY_MS = [0, 1_000, 3_000, 6_000, 12_000];
@@ -34,6 +35,7 @@ export async function sendFile(request: SendRequest, events: SendEvents): Promis
   const metadata: Record<string, string> = { filename: request.file.name };
   if (request.title !== null) metadata.title = request.title;
   if (request.cylinders !== null) metadata.cylinders = String(request.cylinders);
+  if (request.note) metadata.note = request.note;
   const upload: Upload = new tus.Upload(request.file, {
     endpoint: '/api/v1/uploads',
     metadata,

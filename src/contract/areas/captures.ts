@@ -20,6 +20,7 @@ export const signalRequests = z.array(signalRequest).max(256);
 /** Fields beside the file, the same in multipart and in the upload metadata (there all are strings). */
 export const uploadFields = z.object({
   title: text(200).optional(),
+  note: text(2_000).optional(),
   /** A job of the workshop that the capture belongs to. */
   jobId: id.optional(),
   cylinders: z.coerce.number().int().min(1).max(16).optional(),

@@ -29,6 +29,7 @@ export async function createCapture({ tx, send }: Pick<Transaction, 'tx' | 'send
     createdBy: caller.personId,
     practice: caller.role === 'learner',
     title: fields.title || titleOf(made.fileName),
+    note: fields.note ?? '',
     jobId: fields.jobId ?? null,
     cylinders: fields.cylinders ?? null,
     signalRequests: fields.signals ?? [],
