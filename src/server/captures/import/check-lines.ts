@@ -2,6 +2,10 @@ import type { ImportLineJson } from '../../../contract/areas/import.ts';
 import { parseTable, type TableLine } from './parse-table.ts';
 
 export const MOST_LINES = 5_000;
+/** Nearest names are looked for this many different engines: a table of nothing but unknown ones must not keep the server busy. */
+const MOST_LOOKS = 100;
+/** Names further apart than this many letters are not mistaken for each other. */
+const MOST_AWAY = 6;
 
 /** What each column may be called, in small letters. */
 const COLUMNS = {
@@ -58,10 +62,11 @@ export function checkLines(csv: string, known: Known): Checked {
   const files = new Map(known.files.map((name) => [plain(name), name]));
   const engines = new Map(known.engines.map((name) => [plain(name), name]));
   const seen = { files: new Map<string, number>(), titles: new Map<string, number>() };
+  const near = new Map<string, string | null>();
   const described = new Set<string>();
   const checked = rows.map((row) => {
     const cell = (column: Column) => row.cells[places[column] ?? -1] ?? '';
-    const line = judge(row.line, cell, { ...known, files, engines, seen });
+    const line = judge(row.line, cell, { ...known, files, engines, seen, near });
     described.add(plain(cell('file')));
     return line;
   });
@@ -82,6 +87,8 @@ interface Judging extends Omit<Known, 'files' | 'engines'> {
   readonly files: ReadonlyMap<string, string>;
   readonly engines: ReadonlyMap<string, string>;
   readonly seen: { readonly files: Map<string, number>; readonly titles: Map<string, number> };
+  /** Engines looked for so far, each with the nearest that the library has. */
+  readonly near: Map<string, string | null>;
 }
 
 function judge(line: number, cell: (column: Column) => string, known: Judging): ImportLineJson {
@@ -124,18 +131,31 @@ function judge(line: number, cell: (column: Column) => string, known: Judging): 
   if (cylinders !== '' && (count === null || count < 1 || count > 16))
     return result('bad', `“${cylinders.slice(0, 20)}” cylinders: a whole number from 1 to 16 is expected.`);
   if (engine !== '' && !known.engines.has(plain(engine)) && !known.newEngines)
-    return result('bad', unknownEngine(engine, [...known.engines.values()]));
+    return result('bad', unknownEngine(engine, known));
   if (sameTitle !== undefined) return result('watch', `The same title as line ${sameTitle}.`);
   if (known.present.has(found)) return result('watch', 'A capture of a file with this name is here already.');
   return result('good', '');
 }
 
-function unknownEngine(engine: string, engines: readonly string[]): string {
-  const near = engines
-    .map((name) => ({ name, away: distance(plain(name), plain(engine)) }))
-    .sort((a, b) => a.away - b.away)[0];
-  const close = near !== undefined && near.away <= Math.max(2, engine.length / 4);
-  return `The library has no engine “${engine}”.${close ? ` Is “${near.name}” meant?` : ' Tick “new engines are meant” if it is new.'}`;
+/** The sentence for an engine that the library does not have; the same name is looked for once. */
+function unknownEngine(engine: string, { engines, near }: Judging): string {
+  const wanted = plain(engine);
+  if (!near.has(wanted)) near.set(wanted, near.size < MOST_LOOKS ? nearest(wanted, engines) : null);
+  const name = near.get(wanted);
+  const hint = name ? `Is “${name}” meant?` : 'Tick “new engines are meant” if it is new.';
+  return `The library has no engine “${engine}”. ${hint}`;
+}
+
+/** The engine whose name is close enough to be meant. */
+function nearest(wanted: string, engines: ReadonlyMap<string, string>): string | null {
+  let best: { name: string; away: number } | null = null;
+  for (const [key, name] of engines) {
+    if (Math.abs(key.length - wanted.length) > MOST_AWAY) continue;
+    const away = distance(key, wanted);
+    if (away <= Math.min(MOST_AWAY, Math.max(2, wanted.length / 4)) && away < (best?.away ?? Infinity))
+      best = { name, away };
+  }
+  return best?.name ?? null;
 }
 
 /** Edits from one word to another: Levenshtein's distance, by Wagner and Fischer (1974). */
