@@ -3,9 +3,10 @@ import { parseTable, type TableLine } from './parse-table.ts';
 
 export const MOST_LINES = 5_000;
 /** Nearest names are looked for this many different engines: a table of nothing but unknown ones must not keep the server busy. */
-const MOST_LOOKS = 100;
+const MOST_LOOKS = 20;
 /** Names further apart than this many letters are not mistaken for each other. */
 const MOST_AWAY = 6;
+const MOST_LETTERS = 80;
 
 /** What each column may be called, in small letters. */
 const COLUMNS = {
@@ -149,6 +150,7 @@ function unknownEngine(engine: string, { engines, near }: Judging): string {
 /** The engine whose name is close enough to be meant. */
 function nearest(wanted: string, engines: ReadonlyMap<string, string>): string | null {
   let best: { name: string; away: number } | null = null;
+  if (wanted.length > MOST_LETTERS) return null;
   for (const [key, name] of engines) {
     if (Math.abs(key.length - wanted.length) > MOST_AWAY) continue;
     const away = distance(key, wanted);
