@@ -75,12 +75,14 @@ export function ExerciseTrace({ model, exercise, open, evidence, wheel, error }:
           <Button
             small
             icon="undo"
+            className="exercise-clear"
+            aria-label="Clear"
             onClick={() => {
               model.span.set(null);
               model.tool.set('move');
             }}
           >
-            Clear
+            <span>Clear</span>
           </Button>
         )}
         {open &&
