@@ -99,6 +99,14 @@ export function AnswerPanel({ exercise }: { exercise: ExerciseJson }) {
         </section>
       )}
       <div className="exercise-onward">
+        {exercise.sets[0]?.next != null && (
+          <a
+            className="button button-main exercise-next"
+            href={`/teaching/exercises/${exercise.sets[0].next}`}
+          >
+            Next exercise
+          </a>
+        )}
         {answer.captureId !== null && (
           <a className="button" href={`/captures/${answer.captureId}`}>
             Open as a capture

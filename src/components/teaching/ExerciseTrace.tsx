@@ -124,7 +124,12 @@ export function ExerciseTrace({ model, exercise, open, evidence, wheel, error }:
           wheel={open ? wheel : null}
           scale={open && wheel !== null ? 'degrees' : 'seconds'}
           marks={marks}
-          evidence={open ? (group ?? null) : null}
+          // Several places stand close to each other on a phone: the button above carries their name.
+          evidence={
+            open && group !== undefined
+              ? { ...group, label: group.stretches.length > 1 ? '' : group.label }
+              : null
+          }
         />
       </div>
       <p className="exercise-foot">
