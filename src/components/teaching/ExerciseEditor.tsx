@@ -1,4 +1,4 @@
-import './teaching.css';
+import './build.css';
 import { useMemo, useState } from 'react';
 import useSWR from 'swr';
 import type { CaptureJson, MeasurementsJson } from '../../contract/areas/captures.ts';

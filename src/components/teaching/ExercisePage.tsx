@@ -1,4 +1,4 @@
-import './teaching.css';
+import './exercise.css';
 import { useCallback, useEffect, useMemo, useState } from 'react';
 import useSWR from 'swr';
 import type { WheelJson } from '../../contract/areas/captures.ts';

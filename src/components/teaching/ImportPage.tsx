@@ -1,4 +1,4 @@
-import './teaching.css';
+import './build.css';
 import { useRef, useState } from 'react';
 import type { ImportCheckJson, ImportLineJson } from '../../contract/areas/import.ts';
 import { api, sentenceOf } from '../base/api.ts';

@@ -1,4 +1,4 @@
-import './teaching.css';
+import './build.css';
 import { type ReactNode, useState } from 'react';
 import type { SetItemInput, SetItemJson, SetJson } from '../../contract/areas/teaching.ts';
 import { ApiFailure, api, sentenceOf } from '../base/api.ts';
