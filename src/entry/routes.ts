@@ -3,6 +3,7 @@ import { createCaptureEndpoint } from './endpoints/create-capture.ts';
 import { exerciseWindowEndpoint } from './endpoints/exercise-window.ts';
 import { exportEndpoint } from './endpoints/export.ts';
 import { exportResultsEndpoint } from './endpoints/export-results.ts';
+import { knownGoodWindowEndpoint } from './endpoints/known-good-window.ts';
 import { originalEndpoint } from './endpoints/original.ts';
 import { pictureEndpoint } from './endpoints/picture.ts';
 import { uploadsEndpoint } from './endpoints/uploads.ts';
@@ -19,6 +20,7 @@ type InFrontId = {
 const HANDLERS: Record<InFrontId, FrontEndpoint> = {
   'captures.create': createCaptureEndpoint,
   'captures.window': windowEndpoint,
+  'knownGoods.window': knownGoodWindowEndpoint,
   'captures.original': originalEndpoint,
   'captures.export': exportEndpoint,
   'captures.picture': pictureEndpoint,

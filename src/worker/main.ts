@@ -3,6 +3,7 @@ import { STOP_CHANNEL } from '../server/captures/cancel-capture.ts';
 import { giveUpFailed } from '../server/captures/work/give-up-failed.ts';
 import { queueRemeasuring } from '../server/captures/work/queue-remeasuring.ts';
 import { closeDatabase } from '../server/db/client.ts';
+import { fillPictures } from '../server/library/fill-pictures.ts';
 import { log } from '../server/log.ts';
 import { queue, stopQueue } from '../server/queue/boss.ts';
 import { QUEUES, type QueueName } from '../server/queue/names.ts';
@@ -97,6 +98,8 @@ async function housekeeping(): Promise<void> {
   await giveUpFailed();
   const count = await queueRemeasuring();
   if (count > 0) log.info({ count }, 'captures queued to be measured by this engine');
+  const pictures = await fillPictures();
+  if (pictures > 0) log.info({ count: pictures }, 'pictures and shapes of known-goods made');
   const boss = await queue();
   await boss.send(QUEUES.sweep, {}, { singletonSeconds: 3600, singletonKey: 'sweep' });
 }

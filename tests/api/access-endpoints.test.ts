@@ -120,6 +120,8 @@ const BODIES: Partial<Record<EndpointId, (things: Things) => unknown>> = {
   'jobs.patch': () => ({ complaint: 'Cranks slowly' }),
   'jobEntries.create': () => ({ kind: 'note', text: 'n' }),
   'jobEntries.patch': () => ({ text: 'n' }),
+  'captures.nearest': () => ({ signal: 0 }),
+  'comparisons.patch': () => ({ sprocketTeeth: 20 }),
   'comparisons.create': ({ knownGood }) => ({ signal: 0, knownGoodId: knownGood }),
 };
 
@@ -127,6 +129,7 @@ const QUERIES: Partial<Record<EndpointId, string>> = {
   'captures.window': '?from=0&to=1&columns=1000',
   'shared.window': '?from=0&to=1&columns=1000',
   'exercises.window': '?from=0&to=1&columns=1000',
+  'knownGoods.window': '?from=0&to=1&columns=1000',
 };
 
 interface Extra {

@@ -6,6 +6,8 @@ import { Button } from '../base/Button.tsx';
 import { Dialog } from '../base/Dialog.tsx';
 import { Field } from '../base/Field.tsx';
 import { Message } from '../base/Message.tsx';
+import { ReplacesField } from './ReplacesField.tsx';
+import { StretchFields, stretch } from './StretchFields.tsx';
 
 /** The contract's conditions; only types may come from there. */
 const CONDITIONS: readonly KnownGoodJson['condition'][] = [
@@ -39,11 +41,17 @@ export function KeepDialog({ capture, onClose }: { capture: CaptureJson; onClose
         body: {
           captureId: capture.id,
           signals,
+          ...stretch(text('from'), text('to')),
+          supersedes: text('supersedes') === '' ? null : text('supersedes'),
+          instrument: text('instrument'),
+          probe: text('probe'),
+          confirmed: text('confirmed'),
           engine: {
             make: text('make'),
             model: text('model'),
             code: text('code'),
             year: whole('year'),
+            yearTo: whole('yearTo'),
             cylinders: whole('cylinders'),
           },
           condition: text('condition'),
@@ -93,6 +101,7 @@ export function KeepDialog({ capture, onClose }: { capture: CaptureJson; onClose
             </label>
           ))}
         </fieldset>
+        <StretchFields capture={capture} />
         <div className="dialog-row">
           <Field label="Make">
             <input className="box" name="make" required maxLength={80} autoComplete="off" />
@@ -105,8 +114,11 @@ export function KeepDialog({ capture, onClose }: { capture: CaptureJson; onClose
           <Field label="Engine code">
             <input className="box" name="code" maxLength={40} autoComplete="off" />
           </Field>
-          <Field label="Year">
+          <Field label="First year">
             <input className="box box-figures" name="year" type="number" min={1900} max={2100} />
+          </Field>
+          <Field label="Last year">
+            <input className="box box-figures" name="yearTo" type="number" min={1900} max={2100} />
           </Field>
           <Field label="Cylinders">
             <input
@@ -128,9 +140,21 @@ export function KeepDialog({ capture, onClose }: { capture: CaptureJson; onClose
             ))}
           </select>
         </Field>
+        <div className="dialog-row">
+          <Field label="Instrument">
+            <input className="box" name="instrument" maxLength={200} autoComplete="off" />
+          </Field>
+          <Field label="Probe or clamp">
+            <input className="box" name="probe" maxLength={200} autoComplete="off" />
+          </Field>
+        </div>
+        <Field label="How it was confirmed">
+          <input className="box" name="confirmed" maxLength={1000} autoComplete="off" />
+        </Field>
+        <ReplacesField captureId={capture.id} />
         <Field
           label="Where it comes from"
-          help="Who recorded it, on what instrument and probe, and how it was confirmed that the part was good."
+          help="Who recorded it, when and on which vehicle; no plate and no VIN."
         >
           <textarea className="box" name="provenance" required maxLength={2000} rows={3} />
         </Field>

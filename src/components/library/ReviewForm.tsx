@@ -26,6 +26,7 @@ const CHOICES: Record<KnownGoodJson['state'], readonly Choice[]> = {
   returned: [],
   published: [{ decision: 'retire', text: 'Retire', kind: 'plain' }],
   retired: [],
+  superseded: [],
 };
 
 const ABOUT: Record<KnownGoodJson['state'], string> = {
@@ -34,6 +35,7 @@ const ABOUT: Record<KnownGoodJson['state'], string> = {
   published: 'Retired, it is offered for no further comparison. Comparisons that were made stay as they are.',
   returned: '',
   retired: '',
+  superseded: '',
 };
 
 /** Publish, return or retire, with a note; never by the author. A return without a reason helps nobody, so it asks for one. */

@@ -8,15 +8,29 @@ const known = (
 ): KnownGoodRowJson => ({
   id: 'a'.repeat(20),
   state: 'published',
-  engine: { make: 'Aldane', model: 'Sorrel 1.6', code: 'AS16', year: 2011, cylinders: 4 },
+  engine: { make: 'Aldane', model: 'Sorrel 1.6', code: 'AS16', year: 2011, cylinders: 4, yearTo: null },
   condition: 'cranking',
   note: '',
   provenance: 'bench',
+  instrument: '',
+  probe: '',
+  confirmed: '',
+  wheelPattern: null,
+  version: 1,
+  supersedes: null,
+  supersededBy: null,
   captureId: null,
   fromS: 0,
   toS: 1,
   engineVersion: '1',
-  signals: circuits.map((circuit, index) => ({ index, name: circuit, circuit, unit: 'V' })),
+  signals: circuits.map((circuit, index) => ({
+    index,
+    name: circuit,
+    circuit,
+    unit: 'V',
+    portrait: null,
+    values: [],
+  })),
   createdBy: { id: 'p'.repeat(20), name: 'Runa' },
   createdAt: '2026-01-01T00:00:00.000Z',
   publishedAt: null,
@@ -26,7 +40,7 @@ const known = (
 describe('indexSheet()', () => {
   it('puts one engine written in two ways into one row, and says its years', () => {
     const later = known({
-      engine: { make: 'ALDANE ', model: 'sorrel 1.6', code: 'as16', year: 2013, cylinders: 4 },
+      engine: { make: 'ALDANE ', model: 'sorrel 1.6', code: 'as16', year: 2013, cylinders: 4, yearTo: null },
     });
     const sheet = indexSheet([known({}), later]);
     expect(sheet).toHaveLength(1);
@@ -39,7 +53,9 @@ describe('indexSheet()', () => {
     expect(row!.cells.get('cam')).toHaveLength(1);
   });
   it('orders engines by name', () => {
-    const other = known({ engine: { make: 'Aba', model: 'X', code: '', year: null, cylinders: null } });
+    const other = known({
+      engine: { make: 'Aba', model: 'X', code: '', year: null, yearTo: null, cylinders: null },
+    });
     expect(indexSheet([known({}), other]).map((row) => [row.name, row.detail])).toEqual([
       ['Aba X', ''],
       ['Aldane Sorrel 1.6', 'AS16, 2011'],

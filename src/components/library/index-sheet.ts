@@ -15,7 +15,9 @@ export const BAND_FROM = 3;
 export const engineKey = ({ make, model, code }: KnownGoodRowJson['engine']): string =>
   [make, model, code].map((text) => text.trim().toLowerCase()).join('|');
 
-const yearsText = (years: readonly number[]): string => {
+/** "2011 to 2013", "2011", or nothing. */
+export const yearsText = (all: readonly (number | null)[]): string => {
+  const years = all.filter((year) => year !== null);
   if (years.length === 0) return '';
   const [first, last] = [Math.min(...years), Math.max(...years)];
   return first === last ? String(first) : `${first} to ${last}`;
@@ -31,7 +33,7 @@ export function indexSheet(items: readonly KnownGoodRowJson[]): EngineRow[] {
   return [...groups]
     .map(([key, members]) => {
       const { make, model, code } = members[0]!.engine;
-      const years = members.flatMap(({ engine }) => (engine.year === null ? [] : [engine.year]));
+      const years = members.flatMap(({ engine }) => [engine.year, engine.yearTo]);
       const cells = new Map(
         ROLES.map((role) => [role, members.filter((each) => rolesOf(each).has(role))] as const).filter(
           ([, found]) => found.length > 0,
@@ -54,3 +56,13 @@ export const published = (items: readonly KnownGoodRowJson[]): number =>
   items.filter((item) => item.state === 'published').length;
 export const waiting = (items: readonly KnownGoodRowJson[]): number =>
   items.filter((item) => item.state === 'proposed').length;
+
+/** The signal that a cell shows: of the newest published one that has a picture, else of any. */
+export function pictureOf(items: readonly KnownGoodRowJson[], role: SignalRole) {
+  const first = [...items].sort((a, b) => Number(b.state === 'published') - Number(a.state === 'published'));
+  for (const item of first)
+    for (const signal of item.signals)
+      if (signal.portrait !== null && circuitWords(signal.circuit).role === role)
+        return { circuit: signal.circuit, portrait: signal.portrait };
+  return null;
+}

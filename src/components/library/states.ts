@@ -6,6 +6,7 @@ export const STATE_WORDS: Record<KnownGoodJson['state'], { verdict: VerdictName;
   proposed: { verdict: 'watch', word: 'waits for review' },
   returned: { verdict: 'undecided', word: 'returned to its author' },
   retired: { verdict: 'info', word: 'retired' },
+  superseded: { verdict: 'info', word: 'replaced by a newer version' },
 };
 
 export const DECISION_WORDS: Record<KnownGoodJson['reviews'][number]['decision'], string> = {

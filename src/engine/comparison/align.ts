@@ -18,11 +18,13 @@ const SWITCHED = new Set([
   'injector-current',
 ]);
 
+export type Found = Pick<Alignment, 'by' | 'shiftS' | 'confidence'>;
+
 /**
  * Where two signals are laid on each other: at the reference mark when both have a wheel and belong to it; at the first
  * switch-off for coils and injectors; at the first rising edge for signals of two levels; else by best correlation.
  */
-export function align(here: Side, reference: Side): Alignment {
+export function align(here: Side, reference: Side): Found {
   if (SWITCHED.has(here.circuit)) {
     const a = switchOffS(here);
     const b = switchOffS(reference);

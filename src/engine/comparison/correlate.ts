@@ -1,6 +1,7 @@
 import { sampleCount, timeAt } from '../signal/time.ts';
+import type { Found } from './align.ts';
 import { overSeconds } from './over-seconds.ts';
-import type { Alignment, Side } from './types.ts';
+import type { Side } from './types.ts';
 
 const POINTS = 1024;
 /** Below this the best lag says nothing: two unlike or flat signals. */
@@ -27,8 +28,8 @@ function normalised(values: Float64Array): Float64Array | null {
 }
 
 /** Lag of the highest normalised cross-correlation over lags of up to half the shorter signal. */
-export function correlate(here: Side, reference: Side): Alignment {
-  const none: Alignment = { by: 'none', shiftS: null, confidence: 0 };
+export function correlate(here: Side, reference: Side): Found {
+  const none: Found = { by: 'none', shiftS: null, confidence: 0 };
   if (sampleCount(here.axis) < 2 || sampleCount(reference.axis) < 2) return none;
   const step = Math.min(durationS(here), durationS(reference)) / POINTS;
   if (!(step > 0)) return none;

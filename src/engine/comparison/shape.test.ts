@@ -10,6 +10,7 @@ const overlay = (here: (number | null)[], reference: (number | null)[]): Overlay
   reference,
   low: null,
   high: null,
+  difference: [],
 });
 
 describe('shapeOf()', () => {

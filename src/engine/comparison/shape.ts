@@ -16,7 +16,18 @@ function span(values: readonly (number | null)[]): number {
   return high - low;
 }
 
-/** Where two traces on one axis part by more than a fifth of the reference’s span, and the root mean square of the difference. */
+/** How far a value lies beyond the band, or from the only reference; 0 inside a band. */
+function offAt({ here, reference, low, high }: Overlay, i: number): number | null {
+  const a = here[i] ?? null;
+  const b = reference[i] ?? null;
+  if (a === null || b === null) return null;
+  const least = low?.[i] ?? null;
+  const most = high?.[i] ?? null;
+  if (least === null || most === null) return a - b;
+  return a > most ? a - most : a < least ? a - least : 0;
+}
+
+/** Where two traces on one axis part by more than a fifth of the reference’s span (beyond the band, where there is one), and the root mean square of the difference. */
 export function shapeOf(overlay: Overlay | null): Shape {
   if (!overlay) return { difference: null, parts: [] };
   const { here, reference, start, step, axis } = overlay;
@@ -40,10 +51,9 @@ export function shapeOf(overlay: Overlay | null): Shape {
       close(i);
       continue;
     }
-    const off = (a - b) / scale;
-    squares += off * off;
+    squares += ((a - b) / scale) ** 2;
     count += 1;
-    if (Math.abs(off) > APART) since ??= i;
+    if (Math.abs(offAt(overlay, i)! / scale) > APART) since ??= i;
     else close(i);
   }
   close(here.length);

@@ -22,6 +22,33 @@ export interface Alignment {
   readonly shiftS: number | null;
   /** 0 to 1. */
   readonly confidence: number;
+  /** What had to be allowed for, in words: another polarity, a probe factor, a missing cam or crank. */
+  readonly notes: readonly string[];
+  /** How far the reference was moved by hand, on top of what was found. */
+  readonly byHand: ByHand | null;
+}
+
+/** A shift set by a person: the reference comes so much later on the overlay's axis. */
+export interface ByHand {
+  readonly shift: number;
+  readonly axis: 'deg' | 's';
+}
+
+/** How far a cam lies from the reference against the crank, when all of its edges moved alike. */
+export interface CamShift {
+  readonly deg: number;
+  readonly edges: number;
+  /** In teeth of the belt or chain, when the crank sprocket's count is known. */
+  readonly teeth: number | null;
+  readonly sprocketTeeth: number | null;
+}
+
+/** What the numbers say to somebody who has to act on them; all four or none. */
+export interface Says {
+  readonly measured: string;
+  readonly usually: string;
+  readonly next: string;
+  readonly cannotTell: string;
 }
 
 export type Verdict = 'inside' | 'outside' | 'undecided';
@@ -49,8 +76,11 @@ export interface Overlay {
   readonly step: number;
   readonly here: readonly (number | null)[];
   readonly reference: readonly (number | null)[];
+  /** Lowest and highest of the references; null with fewer than three, and `reference` is then the first of them, else their median. */
   readonly low: readonly (number | null)[] | null;
   readonly high: readonly (number | null)[] | null;
+  /** Here less the reference. */
+  readonly difference: readonly (number | null)[];
 }
 
 export interface ShapePart {
@@ -71,5 +101,7 @@ export interface ComparisonFindings {
   readonly rows: readonly Row[];
   readonly shape: Shape;
   readonly overlay: Overlay | null;
+  readonly camShift: CamShift | null;
+  readonly says: Says;
   readonly text: string;
 }

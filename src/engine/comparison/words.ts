@@ -1,4 +1,5 @@
-import type { Alignment, Row, Side } from './types.ts';
+import { edgeShifts, PLAY_DEG } from './cam-shift.ts';
+import type { Alignment, CamShift, Row, Side } from './types.ts';
 
 const number = (value: number, digits = 3) => String(Number(value.toPrecision(digits)));
 const isNumber = (cell: Row['here']): cell is number => typeof cell === 'number';
@@ -14,7 +15,7 @@ const NAMES: Readonly<Record<string, string>> = {
   irregular_teeth: 'irregular teeth',
 };
 
-const nameOf = (row: Row) => {
+export const nameOf = (row: Row) => {
   const name = NAMES[row.key] ?? row.key.replaceAll('_', ' ');
   return row.part === null ? name : `${name} ${row.part}`;
 };
@@ -26,25 +27,38 @@ function cellText(cell: Row['here'], unit: string): string {
 }
 
 /** One sentence when all of a cam's edges moved together: that is timing, not the cam wheel. */
-function camSentence(rows: readonly Row[]): string | null {
-  const angles = rows.filter((row) => row.key === 'cam_rising_angles' || row.key === 'cam_falling_angles');
-  const shifts = angles.flatMap((row) =>
-    isNumber(row.here) && isNumber(row.reference) ? [row.here - row.reference] : [],
-  );
+function camSentence(rows: readonly Row[], shift: CamShift | null): string | null {
+  const shifts = edgeShifts(rows);
   if (shifts.length < 2) return null;
-  const mean = shifts.reduce((sum, shift) => sum + shift, 0) / shifts.length;
-  const alike = shifts.every((shift) => Math.abs(shift - mean) <= 1.5);
-  if (!alike) return 'The cam’s edges do not all lie as in the reference, and not all by the same angle.';
-  if (Math.abs(mean) < 2)
+  if (shift === null)
+    return 'The cam’s edges do not all lie as in the reference, and not all by the same angle.';
+  if (Math.abs(shift.deg) < PLAY_DEG)
     return `The cam lies as in the reference, within ${number(Math.max(...shifts.map(Math.abs)), 2)} degrees.`;
-  const way = mean > 0 ? 'late' : 'early';
-  return `The cam comes ${Math.abs(mean).toFixed(1)} degrees ${way} against the crank, at all ${shifts.length} edges alike.`;
+  const way = shift.deg > 0 ? 'late' : 'early';
+  return `The cam comes ${Math.abs(shift.deg).toFixed(1)} degrees ${way} against the crank, at all ${shift.edges} edges alike${teethWords(shift)}.`;
+}
+
+/** How far from a whole number of teeth a shift may lie and still be called that many. */
+const WHOLE = 0.15;
+
+function teethWords({ teeth, sprocketTeeth }: CamShift): string {
+  if (teeth === null) return '';
+  const whole = Math.round(Math.abs(teeth));
+  const near = whole > 0 && Math.abs(Math.abs(teeth) - whole) <= WHOLE;
+  const text = near ? `${whole} ${whole === 1 ? 'tooth' : 'teeth'}` : `${Math.abs(teeth).toFixed(1)} teeth`;
+  return `, ${text} of the belt or chain at a crank sprocket of ${sprocketTeeth}${near ? '' : ', no whole number'}`;
 }
 
 /** What a customer could read, made from the numbers only, with what the comparison cannot tell. */
-export function wordsOf(here: Side, alignment: Alignment, rows: readonly Row[], references: number): string {
+export function wordsOf(
+  here: Side,
+  alignment: Alignment,
+  rows: readonly Row[],
+  references: number,
+  shift: CamShift | null,
+): string {
   const sentences: string[] = [];
-  const cam = camSentence(rows);
+  const cam = camSentence(rows, shift);
   if (cam) sentences.push(cam);
   const outside = rows.filter((row) => row.verdict === 'outside' && !(cam && row.key.startsWith('cam_')));
   for (const row of outside.slice(0, 4))
@@ -64,6 +78,10 @@ export function wordsOf(here: Side, alignment: Alignment, rows: readonly Row[], 
     sentences.push(
       'The two are laid on each other with little certainty; look at the overlay before you trust the table.',
     );
+  if (alignment.byHand !== null)
+    sentences.push(
+      `The reference was moved by hand by ${number(alignment.byHand.shift)} ${alignment.byHand.axis === 'deg' ? 'degrees' : 's'} for the overlay; the table is not touched by that.`,
+    );
   const part = here.circuit.startsWith('cam-')
     ? 'belt, chain, cam wheel or cam adjuster'
     : 'the sensor, its wiring or what it looks at';
@@ -73,4 +91,4 @@ export function wordsOf(here: Side, alignment: Alignment, rows: readonly Row[], 
   return sentences.join(' ');
 }
 
-const capital = (text: string) => text.charAt(0).toUpperCase() + text.slice(1);
+export const capital = (text: string) => text.charAt(0).toUpperCase() + text.slice(1);

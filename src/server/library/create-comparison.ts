@@ -45,7 +45,7 @@ async function targetOf(
 ): Promise<Target> {
   if ('knownGoodId' in input) {
     const good = await OPENERS.knownGood(caller, 'knownGoods.get', input.knownGoodId);
-    if (good.state !== 'published')
+    if (good.state !== 'published' && good.state !== 'superseded')
       throw new ApiError('conflict', {
         message: `This known-good is ${good.state}; only a published one is a reference.`,
       });

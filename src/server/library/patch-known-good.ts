@@ -17,7 +17,7 @@ export async function patchKnownGood(row: KnownGoodRecord, patch: Patch): Promis
     throw new ApiError('conflict', {
       message: 'The stretch is frozen. Propose the other stretch from its capture.',
     });
-  const { engine, condition, note, provenance } = patch;
+  const { engine, condition, note, provenance, instrument, probe, confirmed } = patch;
   const [changed] = await db()
     .update(knownGood)
     .set({
@@ -25,6 +25,9 @@ export async function patchKnownGood(row: KnownGoodRecord, patch: Patch): Promis
       ...(condition === undefined ? {} : { condition }),
       ...(note === undefined ? {} : { note }),
       ...(provenance === undefined ? {} : { provenance }),
+      ...(instrument === undefined ? {} : { instrument }),
+      ...(probe === undefined ? {} : { probe }),
+      ...(confirmed === undefined ? {} : { confirmed }),
       state: 'proposed',
       edition: sql`${knownGood.edition} + 1`,
     })
@@ -37,9 +40,9 @@ export async function patchKnownGood(row: KnownGoodRecord, patch: Patch): Promis
     )
     .returning();
   if (changed) return changed;
-  if (row.state === 'published' || row.state === 'retired')
+  if (row.state !== 'proposed' && row.state !== 'returned')
     throw new ApiError('conflict', {
-      message: 'A published known-good is frozen. Retire it and propose another.',
+      message: 'A published known-good is frozen. Propose a new version of it from a capture.',
     });
   throw new ApiError('stale');
 }

@@ -1,9 +1,10 @@
-import { and, eq, sql } from 'drizzle-orm';
+import { and, eq, inArray, isNull, sql } from 'drizzle-orm';
 import type { KnownGoodRecord, PersonCaller } from '../access.ts';
 import { db } from '../db/client.ts';
 import { knownGood, knownGoodReview } from '../db/schema.ts';
 import { ApiError } from '../errors.ts';
 import { newId } from '../ids.ts';
+import { bumpShapes } from './bump-shapes.ts';
 
 type Decision = 'publish' | 'return' | 'retire';
 
@@ -42,6 +43,8 @@ export async function reviewKnownGood(
       )
       .returning();
     if (!changed) throw new ApiError('stale');
+    if (review.decision === 'publish' && row.supersedes !== null) await takePlace(tx, row.supersedes, row.id);
+    if (review.decision !== 'return') await bumpShapes(tx, row.workshopId);
     await tx.insert(knownGoodReview).values({
       id: newId(),
       knownGoodId: row.id,
@@ -51,4 +54,25 @@ export async function reviewKnownGood(
     });
     return changed;
   });
+}
+
+type Transaction = Parameters<Parameters<ReturnType<typeof db>['transaction']>[0]>[0];
+
+/** The older version stays readable and whole, but is offered for no further comparison. Only one may take its place. */
+async function takePlace(tx: Transaction, olderId: string, newerId: string): Promise<void> {
+  const replaced = await tx
+    .update(knownGood)
+    .set({ state: 'superseded', supersededBy: newerId, edition: sql`${knownGood.edition} + 1` })
+    .where(
+      and(
+        eq(knownGood.id, olderId),
+        isNull(knownGood.supersededBy),
+        inArray(knownGood.state, ['published', 'retired']),
+      ),
+    )
+    .returning({ id: knownGood.id });
+  if (replaced.length === 0)
+    throw new ApiError('conflict', {
+      message: 'Another version has taken the place of the older one already. Return this one to its author.',
+    });
 }

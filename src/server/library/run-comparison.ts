@@ -1,6 +1,6 @@
 import { and, eq, inArray, isNull } from 'drizzle-orm';
 import { type ComparisonJson, comparison as comparisonShape } from '../../contract/areas/library.ts';
-import { compare } from '../../engine/comparison/compare.ts';
+import { type CompareOptions, compare } from '../../engine/comparison/compare.ts';
 import type { ComparisonFindings, Side } from '../../engine/comparison/types.ts';
 import { ENGINE_VERSION } from '../../engine/version.ts';
 import { db } from '../db/client.ts';
@@ -35,6 +35,7 @@ async function referencesOf(
   }
   const goods = await db().select().from(knownGood).where(inArray(knownGood.id, request.knownGoodIds));
   const sides: Side[] = [];
+  const members: NonNullable<NonNullable<Result['other']>['members']> = [];
   let signal = request.otherSignal ?? 0;
   for (const good of goods) {
     const rows = await db().select().from(knownGoodSignal).where(eq(knownGoodSignal.knownGoodId, good.id));
@@ -42,6 +43,11 @@ async function referencesOf(
     if (index === undefined) continue;
     if (sides.length === 0) signal = index;
     sides.push(await sideOfKnownGood(good, index));
+    members.push({
+      id: good.id,
+      title: [good.make, good.model, good.code, good.year ?? ''].filter((part) => part !== '').join(' '),
+      version: good.version,
+    });
   }
   const first = goods[0];
   if (!first || sides.length === 0)
@@ -57,6 +63,7 @@ async function referencesOf(
       title,
       signal,
       n: sides.length,
+      members,
     },
   };
 }
@@ -66,11 +73,25 @@ const resultShape = comparisonShape.pick({
   rows: true,
   shape: true,
   overlay: true,
+  camShift: true,
+  says: true,
   text: true,
 });
 
 /** What is kept has the contract's shape, checked here once. */
 const resultOf = (found: ComparisonFindings): Result => resultShape.parse(found);
+
+/** What a person set by hand; the sprocket's teeth may have come with the request. */
+function optionsOf(row: typeof comparison.$inferSelect, request: StoredRequest): CompareOptions {
+  const set = row.adjustment;
+  const kept = row.result?.rows;
+  return {
+    byHand: set && set.shift !== null && set.axis !== null ? { shift: set.shift, axis: set.axis } : null,
+    sprocketTeeth: set?.sprocketTeeth ?? request.asked.sprocketTeeth ?? null,
+    // The table stays as it was first made, by the engine version that it names.
+    ...(kept === undefined ? {} : { rows: kept }),
+  };
+}
 
 /** What the worker does for one comparison. A refusal in words is kept as its error; anything else is thrown, to be tried again. */
 export async function runComparison(id: string): Promise<void> {
@@ -83,8 +104,8 @@ export async function runComparison(id: string): Promise<void> {
     const here = await sideOfCapture(own, request.signal);
     const { sides, other } = await referencesOf(request, here);
     const result: Result = {
-      ...resultOf(compare(here, sides)),
-      engine: ENGINE_VERSION,
+      ...resultOf(compare(here, sides, optionsOf(row, request))),
+      engine: row.result?.engine ?? ENGINE_VERSION,
       here: { title: own.title, name: here.name, circuit: here.circuit, unit: here.unit },
       other,
     };

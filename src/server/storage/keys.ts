@@ -16,6 +16,9 @@ export const timesKey = (captureId: string, samplesVersion: number) =>
 export const knownGoodSamplesKey = (knownGoodId: string, signal: number) =>
   `known-goods/${knownGoodId}/${signal}.f32`;
 export const knownGoodTimesKey = (knownGoodId: string) => `known-goods/${knownGoodId}/times.f64`;
+export const knownGoodPyramidKey = (knownGoodId: string, signal: number) =>
+  `known-goods/${knownGoodId}/${signal}.pyramid`;
+export const knownGoodTimesPyramidKey = (knownGoodId: string) => `known-goods/${knownGoodId}/times.pyramid`;
 
 /** Times at the pyramid's block bounds of an uneven axis: see src/server/storage/pyramid-file.ts. */
 export const timesPyramidKey = (captureId: string, samplesVersion: number) =>
