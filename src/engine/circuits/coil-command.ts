@@ -5,14 +5,18 @@ import { readingNoise } from '../signal/resolution.ts';
 import { absent, type Notice, type Value } from '../value.ts';
 import { findPulses, type Pulses } from './coil-command/pulses.ts';
 import { bounded } from './events/bounded.ts';
+import { clippedNotices } from './events/clipped.ts';
 import { flatLine } from './events/flat-line.ts';
 import { counted, inWords } from './events/in-words.ts';
+import { humNotice, mainsHumOnly } from './events/mains-hum.ts';
 import { oncePerEvent } from './events/once-per-event.ts';
 import { whole } from './events/whole.ts';
 import type { MeasuredSignal } from './types.ts';
 
 /** Shares of the two states closer to a half than this do not tell which one is active. */
 const UNCLEAR_SHARE = 0.4;
+/** Hum of less than this from peak to peak lies on a flat line, and is no reason to doubt the connection. */
+const LEAST_HUM = 0.25;
 
 /**
  * Logic pulses to a coil with its own driver. The width of the active state is the dwell; the active state is the one held
@@ -25,6 +29,13 @@ export function measureCoilCommand(signal: MeasuredSignal): Findings {
   const noise = holds ? 0 : readingNoise(values);
   const level = rangeMedian(values, 0, values.length);
   if (level === null) return steady('no samples to measure', signal, null);
+  const hum = holds ? null : mainsHumOnly(values, axis);
+  if (hum && 2 * hum.amplitude > LEAST_HUM) {
+    return {
+      ...steady('nothing but mains hum in the capture', signal, level),
+      notices: [humNotice(axis, hum, unit)],
+    };
+  }
   if (!states || states.bimodality < 0.8 || states.high - states.low < 12 * noise) {
     return steady('no pulse in the capture', signal, level);
   }
@@ -81,6 +92,7 @@ function notices(signal: MeasuredSignal, pulses: Pulses, swing: number | null): 
       `The command swings by only ${inWords(swing, 'V')}; a logic line usually swings by about 5 V or by battery voltage (common practice, no source). A driver may not take it. Check the factor of the probe, the ground and the load on the line.`,
     );
   }
+  found.push(...clippedNotices(signal, 'the level there is a bound, times are good'));
   return found;
 }
 

@@ -3,11 +3,13 @@ import { timeAt } from '../signal/time.ts';
 import { absent, type Value } from '../value.ts';
 import { type ChargeShape, chargeShape } from './coil-primary-current/charge-shape.ts';
 import { findCharges } from './coil-primary-current/charges.ts';
+import { currentLimited } from './coil-primary-current/current-limited.ts';
 import { currentNotices } from './coil-primary-current/notices.ts';
 import { currentTrace } from './coil-primary-current/trace.ts';
 import { bounded } from './events/bounded.ts';
 import { flatLine } from './events/flat-line.ts';
 import { inWords } from './events/in-words.ts';
+import { humNotice, mainsHumOnly } from './events/mains-hum.ts';
 import { type Observation, oncePerEvent } from './events/once-per-event.ts';
 import { whole } from './events/whole.ts';
 import type { MeasuredSignal } from './types.ts';
@@ -21,6 +23,13 @@ const NO_EVENT = 'no switch-off in the capture';
 export function measureCoilPrimaryCurrent(signal: MeasuredSignal): Findings {
   const trace = currentTrace(signal.values, signal.axis);
   if (!trace) return nothing('no samples to measure', null);
+  const hum = mainsHumOnly(signal.values, signal.axis);
+  if (hum) {
+    return {
+      ...nothing('nothing but mains hum in the capture', whole(signal.axis)),
+      notices: [humNotice(signal.axis, hum, signal.unit)],
+    };
+  }
   const charges = trace.top > 8 * trace.noise && trace.top > 0 ? findCharges(trace) : [];
   if (charges.length === 0) {
     const calm = trace.top <= 8 * trace.noise;
@@ -45,15 +54,19 @@ export function measureCoilPrimaryCurrent(signal: MeasuredSignal): Findings {
   });
   const each = (of: (shape: ChargeShape) => number | null): Observation[] =>
     shapes.map((shape) => ({ value: of(shape), evidence: part(shape) }));
-  const limited = shapes.filter((shape) => shape.charge.first !== null && shape.flat).length;
   const judged = shapes.filter((shape) => shape.charge.first !== null);
+  const noStart =
+    judged.length > 0
+      ? 'the steps of the input are too coarse for the start of the rise'
+      : 'no charge is in the capture from its start';
+  const limited = currentLimited(judged);
   const values: Value[] = [
     { key: 'firing_count', value: shapes.length, unit: '1', evidence: bounded(shapes.map(part)) },
     oncePerEvent(
       'dwell',
       'ms',
       each(({ startS, endS }) => (startS === null ? null : (endS - startS) * 1000)),
-      'no charge is in the capture from its start',
+      noStart,
     ),
     oncePerEvent(
       'peak_current',
@@ -61,11 +74,16 @@ export function measureCoilPrimaryCurrent(signal: MeasuredSignal): Findings {
       each((shape) => shape.peak),
       NO_EVENT,
     ),
-    judged.length === 0
-      ? absent('current_limited', '1', 'no charge is in the capture from its start')
+    limited === null
+      ? absent(
+          'current_limited',
+          '1',
+          judged.length === 0 ? noStart : 'noise hides whether the end of the rise is within 1 %',
+          bounded(judged.map(part)),
+        )
       : {
           key: 'current_limited',
-          value: 2 * limited > judged.length,
+          value: limited,
           unit: '1',
           n: judged.length,
           evidence: bounded(judged.map(part)),

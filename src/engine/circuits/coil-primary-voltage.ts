@@ -7,12 +7,14 @@ import { missedFirings } from './coil-primary-voltage/missed-firings.ts';
 import { noEvent } from './coil-primary-voltage/no-event.ts';
 import { coilNotices } from './coil-primary-voltage/notices.ts';
 import { bounded } from './events/bounded.ts';
-import { oncePerEvent } from './events/once-per-event.ts';
+import { humNotice, mainsHumOnly } from './events/mains-hum.ts';
+import { type Observation, oncePerEvent } from './events/once-per-event.ts';
 import { stretch, whole } from './events/whole.ts';
 import { acCoupledNotice, upsideDownNotice } from './switched-load/input-notices.ts';
 import { onPeriods } from './switched-load/on-periods.ts';
 import { pointsDown } from './switched-load/points-down.ts';
 import { loadStates } from './switched-load/states.ts';
+import { isSteady } from './switched-load/steady.ts';
 import type { MeasuredSignal } from './types.ts';
 
 /** Half swings of a ringing coil are shorter. Common practice (dwell 2 to 6 ms), no source. */
@@ -28,8 +30,15 @@ export function measureCoilPrimaryVoltage(signal: MeasuredSignal): Findings {
   const { values, axis } = signal;
   const states = loadStates(values);
   if (!states) return noEvent(signal, null, 'no samples to measure');
-  if (pointsDown(values, states)) {
+  if (pointsDown(values, states.noise)) {
     return { ...noEvent(signal, null, 'the trace is upside down'), notices: [upsideDownNotice(axis)] };
+  }
+  const hum = mainsHumOnly(values, axis);
+  if (hum && !isSteady(values, states)) {
+    return {
+      ...noEvent(signal, states, 'nothing but mains hum in the capture', true),
+      notices: [humNotice(axis, hum, signal.unit)],
+    };
   }
   if (states.on === null) return noEvent(signal, states, 'no switch-off in the capture');
   if (states.rest > HIGHEST_FEED_V) {
@@ -118,14 +127,11 @@ export function measureCoilPrimaryVoltage(signal: MeasuredSignal): Findings {
         firings.some((firing) => firing.burn) ? 'the capture ends during the burn' : 'no burn line',
       ),
     ),
-    oncePerEvent(
-      'ring_count',
-      '1',
+    ringCount(
       firings.map(({ burn, kick, rings, over }) => ({
         value: rings,
         evidence: stretch(axis, burn?.end ?? kick?.to ?? over, over),
       })),
-      'no ring seen to its end',
     ),
     missed === null
       ? absent('missed_firings', '1', 'fewer than three ordinary intervals')
@@ -133,4 +139,17 @@ export function measureCoilPrimaryVoltage(signal: MeasuredSignal): Findings {
   ];
   const notices: Notice[] = states.acCoupled ? [acCoupledNotice(axis)] : [];
   return { values: values_, notices: [...notices, ...coilNotices(signal, trace, firings, missed)] };
+}
+
+/** Rings of one coil are alike: where most of them cannot be counted for sure, the others say too little. */
+function ringCount(rings: readonly Observation[]): Value {
+  const told = rings.filter(({ value }) => value !== null).length;
+  return 2 * told >= rings.length && told > 0
+    ? oncePerEvent('ring_count', '1', rings, '')
+    : absent(
+        'ring_count',
+        '1',
+        'no ring is seen to its end, or its last extremes stand at the limit of 4 × the noise',
+        bounded(rings.map((one) => one.evidence)),
+      );
 }

@@ -1,5 +1,6 @@
 import type { Findings } from '../capture.ts';
 import { absent, type Notice } from '../value.ts';
+import { clippedNotices } from './events/clipped.ts';
 import { flatLine } from './events/flat-line.ts';
 import { inWords } from './events/in-words.ts';
 import { whole } from './events/whole.ts';
@@ -29,6 +30,7 @@ export function measureFuelPumpCurrent(signal: MeasuredSignal, bars = USUAL_BARS
     };
   }
   const mean = { key: 'mean', value: moments.mean, unit, n: moments.n, evidence: whole(axis) };
+  const clipped = clippedNotices(signal, 'mean and ripple are off');
   const highest = Math.max(Math.abs(values[moments.highestAt]!), Math.abs(values[moments.lowestAt]!));
   if (highest < 0.3) {
     const reason = 'the pump takes no current in the capture';
@@ -47,7 +49,7 @@ export function measureFuelPumpCurrent(signal: MeasuredSignal, bars = USUAL_BARS
   if (ripple.rateHz === null) {
     return {
       values: [mean, absent('ripple_rate', 'Hz', ripple.reason), absent('pump_speed', 'rpm', ripple.reason)],
-      notices: [],
+      notices: clipped,
     };
   }
   const ripplesATurn = bars % 2 === 0 ? bars : 2 * bars;
@@ -58,7 +60,7 @@ export function measureFuelPumpCurrent(signal: MeasuredSignal, bars = USUAL_BARS
       { key: 'ripple_rate', value: ripple.rateHz, unit: 'Hz', evidence },
       { key: 'pump_speed', value: (60 * ripple.rateHz) / ripplesATurn, unit: 'rpm', evidence },
     ],
-    notices: [barsNotice(signal, bars)],
+    notices: [...clipped, barsNotice(signal, bars)],
   };
 }
 

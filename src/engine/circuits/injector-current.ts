@@ -3,8 +3,10 @@ import { absent, type Notice } from '../value.ts';
 import { findCharges } from './coil-primary-current/charges.ts';
 import { currentTrace } from './coil-primary-current/trace.ts';
 import { bounded } from './events/bounded.ts';
+import { clippedNotices } from './events/clipped.ts';
 import { flatLine } from './events/flat-line.ts';
 import { inWords } from './events/in-words.ts';
+import { humNotice, mainsHumOnly } from './events/mains-hum.ts';
 import { type Observation, oncePerEvent } from './events/once-per-event.ts';
 import { whole } from './events/whole.ts';
 import { type InjectorCurrentPulse, pulseShape } from './injector-current/pulse-shape.ts';
@@ -23,6 +25,13 @@ export function measureInjectorCurrent(signal: MeasuredSignal): Findings {
   const { axis, unit } = signal;
   const trace = currentTrace(signal.values, axis);
   if (!trace) return nothing(signal, 'no samples to measure', null);
+  const hum = mainsHumOnly(signal.values, axis);
+  if (hum) {
+    return {
+      ...nothing(signal, 'nothing but mains hum in the capture', trace.zero),
+      notices: [humNotice(axis, hum, unit)],
+    };
+  }
   if (!(trace.top > 8 * trace.noise)) return nothing(signal, 'no pulse in the capture', trace.zero);
   const pulses = findCharges(trace, HOLD_SHARE).map((charge) => pulseShape(trace, charge));
   const complete = pulses.flatMap((pulse) =>
@@ -30,16 +39,15 @@ export function measureInjectorCurrent(signal: MeasuredSignal): Findings {
   );
   const each = (of: (pulse: InjectorCurrentPulse & { startS: number }) => number | null): Observation[] =>
     complete.map((pulse) => ({ value: of(pulse), evidence: { from: pulse.startS, to: pulse.endS } }));
-  const notices: Notice[] = trace.reversed
-    ? [
-        {
-          code: 'clamp-reversed',
-          severity: 'info',
-          text: 'The current points down: the clamp sits the other way round on the wire. It is measured as if turned; amperes are given as positive.',
-          evidence: whole(axis),
-        },
-      ]
-    : [];
+  const notices: Notice[] = clippedNotices(signal, 'the peak is a lower bound');
+  if (trace.reversed) {
+    notices.push({
+      code: 'clamp-reversed',
+      severity: 'info',
+      text: 'The current points down: the clamp sits the other way round on the wire. It is measured as if turned; amperes are given as positive.',
+      evidence: whole(axis),
+    });
+  }
   return {
     values: [
       {
@@ -58,7 +66,7 @@ export function measureInjectorCurrent(signal: MeasuredSignal): Findings {
         'peak_current',
         unit,
         each(({ peak }) => peak),
-        NONE,
+        complete.length > 0 ? 'the peak lies between samples; record at a higher rate' : NONE,
       ),
       oncePerEvent(
         'hold_current',

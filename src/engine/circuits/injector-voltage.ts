@@ -5,6 +5,7 @@ import { absent, type Value } from '../value.ts';
 import { bounded } from './events/bounded.ts';
 import { flatLine } from './events/flat-line.ts';
 import { inWords } from './events/in-words.ts';
+import { humNotice, mainsHumOnly } from './events/mains-hum.ts';
 import { oncePerEvent } from './events/once-per-event.ts';
 import { stretch, whole } from './events/whole.ts';
 import { injectorNotices } from './injector-voltage/notices.ts';
@@ -29,8 +30,15 @@ export function measureInjectorVoltage(signal: MeasuredSignal): Findings {
   const { values, axis } = signal;
   const states = loadStates(values);
   if (!states) return noPulse(signal, null, 'no samples to measure');
-  if (pointsDown(values, states)) {
+  if (pointsDown(values, states.noise)) {
     return { ...noPulse(signal, null, 'the trace is upside down'), notices: [upsideDownNotice(axis)] };
+  }
+  const hum = mainsHumOnly(values, axis);
+  if (hum && !isSteady(values, states)) {
+    return {
+      ...noPulse(signal, states, 'nothing but mains hum in the capture', true),
+      notices: [humNotice(axis, hum, signal.unit)],
+    };
   }
   if (states.on === null) return noPulse(signal, states, 'no pulse in the capture');
   const both = { ...states, on: states.on };
@@ -116,8 +124,8 @@ export function measureInjectorVoltage(signal: MeasuredSignal): Findings {
   };
 }
 
-function noPulse(signal: MeasuredSignal, states: LoadStates | null, reason: string): Findings {
-  const steady = states !== null && isSteady(signal.values, states);
+function noPulse(signal: MeasuredSignal, states: LoadStates | null, reason: string, calm = false): Findings {
+  const steady = calm || (states !== null && isSteady(signal.values, states));
   const why = steady || !states ? reason : 'the trace moves, but shows no time with the driver on';
   const level = steady ? rangeMedian(signal.values, 0, signal.values.length) : null;
   return {

@@ -5,9 +5,9 @@ import { sortedRange } from '../signal/range.ts';
 import { readingNoise } from '../signal/resolution.ts';
 import { quantileSorted, spread } from '../signal/statistics.ts';
 import { timeAt } from '../signal/time.ts';
-import { absent, type Evidence, type Notice, type Value } from '../value.ts';
+import { absent, type Evidence, type Value } from '../value.ts';
 import { bounded } from './events/bounded.ts';
-import { inWords } from './events/in-words.ts';
+import { clippedNotices } from './events/clipped.ts';
 import { type Observation, oncePerEvent } from './events/once-per-event.ts';
 import { stretch, whole } from './events/whole.ts';
 import { momentsOf } from './other/moments.ts';
@@ -36,7 +36,7 @@ export function measureOther(signal: MeasuredSignal): Findings {
     { key: 'mean', value: moments.mean, unit, evidence: all },
     { key: 'rms', value: moments.rms, unit, evidence: all },
   ];
-  const rails = railNotices(signal, lowest, highest);
+  const rails = clippedNotices(signal, 'extremes are bounds, mean and rms are off');
 
   const holds = axis.kind === 'uneven' && axis.holds;
   const noise = holds ? 0 : readingNoise(values);
@@ -135,23 +135,6 @@ function noSwing(reason: string): Value[] {
     absent('frequency', 'Hz', reason),
     absent('duty', '%', reason),
     absent('pulse_width', 'ms', reason),
-  ];
-}
-
-function railNotices(signal: MeasuredSignal, lowest: number, highest: number): Notice[] {
-  const { rail, unit, axis } = signal;
-  const hit = [
-    rail?.high != null && highest >= rail.high ? inWords(rail.high, unit) : null,
-    rail?.low != null && lowest <= rail.low ? inWords(rail.low, unit) : null,
-  ].filter((one) => one !== null);
-  if (hit.length === 0) return [];
-  return [
-    {
-      code: 'clipped',
-      severity: 'watch',
-      text: `The trace reaches the limit of the input (${hit.join(' and ')}). What lies beyond was not recorded: extremes are bounds, mean and rms are off. Use a wider range.`,
-      evidence: whole(axis),
-    },
   ];
 }
 

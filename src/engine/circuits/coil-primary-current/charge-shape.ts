@@ -5,6 +5,7 @@ import { robustDeviation } from '../../signal/statistics.ts';
 import { timeAt } from '../../signal/time.ts';
 import { partOf } from '../events/part-of.ts';
 import type { Charge } from './charges.ts';
+import { footOf, startOfLine, stepOf } from './foot.ts';
 import type { CurrentTrace } from './trace.ts';
 
 /** What the curve of one charge says. Times in seconds of the capture. */
@@ -16,6 +17,8 @@ export interface ChargeShape {
   readonly peak: number;
   /** The last 10 % of the dwell stay within 1 %. */
   readonly flat: boolean;
+  /** Rise over the last 10 % of the dwell as a share of its level, and the standard error of that. */
+  readonly drift: { readonly share: number; readonly error: number } | null;
   /** Flat although the rise, drawn on, would have gone well above: a limiter and not the end of the L/R curve. */
   readonly limiter: boolean;
   readonly timeConstantS: number | null;
@@ -61,14 +64,21 @@ export function chargeShape(trace: CurrentTrace, charge: Charge): ChargeShape {
   const footS = charge.first === null ? null : footOf(trace, charge.first, peak);
   const zeroS = good && fit.zeroS !== null ? originS + fit.zeroS : null;
   const lengthS = endS - originS;
-  const step = footS === null || !good ? 0 : Math.max(0, fit.at(footS - originS) / peak);
-  const isStep = step > 0.12 && zeroS !== null && footS !== null && footS - zeroS > 0.05 * lengthS;
-  const startS = startOf();
+  const step = footS === null || !good ? 0 : stepOf(trace, fit, originS, footS, peak, lengthS);
+  // Neighbouring samples of a coarse converter err together: only as many count as steps are passed.
+  const passed = trace.step > 0 ? Math.max(1, (2 * held) / trace.step) : Number.POSITIVE_INFINITY;
+  const spread = Math.sqrt(Math.max(1, Math.min(to - from, MOST_POINTS) / passed));
   const sure =
-    good && fit.rate > 0 && fit.rateError < 0.07 * fit.rate && fit.rate * (timeAt(axis, to) - originS) > 0.12;
+    good &&
+    fit.rate > 0 &&
+    spread * fit.rateError < 0.07 * fit.rate &&
+    fit.rate * (timeAt(axis, to) - originS) > 0.12;
+  const coarse = trace.step > 0.03 * held && !sure;
+  const startS = startOf();
   function startOf(): number | null {
-    if (footS === null || isStep) return footS;
-    if (zeroS !== null && Math.abs(zeroS - footS) <= 0.15 * lengthS) return zeroS;
+    if (footS === null || coarse) return null;
+    if (step > 0) return footS;
+    if (zeroS !== null && Math.abs(zeroS - footS) <= 0.3 * lengthS) return zeroS;
     return startOfLine(trace, from, to, footS);
   }
   return {
@@ -77,9 +87,13 @@ export function chargeShape(trace: CurrentTrace, charge: Charge): ChargeShape {
     endS,
     peak,
     flat,
+    drift:
+      slope && held > 0
+        ? { share: (slope.slope * tailS) / held, error: (slope.slopeError * tailS) / held }
+        : null,
     limiter: flat && (!good || fit.final === null || fit.final > 1.15 * held),
     timeConstantS: sure ? 1 / fit.rate : null,
-    step: isStep ? step : 0,
+    step,
     bendsUp: fit !== null && !flat && fit.rate * lengthS < -0.3 && fit.rateError * lengthS < 0.15,
   };
 }
@@ -132,24 +146,6 @@ function fitPart(trace: CurrentTrace, from: number, to: number): ExponentialFit 
     Float64Array.from(kept, (k) => timesS[k]!),
     Float64Array.from(kept, (k) => means[k]!),
   );
-}
-
-/** Where the trace itself leaves zero: the passage of 4 % of the peak just before the first sample with current. */
-function footOf(trace: CurrentTrace, first: number, peak: number): number {
-  const { amperes, axis } = trace;
-  const before = amperes[first - 1]!;
-  const here = amperes[first]!;
-  const level = Math.min(here, 0.04 * peak);
-  const share = here > before ? Math.min(1, Math.max(0, (level - before) / (here - before))) : 1;
-  return timeAt(axis, first - 1 + share);
-}
-
-/** Zero of a straight line through the first fifth of the rise; the foot where that makes no sense. */
-function startOfLine(trace: CurrentTrace, from: number, to: number, footS: number): number {
-  const line = fitLine(trace.amperes, trace.axis, from, from + Math.max(4, 0.2 * (to - from)));
-  if (!line || !(line.slope > 0)) return footS;
-  const zeroS = line.middleS - line.middle / line.slope;
-  return Math.abs(zeroS - footS) < 0.15 * (timeAt(trace.axis, to) - footS) ? zeroS : footS;
 }
 
 /** A copy in which what lies far from the rest (pick-up at the switch-off) is a hole. */

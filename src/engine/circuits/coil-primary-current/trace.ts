@@ -1,8 +1,8 @@
 import type { TimeAxis } from '../../capture.ts';
-import { fullestLevel } from '../../signal/fullest-level.ts';
+import { fullestLevel, within } from '../../signal/fullest-level.ts';
 import { sortedRange } from '../../signal/range.ts';
-import { readingNoise } from '../../signal/resolution.ts';
-import { robustDeviation } from '../../signal/statistics.ts';
+import { quantisationStep, readingNoise } from '../../signal/resolution.ts';
+import { quantileSorted, robustDeviation } from '../../signal/statistics.ts';
 import { timeAt } from '../../signal/time.ts';
 
 /** Amperes with the clamp's zero taken off and a reversed clamp turned round. */
@@ -13,6 +13,8 @@ export interface CurrentTrace {
   readonly zero: number;
   readonly reversed: boolean;
   readonly noise: number;
+  /** Step of the converter; 0 where none is seen. */
+  readonly step: number;
   /** Highest level that five samples in a row reach: spikes do not count. */
   readonly top: number;
 }
@@ -37,8 +39,9 @@ export function currentTrace(values: Float32Array, axis: TimeAxis): CurrentTrace
     highest,
   );
   const middle = (lowest + highest) / 2;
-  const zero = fullestLevel(sorted, reversed ? middle : lowest, reversed ? highest : middle, noise).level;
+  const full = fullestLevel(sorted, reversed ? middle : lowest, reversed ? highest : middle, noise).level;
   const sign = reversed ? -1 : 1;
+  const zero = quietLevel(sorted, full, sign, Math.max(8 * noise, 0.04 * (highest - lowest)));
   const amperes = values.map((value) => sign * (value - zero));
   const quiet = sortedRange(amperes, 0, amperes.length, 65_536);
   const about = quiet.filter((value) => Math.abs(value) < Math.max(8 * noise, 0.03 * (highest - lowest)));
@@ -48,8 +51,22 @@ export function currentTrace(values: Float32Array, axis: TimeAxis): CurrentTrace
     zero,
     reversed,
     noise: Math.max(noise, robustDeviation(about) ?? 0),
+    step: quantisationStep(values),
     top: sustainedTop(amperes),
   };
+}
+
+/**
+ * Median of the samples within `reach` of the fullest level: hum has its modes at its ends, not in its middle. Where the foot of the
+ * rises holds more than a tenth of what is there, the fullest level itself.
+ */
+function quietLevel(sorted: Float32Array, full: number, sign: number, reach: number): number {
+  const about = within(sorted, full - reach, full + reach);
+  const beyond =
+    sign > 0
+      ? within(sorted, full + reach, full + 3 * reach)
+      : within(sorted, full - 3 * reach, full - reach);
+  return about.length > 0 && beyond.length <= 0.1 * about.length ? quantileSorted(about, 0.5) : full;
 }
 
 function isReversed(

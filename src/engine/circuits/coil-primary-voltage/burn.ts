@@ -10,8 +10,8 @@ const DIP_S = 30e-6;
 
 /**
  * The burn line after a kick: the time the voltage stays above the feed once the kick has fallen, if that is long and
- * level enough. It starts at half the kick on its falling side (midway from kick to burn where the burn is higher than
- * that) and ends at the last passage of halfway from burn to feed before the voltage first drops to the feed. Level: median.
+ * level enough. It starts at half the kick on its falling side: the kick stands on the burn line, so its half height is midway
+ * between its peak and that line, as the other end is midway between the line and the feed. It ends at the last passage of halfway from burn to feed before the voltage first drops to the feed. Level: median.
  * null: no burn line; the half swings of a ringing coil are shorter, or rounder than a line.
  */
 export function findBurn(trace: CoilTrace, kick: Kick, until: number): Burn | null {
@@ -36,7 +36,7 @@ export function findBurn(trace: CoilTrace, kick: Kick, until: number): Burn | nu
   const rough = sortedRange(values, kick.at + 1 + 0.15 * (last - kick.at), last);
   if (rough.length < 3) return null;
   const roughLevel = quantileSorted(rough, 0.5);
-  const start = fallThrough(values, kick.at, last, fallingLevel(kick.peak, roughLevel));
+  const start = fallThrough(values, kick.at, last, (kick.peak + roughLevel) / 2);
   if (start === null) return null;
   const line = sortedRange(values, start, last);
   if (line.length < 3) return null;
@@ -52,8 +52,6 @@ export function findBurn(trace: CoilTrace, kick: Kick, until: number): Burn | nu
     level,
   };
 }
-
-const fallingLevel = (peak: number, burn: number) => (burn < peak / 2 ? peak / 2 : (peak + burn) / 2);
 
 /** First falling passage of `level` after sample `from`, as a fractional index. */
 function fallThrough(values: Float32Array, from: number, to: number, level: number): number | null {

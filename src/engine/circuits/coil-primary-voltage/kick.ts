@@ -35,6 +35,8 @@ export function findKick(trace: CoilTrace, off: number, until: number, railHigh:
   while (flatFrom > from && !(values[flatFrom - 1]! < nearTop)) flatFrom -= 1;
   let flatTo = top;
   while (flatTo < to && !(values[flatTo + 1]! < nearTop)) flatTo += 1;
+  let equal = 1;
+  while (top + equal < values.length && values[top + equal] === peak) equal += 1;
   const samples = to - from + 1;
   const flatSamples = flatTo - flatFrom + 1;
   return {
@@ -44,9 +46,10 @@ export function findKick(trace: CoilTrace, off: number, until: number, railHigh:
     to,
     samples,
     flat:
-      flatSamples >= 4 &&
-      timeAt(axis, flatTo) - timeAt(axis, flatFrom) >= 12e-6 &&
-      flatSamples >= 0.5 * samples,
+      (equal >= 3 && states.noise > 0 && states.step < 0.002 * peak) ||
+      (flatSamples >= 4 &&
+        timeAt(axis, flatTo) - timeAt(axis, flatFrom) >= 12e-6 &&
+        flatSamples >= 0.5 * samples),
     clipped:
       (railHigh !== null && peak >= railHigh - Math.max(states.noise, 1e-6 * Math.abs(railHigh))) ||
       holeIn(values, from, to + 1),

@@ -9,10 +9,19 @@ import type { LoadStates } from '../switched-load/states.ts';
 import { isSteady } from '../switched-load/steady.ts';
 import type { MeasuredSignal } from '../types.ts';
 
-/** No switch-off: counts are 0 in a steady trace and unknown in one that moves without showing the driver on. */
-export function noEvent(signal: MeasuredSignal, states: LoadStates | null, reason: string): Findings {
+/**
+ * No switch-off: counts are 0 in a steady trace and unknown in one that moves without showing the driver on.
+ *
+ * @param calm the trace is known to be steady but for its hum.
+ */
+export function noEvent(
+  signal: MeasuredSignal,
+  states: LoadStates | null,
+  reason: string,
+  calm = false,
+): Findings {
   const sorted = sortedRange(signal.values, 0, signal.values.length);
-  const steady = states !== null && isSteady(signal.values, states);
+  const steady = calm || (states !== null && isSteady(signal.values, states));
   const level = sorted.length > 0 ? quantileSorted(sorted, 0.5) : null;
   const why = steady || !states ? reason : 'the trace moves, but shows no time with the driver on';
   return {

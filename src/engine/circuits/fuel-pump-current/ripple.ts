@@ -9,6 +9,8 @@ const LOWEST_HZ = 80;
 const HIGHEST_HZ = 4000;
 /** Two ways to the rate must agree within this share. */
 const AGREE = 0.05;
+/** Below this a fast pump's ripple folds back to a slower one that looks as real. Ripples are some 300 to 1,500 a second: common practice, no source. */
+const LEAST_RATE_HZ = 4000;
 const MOST_POINTS = 1 << 17;
 
 export type Ripple =
@@ -20,7 +22,7 @@ export function findRipple({ values, axis }: MeasuredSignal): Ripple {
   const means = evenMeans(values, axis, 1 / (8 * HIGHEST_HZ));
   if (!means) return { rateHz: null, reason: 'no samples to measure' };
   const rateHz = 1 / means.stepS;
-  if (rateHz < 1000)
+  if (rateHz < LEAST_RATE_HZ)
     return {
       rateHz: null,
       reason: `${Math.round(rateHz)} samples a second are too few for the ripple; 10,000 would do`,

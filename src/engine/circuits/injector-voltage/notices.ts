@@ -1,3 +1,4 @@
+import { atHighRail } from '../../signal/rail.ts';
 import type { Notice } from '../../value.ts';
 import { bounded } from '../events/bounded.ts';
 import { inWords } from '../events/in-words.ts';
@@ -27,12 +28,11 @@ export function injectorNotices(
   const highest = Math.max(states.rest, ...pulses.map((pulse) => pulse.clamp?.peak ?? states.rest));
   const factor = states.acCoupled ? null : forgottenFactor(states.rest);
   if (factor !== null) notices.push(probeFactorNotice(axis, states.rest, highest, factor));
-  const high = signal.rail?.high ?? null;
   add(
     'kick-lower-bound',
     'watch',
     'The switch-off spike reaches the limit of the input, so its true height is unknown: the number is a lower bound. Use an attenuator or a wider range.',
-    ({ clamp }) => high !== null && clamp !== null && clamp.peak >= high,
+    ({ clamp }) => clamp !== null && atHighRail(clamp.peak, signal.rail),
   );
   add(
     'no-kick',

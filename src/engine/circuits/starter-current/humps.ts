@@ -6,6 +6,8 @@ import { median } from '../../signal/statistics.ts';
 /** Compressions a second that an engine of 1 to 12 cylinders makes while it is cranked. Common practice, no source. */
 export const LOWEST_HZ = 1.5;
 export const HIGHEST_HZ = 40;
+/** An engine that runs up shortens the time between its compressions by less than this from one to the next. Common practice, no source. */
+const RUN_UP = 1.6;
 
 /** One compression: where its hump stands (place in the means, fractions allowed) and how high over the valleys beside it. */
 export interface Hump {
@@ -36,32 +38,43 @@ export function findHumps(means: EvenMeans, from: number, to: number, rateHz: nu
   const kept = peaks
     .filter((peak) => peak.prominence >= 0.25 * usual)
     .map((peak) => vertex(smooth, peak.index));
+  const runUp = runUpTo(kept);
   const places: Array<{ at: number; inferred: boolean }> = [];
   kept.forEach((at, k) => {
     const before = kept[k - 1];
-    const steps = before === undefined ? 1 : Math.round((at - before) / period);
+    const steps = before === undefined || k <= runUp ? 1 : Math.round((at - before) / period);
     for (let j = 1; j < steps; j += 1)
       places.push({ at: before! + ((at - before!) * j) / steps, inferred: true });
     places.push({ at, inferred: false });
   });
-  return places.map(({ at, inferred }) => ({
-    at: from + at,
-    inferred,
-    height: heightOf(smooth, at, period),
-  }));
+  return places.map(({ at, inferred }, k) => {
+    const before = at - (places[k - 1]?.at ?? at - Math.max(period, (places[k + 1]?.at ?? 0) - at));
+    const after = (places[k + 1]?.at ?? at + Math.max(period, before)) - at;
+    return { at: from + at, inferred, height: heightOf(smooth, at, 0.75 * before, 0.75 * after) };
+  });
 }
 
-/** Height over the mean of the lowest points within three quarters of a period on either side. */
-function heightOf(smooth: Float64Array, at: number, period: number): number {
+/** Last hump of an engine that is still running up: from the first on, each distance is a little shorter than the one before. */
+function runUpTo(places: readonly number[]): number {
+  let k = 0;
+  for (; k + 2 < places.length; k += 1) {
+    const shortening = (places[k + 1]! - places[k]!) / (places[k + 2]! - places[k + 1]!);
+    if (shortening < 1.03 || shortening > RUN_UP) break;
+  }
+  return k;
+}
+
+/** Height over the mean of the lowest points within reach on either side: three quarters of the way to the next hump there. */
+function heightOf(smooth: Float64Array, at: number, before: number, after: number): number {
   const middle = Math.round(at);
-  const reach = Math.round(0.75 * period);
   const least = (from: number, to: number) => {
     let lowest = Number.POSITIVE_INFINITY;
     for (let i = Math.max(0, from); i < Math.min(smooth.length, to); i += 1)
       lowest = Math.min(lowest, smooth[i]!);
     return lowest;
   };
-  const valley = (least(middle - reach, middle + 1) + least(middle, middle + reach + 1)) / 2;
+  const valley =
+    (least(middle - Math.round(before), middle + 1) + least(middle, middle + Math.round(after) + 1)) / 2;
   return smooth[middle]! - valley;
 }
 

@@ -1,3 +1,4 @@
+import { atHighRail, atLowRail } from '../../signal/rail.ts';
 import type { Notice } from '../../value.ts';
 import { inWords } from '../events/in-words.ts';
 import { whole } from '../events/whole.ts';
@@ -29,8 +30,10 @@ export function starterNotices(
       'The current points down: the clamp sits the other way round. It is measured as if turned; amperes are given as positive.',
     );
   }
-  const rail = signal.rail && (cranking.reversed ? signal.rail.low : signal.rail.high);
-  if (rail != null && inrush !== null && inrush >= Math.abs(rail)) {
+  const cut =
+    inrush !== null &&
+    (cranking.reversed ? atLowRail(-inrush, signal.rail) : atHighRail(inrush, signal.rail));
+  if (cut) {
     add(
       'inrush-lower-bound',
       'watch',

@@ -1,3 +1,4 @@
+import type { TimeAxis } from '../../capture.ts';
 import { timeAt } from '../../signal/time.ts';
 import type { Evidence, Notice } from '../../value.ts';
 import { bounded } from '../events/bounded.ts';
@@ -43,6 +44,18 @@ export function supplyNotices(
     });
   }
   return notices;
+}
+
+/** The whole trace below zero: probe and ground were swapped, or the scale was turned over. */
+export function upsideDownSupply(axis: TimeAxis): Notice {
+  return {
+    code: 'upside-down',
+    severity: 'watch',
+    text:
+      'The supply stays below zero: the probe and its ground seem to be swapped, or the trace is turned over. Levels are left out. Set the factor to −1 if the ' +
+      'leads were swapped, or record again.',
+    evidence: whole(axis),
+  };
 }
 
 /** Stretches of at least 1 ms below `level`. */

@@ -1,7 +1,7 @@
 import { crossings } from '../../signal/crossings.ts';
 import { type FullestLevel, fullestLevel, within } from '../../signal/fullest-level.ts';
 import { rangeMedian, sortedRange } from '../../signal/range.ts';
-import { readingNoise } from '../../signal/resolution.ts';
+import { quantisationStep, readingNoise } from '../../signal/resolution.ts';
 import { median, quantileSorted } from '../../signal/statistics.ts';
 
 /**
@@ -13,6 +13,8 @@ export interface LoadStates {
   readonly on: number | null;
   /** Noise of the reading (white or quantisation), rms. */
   readonly noise: number;
+  /** Step of the converter; 0 where none is seen. */
+  readonly step: number;
   /** Rest level near zero with the on level as far below it: the input blocks direct voltage. */
   readonly acCoupled: boolean;
 }
@@ -26,6 +28,7 @@ export function loadStates(values: Float32Array): LoadStates | null {
   const sorted = sortedRange(values, 0, values.length, 65_536);
   if (sorted.length < 8) return null;
   const noise = readingNoise(values);
+  const converterStep = quantisationStep(values);
   const bottom = quantileSorted(sorted, 0.0005);
   const top = quantileSorted(sorted, 0.98);
   const full = fullestLevel(sorted, bottom, top, noise);
@@ -43,14 +46,15 @@ export function loadStates(values: Float32Array): LoadStates | null {
   const enough = Math.max(3, sorted.length * 0.0002);
   if (rest > 5 * noise && grounded.length >= enough) {
     const on = fullestLevel(grounded, grounded[0]!, grounded[grounded.length - 1]!, noise).level;
-    if (rest - on > Math.max(4 * noise, 0.3 * rest)) return { rest, on, noise, acCoupled: false };
+    if (rest - on > Math.max(4 * noise, 0.3 * rest))
+      return { rest, on, noise, step: converterStep, acCoupled: false };
   }
   const lower = within(sorted, bottom, rest - Math.max(8 * noise, 0.35 * (rest - bottom)));
   if (lower.length >= enough && Math.abs(rest) < 0.45 * (rest - bottom)) {
     const on = fullestLevel(lower, lower[0]!, lower[lower.length - 1]!, noise).level;
-    if (Math.abs(rest) < 0.7 * (rest - on)) return { rest, on, noise, acCoupled: true };
+    if (Math.abs(rest) < 0.7 * (rest - on)) return { rest, on, noise, step: converterStep, acCoupled: true };
   }
-  return { rest, on: null, noise, acCoupled: false };
+  return { rest, on: null, noise, step: converterStep, acCoupled: false };
 }
 
 /**
