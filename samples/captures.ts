@@ -1,34 +1,12 @@
 import { type Column, type Dialect, toCsv } from './csv.ts';
+import { ELECTRICAL } from './electrical.ts';
 import { type CoilFiring, coilAmperes, coilVolts } from './physics/coil.ts';
 import { type CrankMotion, crankMotion } from './physics/crank-motion.ts';
 import { injectorVolts } from './physics/injector.ts';
 import { pickUpVolts, type ToothWheel } from './physics/pick-up.ts';
-import { seededNormal } from './physics/random.ts';
 import { starterAmperes } from './physics/starter.ts';
 import { toothStretches, twoLevels } from './physics/two-levels.ts';
-
-export interface Sample {
-  readonly file: string;
-  readonly title: string;
-  /** What it holds and what to look at; every sample is simulated and says so. */
-  readonly text: string;
-  readonly cylinders: number;
-  readonly csv: () => string;
-}
-
-const comma: Dialect = { delimiter: ',', decimal: '.', timeUnit: 's' };
-const continental: Dialect = { delimiter: ';', decimal: ',', timeUnit: 'ms' };
-const tabbed: Dialect = { delimiter: '\t', decimal: '.', timeUnit: 'us' };
-
-function noisy(values: Float64Array, rms: number, seed: number): Float64Array {
-  const normal = seededNormal(seed);
-  return values.map((value) => value + rms * normal());
-}
-
-/** Samples a function of time at equal steps. */
-function sampled(startS: number, stepS: number, count: number, at: (timeS: number) => number): Float64Array {
-  return Float64Array.from({ length: count }, (_, i) => at(startS + i * stepS));
-}
+import { comma, continental, noisy, type Sample, sampled, tabbed } from './sample.ts';
 
 const camLobes = [
   [57, 137],
@@ -221,4 +199,5 @@ export const SAMPLES: readonly Sample[] = [
     cylinders: 4,
     csv: () => starterCsv([62, 62, 30, 62], 81),
   },
+  ...ELECTRICAL,
 ];

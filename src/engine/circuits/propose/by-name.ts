@@ -2,6 +2,9 @@ import type { Proposal } from '../../reading/types.ts';
 import type { NameRole } from './name-role.ts';
 import type { Shape } from './shape.ts';
 
+/** Kicks are higher, commands lower. Common practice, no source. */
+const LOWEST_KICK_V = 30;
+
 type Guess = Omit<Proposal, 'unit'>;
 
 /** The circuit that a name means, with the variant taken from unit and shape; null when the name decides nothing. */
@@ -86,7 +89,9 @@ function sensor(kind: 'crank' | 'cam', name: NameRole, shape: Shape | null, said
 function coil(name: NameRole, unit: string | null, shape: Shape | null, said: string): Guess {
   if (unit === 'A')
     return { circuit: 'coil-primary-current', confidence: 0.92, because: `${said}, in amperes` };
-  const kicks = shape !== null && shape.kickRatio > 2.2 && shape.topShare < 0.05;
+  // Rare pulses of a command stand out as far as kicks do, but rest at a second level and stay below what a kick reaches.
+  const pulses = shape?.twoLevels === true && (name.command || shape.highest < LOWEST_KICK_V);
+  const kicks = shape !== null && !pulses && shape.kickRatio > 2.2 && shape.topShare < 0.05;
   if (kicks && !name.command) {
     return {
       circuit: 'coil-primary-voltage',
