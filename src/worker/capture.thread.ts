@@ -6,6 +6,7 @@ import { ApiError } from '../server/errors.ts';
 import { isStoreAway } from '../server/storage/away.ts';
 import { loadAxis, loadSamples } from '../server/storage/load-samples.ts';
 import { writeSamples, writeTimes } from '../server/storage/write-samples.ts';
+import { deriveSignals } from './derive-signals.ts';
 import { draftSignals, requested } from './draft-signals.ts';
 import { storedAxis } from './stored-axis.ts';
 import type { SignalDraft, ThreadMessage, ThreadTask } from './thread-messages.ts';
@@ -48,16 +49,18 @@ async function read(task: ThreadTask): Promise<Loaded | null> {
     return null;
   }
   const { axis, columns, reading, preview } = table;
-  const drafts = draftSignals(columns, axis, task.signalRequests);
+  const recorded = draftSignals(columns, axis, task.signalRequests);
+  const { made, drafts } = deriveSignals(task, axis, recorded, columns);
   await writeTimes(captureId, samplesVersion, axis);
-  for (const [index, { samples }] of columns.entries()) {
+  const all = [...columns.map(({ samples }) => samples), ...made];
+  for (const [index, samples] of all.entries()) {
     await writeSamples(captureId, samplesVersion, index, samples);
-    const part = READING_PART + ((1 - READING_PART) * (index + 1)) / columns.length;
+    const part = READING_PART + ((1 - READING_PART) * (index + 1)) / all.length;
     tell({ type: 'progress', phase: 'reading', part });
   }
   const stored = storedAxis(axis);
   tell({ type: 'read', reading, preview, axis: stored, samples: stored.count, signals: drafts, sha256 });
-  const signals = drafts.map((draft) => signalInput(draft, columns[draft.index]!.samples));
+  const signals = drafts.map((draft) => signalInput(draft, all[draft.index]!));
   return { axis, signals, cylinders: task.cylinders, drafts };
 }
 

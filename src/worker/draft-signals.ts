@@ -25,6 +25,7 @@ export function draftSignals(
       unit: unit ?? proposal.unit,
       factor,
       offset: 0,
+      made: null,
       rail: column.rail,
     };
     return requested(draft, requests);

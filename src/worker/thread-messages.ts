@@ -1,6 +1,6 @@
 import type { CaptureFindings } from '../engine/capture.ts';
 import type { PreviewLine, ReadFailure, Reading, ReadingHints } from '../engine/reading/types.ts';
-import type { captureSignal, SignalRequest, StoredAxis } from '../server/db/schema.ts';
+import type { captureSignal, DerivedRequest, SignalRequest, StoredAxis } from '../server/db/schema.ts';
 
 export type SignalDraft = Omit<typeof captureSignal.$inferSelect, 'captureId'>;
 
@@ -18,6 +18,8 @@ export interface ThreadTask {
   readonly hints: ReadingHints;
   readonly signalRequests: readonly SignalRequest[];
   readonly cylinders: number | null;
+  /** For `read`: what is to be made from the recorded signals. */
+  readonly derived: readonly DerivedRequest[];
   /** For `measure`: the axis and signals as stored. */
   readonly axis: StoredAxis | null;
   readonly signals: readonly SignalDraft[];

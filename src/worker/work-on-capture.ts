@@ -81,6 +81,7 @@ export async function taskFor({ row, kind }: Begun, samplesVersion: number): Pro
     hints: row.hints,
     signalRequests: row.signalRequests,
     cylinders: row.cylinders,
+    derived: row.derived,
     axis: row.axis,
     signals: kind === 'measure' ? await storedSignals(row) : [],
     unpackedLimitBytes: config().uploadLimitBytes * 2,

@@ -1,5 +1,5 @@
 import { useState } from 'react';
-import type { CaptureJson } from '../../contract/areas/captures.ts';
+import type { CaptureJson, DerivedJson } from '../../contract/areas/captures.ts';
 import { ApiFailure, api, sentenceOf } from '../base/api.ts';
 import { Button } from '../base/Button.tsx';
 import { circuitWords } from '../base/circuits.ts';
@@ -9,6 +9,7 @@ import { LineSample } from '../base/LineSample.tsx';
 import { Message } from '../base/Message.tsx';
 import { inOrder, type LaneSetup, PLAIN_SETUP } from '../plot/lane-setup.ts';
 import { parseFactor } from '../reading/parse-factor.ts';
+import { DerivedForm } from './DerivedForm.tsx';
 
 interface LanesDialogProps {
   capture: CaptureJson;
@@ -36,13 +37,15 @@ export function LanesDialog({ capture, etag, setup, onSetup, onChanged, onClose 
     if (!next.delete(index)) next.add(index);
     onSetup({ ...setup, [of]: next });
   };
-  const save = async (column: number, change: { factor?: number; unit?: string }) => {
+  const save = (column: number, change: { factor?: number; unit?: string }) =>
+    patch({ signals: [{ column, ...change }] });
+  const patch = async (body: { signals: unknown[] } | { derived: DerivedJson[] }) => {
     setTrouble(null);
     try {
       await api(`/captures/${capture.id}`, {
         method: 'PATCH',
         etag,
-        body: { signals: [{ column, ...change }] },
+        body,
       });
       onChanged();
     } catch (thrown) {
@@ -103,13 +106,29 @@ export function LanesDialog({ capture, etag, setup, onSetup, onChanged, onClose 
                   Upside down
                 </button>
               </span>
-              {signal.column >= 0 && (
+              {signal.made === null ? (
                 <FactorForm key={`${signal.factor} ${signal.unit}`} signal={signal} onSave={save} />
+              ) : (
+                <p className="lanes-made">
+                  <span className="text-soft">{signal.made}</span>
+                  <Button
+                    small
+                    kind="quiet"
+                    onClick={() =>
+                      void patch({
+                        derived: capture.derived.filter(({ column }) => column !== signal.column),
+                      })
+                    }
+                  >
+                    Remove
+                  </Button>
+                </p>
               )}
             </li>
           );
         })}
       </ol>
+      <DerivedForm key={capture.revision} capture={capture} onSave={(derived) => patch({ derived })} />
       <label className="lanes-common">
         <input
           type="checkbox"

@@ -8,7 +8,8 @@ export const captureStatus = z.enum(CAPTURE_STATUSES);
 
 /** How a person wants one of the file's columns read. `column` counts the file's columns from 0, time included. */
 export const signalRequest = z.object({
-  column: z.number().int().min(0).max(4096),
+  /** Below 0: a derived signal's. */
+  column: z.number().int().min(-64).max(4096),
   name: text(200).optional(),
   circuit: circuit.optional(),
   unit: text(20).optional(),
@@ -38,6 +39,31 @@ export const uploadFields = z.object({
     .pipe(signalRequests)
     .optional(),
 });
+
+const sourceColumn = z.number().int().min(-64).max(4096);
+const ownColumn = z.number().int().min(-64).max(-1);
+
+/** A signal to be made from recorded ones. `of` and `less` are the `column` of signals; `column` is its own, below 0. */
+export const derivedRequest = z.discriminatedUnion('kind', [
+  z.object({
+    kind: z.literal('low-pass'),
+    column: ownColumn,
+    of: sourceColumn,
+    cutoffHz: z.number().positive().max(1e9),
+  }),
+  z.object({
+    kind: z.literal('moving-mean'),
+    column: ownColumn,
+    of: sourceColumn,
+    lengthS: z.number().positive().max(1e6),
+  }),
+  z.object({ kind: z.literal('derivative'), column: ownColumn, of: sourceColumn }),
+  z.object({ kind: z.literal('integral'), column: ownColumn, of: sourceColumn }),
+  z.object({ kind: z.literal('absolute'), column: ownColumn, of: sourceColumn }),
+  z.object({ kind: z.literal('difference'), column: ownColumn, of: sourceColumn, less: sourceColumn }),
+  z.object({ kind: z.literal('speed'), column: ownColumn, of: sourceColumn }),
+]);
+export type DerivedJson = z.infer<typeof derivedRequest>;
 
 export const readingHints = z.object({
   encoding: z.enum(['utf-8', 'utf-16le', 'utf-16be', 'windows-1252']).optional(),
@@ -74,6 +100,8 @@ export const captureSignal = z.object({
   unit: z.string(),
   factor: z.number(),
   offset: z.number(),
+  /** How a derived signal was made; null for a recorded one. */
+  made: z.string().nullable(),
 });
 
 export const captureError = z.object({
@@ -110,6 +138,8 @@ export const capture = z.object({
   createdBy: z.object({ id, name: z.string() }),
   deletedAt: isoTime.nullable(),
   signals: z.array(captureSignal),
+  /** What people asked to have made from the recorded signals. */
+  derived: z.array(derivedRequest),
   reading: reading.nullable(),
 });
 export type CaptureJson = z.infer<typeof capture>;
@@ -219,6 +249,8 @@ export const capturePatch = z
     jobId: id.nullable(),
     signals: signalRequests,
     reading: readingHints,
+    /** The whole list of derived signals, as it shall be. */
+    derived: z.array(derivedRequest).max(32),
   })
   .partial()
   .strict();

@@ -1,4 +1,4 @@
-import { and, eq, isNull, ne, or, type SQL, sql } from 'drizzle-orm';
+import { and, eq, isNull, ne, or, type Placeholder, type SQL, sql } from 'drizzle-orm';
 import type { PgColumn } from 'drizzle-orm/pg-core';
 import { capture, membership } from '../db/schema.ts';
 import type { PersonCaller } from './caller.ts';
@@ -12,7 +12,7 @@ const RESTORABLE = sql`now() - interval '30 days'`;
  * column): practice captures are for their maker, instructors and owners. A learner sees their own and what is set for
  * them, and nothing that an open exercise rests on until they have answered it.
  */
-export function captureVisible(personId: string, role: HeldRole): SQL {
+export function captureVisible(personId: string | Placeholder, role: HeldRole): SQL {
   const own = eq(capture.createdBy, personId);
   const held = heldSql(role);
   return sql`(${held} in ('owner', 'instructor')

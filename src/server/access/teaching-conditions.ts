@@ -1,4 +1,4 @@
-import { type SQL, sql } from 'drizzle-orm';
+import { type Placeholder, type SQL, sql } from 'drizzle-orm';
 import type { Role } from '../../contract/roles.ts';
 import { attempt, capture, exercise, type membership } from '../db/schema.ts';
 
@@ -7,10 +7,13 @@ export type HeldRole = Role | typeof membership.role;
 export const heldSql = (role: HeldRole): SQL =>
   typeof role === 'string' ? sql`${role}::text` : sql`${role}`;
 
+/** A person's id, or its place in a prepared statement. */
+type PersonId = string | Placeholder;
+
 const isStaff = (role: HeldRole): SQL => sql`${heldSql(role)} in ('owner', 'instructor')`;
 
 /** That a set, under the alias given, is set for a person: open, not hidden, for everybody or for them by name. */
-const setFor = (alias: string, personId: string): SQL => {
+const setFor = (alias: string, personId: PersonId): SQL => {
   const s = sql.raw(alias);
   return sql`(${s}.state = 'open' and ${s}.deleted_at is null and (${s}.audience = 'everyone' or (${s}.audience = 'named'
     and exists (select 1 from teaching_set_person sp where sp.set_id = ${s}.id and sp.person_id = ${personId}))))`;
@@ -20,7 +23,7 @@ const setFor = (alias: string, personId: string): SQL => {
 export const setVisible = (personId: string, role: HeldRole): SQL =>
   sql`(${isStaff(role)} or ${setFor('teaching_set', personId)})`;
 
-const inSetFor = (what: SQL, personId: string): SQL => sql`exists (select 1 from teaching_set_item si
+const inSetFor = (what: SQL, personId: PersonId): SQL => sql`exists (select 1 from teaching_set_item si
   join teaching_set s on s.id = si.set_id where ${what} and ${setFor('s', personId)})`;
 
 /** Instructors and owners see every exercise; others the open ones of their sets, and always those that they answered. */
@@ -30,7 +33,7 @@ export const exerciseVisible = (personId: string, role: HeldRole): SQL => sql`($
 
 /** That a capture stands in a set for the person, or is what an exercise rested on that they have answered. */
 export const captureSetFor = (
-  personId: string,
+  personId: PersonId,
 ): SQL => sql`(${inSetFor(sql`si.capture_id = ${capture.id}`, personId)}
   or exists (select 1 from exercise e join attempt a on a.exercise_id = e.id and a.person_id = ${personId}
     where e.capture_id = ${capture.id} and e.deleted_at is null))`;
@@ -39,7 +42,7 @@ export const captureSetFor = (
  * That a trace is kept from a learner: an open exercise rests on it that they have not answered. The same file under
  * another capture counts too. One's own upload is kept back only from whom the exercise is set for.
  */
-export const captureWithheld = (personId: string): SQL => sql`exists (select 1 from exercise e
+export const captureWithheld = (personId: PersonId): SQL => sql`exists (select 1 from exercise e
   where e.workshop_id = ${capture.workshopId} and e.state = 'open' and e.deleted_at is null
     and (e.capture_id = ${capture.id} or (e.capture_sha256 = ${capture.sha256} and ${capture.createdBy} <> ${personId}))
     and (${capture.createdBy} <> ${personId} or ${inSetFor(sql`si.exercise_id = e.id`, personId)})

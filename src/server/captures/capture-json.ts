@@ -66,6 +66,7 @@ function toJson(row: CaptureRecord, signals: readonly SignalRow[], makerName: st
     createdAt: row.createdAt.toISOString(),
     createdBy: { id: row.createdBy, name: makerName },
     deletedAt: row.deletedAt?.toISOString() ?? null,
+    derived: row.derived,
     signals: signals.map(({ captureId: _, rail: __, ...signal }) => signal),
     reading:
       row.reading === null

@@ -10,6 +10,7 @@ import { checkJob } from '../jobs/check-job.ts';
 import { QUEUES, type ReadJob } from '../queue/names.ts';
 import { inTransaction } from '../queue/transaction.ts';
 import { STOP_CHANNEL } from './cancel-capture.ts';
+import { checkedDerived } from './checked-derived.ts';
 import { mergeSignalRequests } from './merge-signal-requests.ts';
 import { pendingKind } from './pending-kind.ts';
 
@@ -41,6 +42,7 @@ export async function patchCapture(
         ...(patch.jobId === undefined ? {} : { jobId: patch.jobId }),
         ...(patch.cylinders === undefined ? {} : { cylinders: patch.cylinders }),
         ...(patch.reading === undefined ? {} : { hints: { ...now.hints, ...patch.reading } }),
+        ...(patch.derived === undefined ? {} : { derived: checkedDerived(now, patch.derived) }),
         ...(patch.signals === undefined
           ? {}
           : { signalRequests: mergeSignalRequests(now.signalRequests, patch.signals) }),
@@ -68,14 +70,17 @@ async function workFor(
 ): Promise<ReadJob['kind'] | null> {
   const reading = { ...now.hints, ...patch.reading };
   const rereads = patch.reading !== undefined && !isDeepStrictEqual(reading, now.hints);
+  const derives = patch.derived !== undefined && !isDeepStrictEqual(patch.derived, now.derived);
   const requests = mergeSignalRequests(now.signalRequests, patch.signals ?? []);
   const remeasures =
     !isDeepStrictEqual(requests, now.signalRequests) ||
     (patch.cylinders !== undefined && patch.cylinders !== now.cylinders);
   const again = patch.reading !== undefined && (now.status === 'failed' || now.status === 'cancelled');
-  if (rereads || again) return 'read';
+  if (rereads || again || derives) return 'read';
   if (!remeasures) return null;
   if (now.samplesVersion === 0) return 'read';
+  // What is made from a signal follows its factor and circuit.
+  if ((patch.derived ?? now.derived).length > 0) return 'read';
   if (now.status === 'ready' || now.status === 'measuring') return 'measure';
   if (now.status === 'queued') return (await pending()) ?? 'read';
   return 'read';

@@ -6,6 +6,10 @@ import { getBytes } from './get-bytes.ts';
  * changes (everything under a samples version).
  */
 const PIECE_BYTES = 256 * 1024;
+/** An object up to this size is one piece: a window over all of it is then read without copying. */
+const WHOLE_BYTES = 1024 * 1024;
+
+const pieceBytes = (objectBytes: number) => (objectBytes <= WHOLE_BYTES ? WHOLE_BYTES : PIECE_BYTES);
 const LIMIT_BYTES = 48 * 1024 * 1024;
 
 const pieces = new Map<string, { readonly bytes: Promise<Uint8Array>; readonly size: number }>();
@@ -20,16 +24,17 @@ export async function readRange(
 ): Promise<Uint8Array> {
   const end = Math.min(to, objectBytes);
   if (end <= from) return new Uint8Array(0);
-  const first = Math.floor(from / PIECE_BYTES);
-  const last = Math.floor((end - 1) / PIECE_BYTES);
+  const piece = pieceBytes(objectBytes);
+  const first = Math.floor(from / piece);
+  const last = Math.floor((end - 1) / piece);
   const found: Promise<Uint8Array>[] = [];
-  for (let piece = first; piece <= last; piece += 1) found.push(take(key, objectBytes, piece, last));
+  for (let at = first; at <= last; at += 1) found.push(take(key, objectBytes, at, last));
   const parts = await Promise.all(found);
-  const start = first * PIECE_BYTES;
+  const start = first * piece;
   if (parts.length === 1) return parts[0]!.subarray(from - start, end - start);
   const bytes = new Uint8Array(end - from);
   parts.forEach((part, k) => {
-    const pieceStart = start + k * PIECE_BYTES;
+    const pieceStart = start + k * piece;
     const low = Math.max(from, pieceStart);
     const high = Math.min(end, pieceStart + part.length);
     bytes.set(part.subarray(low - pieceStart, high - pieceStart), low - from);
@@ -52,12 +57,13 @@ function take(key: string, objectBytes: number, piece: number, lastWanted: numbe
 function fetchRun(key: string, objectBytes: number, piece: number, lastWanted: number): Promise<Uint8Array> {
   let stop = piece;
   while (stop <= lastWanted && !pieces.has(`${key}#${stop}`)) stop += 1;
-  const from = piece * PIECE_BYTES;
-  const whole = getBytes(key, { from, to: Math.min(stop * PIECE_BYTES, objectBytes) });
+  const each = pieceBytes(objectBytes);
+  const from = piece * each;
+  const whole = getBytes(key, { from, to: Math.min(stop * each, objectBytes) });
   for (let k = piece; k < stop; k += 1) {
     const name = `${key}#${k}`;
-    const at = k * PIECE_BYTES;
-    const size = Math.min(PIECE_BYTES, objectBytes - at);
+    const at = k * each;
+    const size = Math.min(each, objectBytes - at);
     // A copy of its own, so that a piece that stays does not hold the whole run in memory.
     const bytes = whole.then((all) => (stop === piece + 1 ? all : all.slice(at - from, at - from + size)));
     bytes.catch(() => drop(name));

@@ -15,6 +15,7 @@ import {
 import type { CAPTURE_STATUSES, CaptureJson } from '../../../contract/areas/captures.ts';
 import type { RelationFindings, SignalFindings, Wheel } from '../../../engine/capture.ts';
 import type { Circuit } from '../../../engine/circuit.ts';
+import type { Recipe } from '../../../engine/derived/types.ts';
 import type { PreviewLine, Reading, ReadingHints } from '../../../engine/reading/types.ts';
 import { at, createdAt, edition } from './columns.ts';
 import { job } from './jobs.ts';
@@ -56,6 +57,9 @@ export interface SignalRequest {
   offset?: number;
 }
 
+/** A derived signal: its recipe and its own number, below 0 where recorded ones have their file column. */
+export type DerivedRequest = Recipe & { readonly column: number };
+
 export const capture = pgTable(
   'capture',
   {
@@ -88,6 +92,8 @@ export const capture = pgTable(
     cylinders: integer('cylinders'),
     /** What the person asked for by file column; wins over what the program proposes. */
     signalRequests: jsonb('signal_requests').$type<SignalRequest[]>().notNull().default([]),
+    /** Signals that people asked to have made from the recorded ones; made again with every reading. */
+    derived: jsonb('derived').$type<DerivedRequest[]>().notNull().default([]),
     hints: jsonb('hints').$type<ReadingHints>().notNull().default({}),
     reading: jsonb('reading').$type<Reading>(),
     preview: jsonb('preview').$type<PreviewLine[]>(),
@@ -118,6 +124,8 @@ export const captureSignal = pgTable(
     unit: text('unit').notNull(),
     factor: doublePrecision('factor').notNull().default(1),
     offset: doublePrecision('offset').notNull().default(0),
+    /** How a derived signal was made, in words; null for a recorded one. */
+    made: text('made'),
     rail: jsonb('rail').$type<{ low: number | null; high: number | null }>(),
   },
   (t) => [primaryKey({ columns: [t.captureId, t.index] }), index('capture_signal_circuit').on(t.circuit)],
