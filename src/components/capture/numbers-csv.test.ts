@@ -16,6 +16,7 @@ describe('numbersCsv()', () => {
             unit: 'V',
             factor: 1,
             offset: 0,
+            made: null,
           },
         ],
       },

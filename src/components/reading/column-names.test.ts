@@ -11,6 +11,7 @@ const signal = (column: number, name: string) => ({
   unit: 'V',
   factor: 1,
   offset: 0,
+  made: null,
 });
 
 describe('columnNamesOf()', () => {
