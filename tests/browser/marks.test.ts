@@ -79,6 +79,24 @@ describe('marks', () => {
     await close();
   });
 
+  it('a chosen one is dragged by its handle or moved by keys, and the move can be undone', async () => {
+    const { page, close } = await open(browser, DESK);
+    await openTrace(page, bench);
+    await list(page).locator('.mark-go').first().click();
+    const handle = page.getByRole('slider', { name: 'Place of the mark' });
+    await handle.waitFor();
+    const at = async () => Number(await handle.getAttribute('aria-valuenow'));
+    const before = await at();
+    await handle.focus();
+    await page.keyboard.press('ArrowRight');
+    await page.keyboard.press('ArrowRight');
+    await page.getByText('Mark moved').waitFor();
+    expect(await at()).toBeGreaterThan(before);
+    await page.getByRole('button', { name: 'Undo' }).click();
+    await expect.poll(at).toBeCloseTo(before, 9);
+    await close();
+  });
+
   it('two people change one mark: nothing is overwritten, the second sees what the first wrote and chooses', async () => {
     const { page, close } = await open(browser, DESK);
     await openTrace(page, bench);

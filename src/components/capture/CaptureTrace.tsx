@@ -2,12 +2,13 @@ import './capture.css';
 import './lanes.css';
 import { lazy, Suspense, useCallback, useEffect, useMemo, useState } from 'react';
 import type { MarkJson } from '../../contract/areas/marks.ts';
-import { api, sentenceOf } from '../base/api.ts';
+import { ApiFailure, api, sentenceOf } from '../base/api.ts';
 import { Message } from '../base/Message.tsx';
 import { UndoBar } from '../base/UndoBar.tsx';
 import { type LaneSetup, PLAIN_SETUP } from '../plot/lane-setup.ts';
 import { type MarkPlace, Plot } from '../plot/Plot.tsx';
 import type { ScaleKind } from '../plot/ScaleBar.tsx';
+import { nearestValue } from '../plot/span-statistics.ts';
 import type { PlotEvidence } from '../plot/types.ts';
 import { shownInAddress } from './address.ts';
 import { CaptureActions } from './CaptureActions.tsx';
@@ -16,6 +17,7 @@ import { CaptureGone, CaptureSkeleton, CaptureState } from './CaptureState.tsx';
 import { FootLine } from './FootLine.tsx';
 import { LaneGrips } from './LaneGrips.tsx';
 import type { MarkDraft } from './MarkDialog.tsx';
+import { MarkHandles } from './MarkHandles.tsx';
 import { MarksList } from './MarksList.tsx';
 import { type Chosen, Numbers } from './Numbers.tsx';
 import { Sheet } from './Sheet.tsx';
@@ -29,6 +31,9 @@ import { bringIntoView, openingView } from './view-of.ts';
 const MarkDialog = lazy(() => import('./MarkDialog.tsx').then((m) => ({ default: m.MarkDialog })));
 
 const LanesDialog = lazy(() => import('./LanesDialog.tsx').then((m) => ({ default: m.LanesDialog })));
+
+/** Where a mark is put by hand. */
+type MarkPlaceChange = Partial<Pick<MarkJson, 'from' | 'to' | 'value'>>;
 
 const NO_MARKS: readonly MarkJson[] = [];
 const NARROW = '(width < 40rem)';
@@ -57,6 +62,7 @@ export function CaptureTrace({ id }: { id: string }) {
   const [chosenMark, setChosenMark] = useState<string | null>(null);
   const [draft, setDraft] = useState<MarkDraft | null>(null);
   const [deleted, setDeleted] = useState<MarkJson | null>(null);
+  const [moved, setMoved] = useState<{ mark: MarkJson; before: MarkPlaceChange } | null>(null);
   const [trouble, setTrouble] = useState<string | null>(null);
 
   const model = usePlotModel({
@@ -113,6 +119,36 @@ export function CaptureTrace({ id }: { id: string }) {
     }
     await marksAnswer.mutate();
   };
+  /** A point keeps to the trace: its value is that of the sample there, or none where samples are too dense to tell. */
+  const valueAt = (mark: MarkJson, to: MarkPlaceChange): MarkPlaceChange => {
+    const signal = model?.capture.signals.find(({ index }) => index === mark.signal);
+    if (mark.kind !== 'point' || to.value !== undefined || model === null || signal === undefined) return {};
+    const window = model.loader.best(model.view.get(), model.devicePixels());
+    return { value: window === null ? null : nearestValue(window, signal, to.from ?? mark.from) };
+  };
+  const held = marks.find(({ id: markId }) => markId === chosenMark);
+  /** Moved by hand; the one before can be had back. Somebody else's change is never overwritten: theirs is shown. */
+  const moveMark = async (mark: MarkJson, to: MarkPlaceChange) => {
+    setTrouble(null);
+    setMoved(null);
+    try {
+      const body = { ...to, ...valueAt(mark, to) };
+      const { data } = await api<MarkJson>(`/marks/${mark.id}`, {
+        method: 'PATCH',
+        etag: mark.etag,
+        body,
+      });
+      setMoved({ mark: data, before: { from: mark.from, to: mark.to, value: mark.value } });
+    } catch (thrown) {
+      const stale = thrown instanceof ApiFailure && thrown.status === 412;
+      setTrouble(
+        stale
+          ? `“${mark.text || 'The mark'}” was changed by somebody else meanwhile. It stands where they put it; move it again if need be.`
+          : `The mark stands where it was. ${sentenceOf(thrown)}`,
+      );
+    }
+    await marksAnswer.mutate();
+  };
   const undo = async () => {
     if (deleted === null) return;
     setDeleted(null);
@@ -158,6 +194,16 @@ export function CaptureTrace({ id }: { id: string }) {
               chosenMark={chosenMark}
               evidence={evidence}
               setup={setup}
+              handles={
+                held !== undefined && held.kind !== 'level' ? (
+                  <MarkHandles
+                    key={held.id}
+                    model={model}
+                    mark={held}
+                    onMove={(mark, at) => void moveMark(mark, at)}
+                  />
+                ) : undefined
+              }
               grips={(lanes) => <LaneGrips lanes={lanes} setup={setup} onSetup={setSetup} />}
               onPlace={place}
               onChooseMark={(markId) => {
@@ -207,6 +253,15 @@ export function CaptureTrace({ id }: { id: string }) {
           </Sheet>
           <ThumbTools model={model} />
         </div>
+      )}
+      {moved !== null && (
+        <UndoBar
+          text="Mark moved"
+          onUndo={() => {
+            void moveMark(moved.mark, moved.before).then(() => setMoved(null));
+          }}
+          onGone={() => setMoved(null)}
+        />
       )}
       {deleted !== null && <UndoBar text="Mark deleted" onUndo={undo} onGone={() => setDeleted(null)} />}
       <Suspense fallback={null}>

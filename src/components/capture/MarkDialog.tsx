@@ -6,6 +6,7 @@ import { Button } from '../base/Button.tsx';
 import { Dialog } from '../base/Dialog.tsx';
 import { Field } from '../base/Field.tsx';
 import { Message } from '../base/Message.tsx';
+import { type MarkFields, mergeMark } from './merge-mark.ts';
 
 /** A mark that is being made (`id` null) or changed. */
 export type MarkDraft = Pick<MarkJson, 'kind' | 'signal' | 'from' | 'to' | 'value' | 'text'> & {
@@ -36,6 +37,9 @@ export function MarkDialog({ capture, draft, onClose, onSaved, reload }: MarkDia
   const [busy, setBusy] = useState(false);
   const [trouble, setTrouble] = useState<string | null>(null);
   const [theirs, setTheirs] = useState<MarkJson | null>(null);
+  const [joined, setJoined] = useState(false);
+  /** What both people began with: the mark as it was opened, then as it was last seen on the server. */
+  const [began, setBegan] = useState<MarkFields>(draft);
   const unit = capture.signals.find((each) => each.index === signal)?.unit ?? '';
 
   const save = async (event?: FormEvent) => {
@@ -64,7 +68,20 @@ export function MarkDialog({ capture, draft, onClose, onSaved, reload }: MarkDia
         if (now === null)
           setTrouble('Somebody deleted this mark since you opened it. Your text is still in the box.');
         else {
-          setTheirs(now);
+          const { merged, clashes } = mergeMark(
+            began,
+            {
+              ...body,
+              from: same(body.from, began.from),
+              to: body.to === null || began.to === null ? body.to : same(body.to, began.to),
+              value: body.value === null || began.value === null ? body.value : same(body.value, began.value),
+            },
+            now,
+          );
+          fill(merged);
+          setBegan(now);
+          setTheirs(clashes.length > 0 ? now : null);
+          setJoined(clashes.length === 0);
           setEtag(now.etag);
         }
       } else setTrouble(sentenceOf(thrown));
@@ -72,14 +89,17 @@ export function MarkDialog({ capture, draft, onClose, onSaved, reload }: MarkDia
       setBusy(false);
     }
   };
+  const fill = (fields: MarkFields) => {
+    setText(fields.text);
+    setKind(fields.kind);
+    setSignal(fields.signal);
+    setFrom(String(rounded(fields.from)));
+    setTo(fields.to === null ? '' : String(rounded(fields.to)));
+    setValue(fields.value === null ? '' : String(rounded(fields.value)));
+  };
   const takeTheirs = () => {
     if (theirs === null) return;
-    setText(theirs.text);
-    setKind(theirs.kind);
-    setSignal(theirs.signal);
-    setFrom(String(theirs.from));
-    setTo(theirs.to === null ? '' : String(theirs.to));
-    setValue(theirs.value === null ? '' : String(theirs.value));
+    fill(theirs);
     setTheirs(null);
   };
 
@@ -104,6 +124,16 @@ export function MarkDialog({ capture, draft, onClose, onSaved, reload }: MarkDia
                 </Button>
               </>
             }
+          />
+        )}
+        {joined && (
+          <Message
+            verdict="info"
+            live="alert"
+            title="Somebody changed this mark while you had it open"
+            happened="They changed something else than you: both changes are in the boxes now."
+            kept="Nothing was overwritten."
+            todo="Look it over and save again."
           />
         )}
         {trouble !== null && <Message verdict="bad" live="alert" title={trouble} />}
@@ -180,6 +210,9 @@ export function MarkDialog({ capture, draft, onClose, onSaved, reload }: MarkDia
     </Dialog>
   );
 }
+
+/** A time that was only rounded for the box is not a change. */
+const same = (typed: number, before: number) => (typed === rounded(before) ? before : typed);
 
 const kindOf = (text: string): MarkDraft['kind'] => (text === 'range' || text === 'level' ? text : 'point');
 

@@ -57,6 +57,8 @@ export interface PlotProps {
   hidden?: ReadonlySet<number>;
   /** Between and over the lanes, at the top left of the stack: what sets their heights. */
   grips?: (lanes: readonly Lane[]) => ReactNode;
+  /** Above the lanes, over the whole stage: what moves the chosen mark. */
+  handles?: ReactNode;
   onPlace?: (place: MarkPlace) => void;
   onChooseMark?: (id: string) => void;
   /** Called once when the first trace stands. */
@@ -182,6 +184,7 @@ export function Plot(props: PlotProps) {
               />
               <Cursor model={model} lanes={lanes} wheel={wheel} width={width} />
               <SpanHandles model={model} height={height} />
+              {props.handles}
               <Balloons
                 placed={placed}
                 chosen={props.chosenMark ?? null}
