@@ -2,6 +2,7 @@ import { spawnSync } from 'node:child_process';
 import { readFileSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 import { describe, expect, it } from 'vitest';
+import { lowPass } from '../../src/engine/derived/low-pass.ts';
 import { crossings } from '../../src/engine/signal/crossings.ts';
 import { fitExponential } from '../../src/engine/signal/exponential-fit.ts';
 import { findPeaks } from '../../src/engine/signal/peaks.ts';
@@ -26,6 +27,7 @@ interface References {
     tau: number;
     tauError: number;
   }>;
+  readonly filtered: { readonly x: number[]; readonly y: number[] };
   readonly windows: Readonly<Record<'hann' | 'blackman' | 'flattop', number[]>>;
 }
 const references = JSON.parse(
@@ -74,6 +76,16 @@ describe('weightOf() and scipy.signal.get_window', () => {
   it.each(['hann', 'blackman', 'flattop'] as const)('give the same weights, %s', (name) => {
     references.windows[name].forEach((weight, i) => {
       expect(Math.abs(weightOf(name, i, 60) - weight)).toBeLessThan(1e-10);
+    });
+  });
+});
+
+describe('lowPass() and scipy.signal.filtfilt of scipy.signal.butter', () => {
+  it('give the same samples, ends included, within float32', () => {
+    const { x, y } = references.filtered;
+    const made = lowPass(Float32Array.from(x), 1000, 50);
+    y.forEach((value, i) => {
+      expect(Math.abs(made[i]! - value)).toBeLessThan(2e-6);
     });
   });
 });

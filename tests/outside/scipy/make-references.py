@@ -98,12 +98,21 @@ def windows():
     return {name: rounded(signal.get_window(name, 60)) for name in ("hann", "blackman", "flattop")}
 
 
+def filtered():
+    """Second-order Butterworth low-pass of 50 Hz at 1 kHz, forwards and backwards, with SciPy's own ends."""
+    t = np.arange(400) / 1000
+    x = np.float32(2 + np.sin(2 * np.pi * 7 * t) + 0.3 * np.sign(np.sin(2 * np.pi * 61 * t)) + 3 * t)
+    b, a = signal.butter(2, 50, fs=1000)
+    return {"x": rounded(x.astype(float), 9), "y": rounded(signal.filtfilt(b, a, x.astype(float)), 9)}
+
+
 references = {
     "peaks": peaks(),
     "crossings": crossings(),
     "spectra": spectra(),
     "charges": charges(),
     "windows": windows(),
+    "filtered": filtered(),
 }
 text = json.dumps(references)
 if "--print" in sys.argv:
