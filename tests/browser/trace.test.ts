@@ -329,7 +329,7 @@ describe('what can go wrong with a trace', () => {
   });
 });
 
-describe('wheel, turns and spectrum', () => {
+describe('the wheel', () => {
   it('the wheel shows each tooth, names the short one and leads to its samples', async () => {
     const weak = await measuredSample('crank-60-2-weak-tooth.csv', 'One short tooth');
     const { page, complaints, close } = await open(browser, PHONE);
@@ -343,16 +343,6 @@ describe('wheel, turns and spectrum', () => {
     await drawn(page);
     const { from, to } = await shownView(page);
     expect(to - from).toBeLessThan(0.1);
-    expect(complaints).toEqual([]);
-    await close();
-  });
-
-  it.each(['turns', 'spectrum'])('%s says what will be there and what serves until then', async (tab) => {
-    const { page, complaints, close } = await open(browser, DESK);
-    await enterAs(page, bench.desk.workshop, 'technician');
-    await page.goto(`/captures/${bench.id}/${tab}`);
-    await page.getByText('Until then').waitFor();
-    await expectAccessible(page);
     expect(complaints).toEqual([]);
     await close();
   });
