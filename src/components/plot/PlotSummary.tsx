@@ -23,6 +23,9 @@ export function PlotSummary({ id, model, lanes }: { id: string; model: PlotModel
           `, ${steps.word.toLowerCase()} ${step + 1} of ${steps.stretches.length}`}
         . Press ? for the keys.
       </p>
+      <p role="status">
+        {steps !== null && step !== null && `${steps.word} ${step + 1} of ${steps.stretches.length}`}
+      </p>
       <table>
         <caption>Values in view</caption>
         <thead>

@@ -67,6 +67,8 @@ export function Strip({ model, lines, marks, wheel }: StripProps) {
   };
   const left = Math.max(shareOfTime(whole, view.from), 0) * 100;
   const right = (1 - Math.min(shareOfTime(whole, view.to), 1)) * 100;
+  // Grips of a short window stand beside it, so that each can still be taken.
+  const thin = model.widthPx.get() * ((view.to - view.from) / span) < 32;
   const grip = (part: 'from' | 'to', label: string) => (
     <div
       role="slider"
@@ -95,7 +97,7 @@ export function Strip({ model, lines, marks, wheel }: StripProps) {
             <i key={mark} className="strip-turn" style={{ left: `${shareOfTime(whole, mark) * 100}%` }} />
           ))}
         <div
-          className="strip-window"
+          className={thin ? 'strip-window strip-window-thin' : 'strip-window'}
           style={{ left: `${left}%`, right: `${right}%` }}
           onPointerDown={down('window')}
           onPointerMove={drag}
