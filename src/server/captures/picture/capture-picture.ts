@@ -71,7 +71,7 @@ export async function capturePicture(
   const shown =
     decoded.layout === 'samples' ? 'every sample' : 'first, lowest, highest and last of each column';
   const rate = sampleRateHz === null ? 'uneven steps' : `${fixed(sampleRateHz / 1000, 3)} kHz`;
-  const svg = pictureSvg({
+  const picture = pictureSvg({
     title: row.title || 'Capture',
     caption: [
       `${fixed(from, 4)} to ${fixed(to, 4)} s of ${fixed(durationS, 3)} s; ${count(row.samples)} samples a signal at ${rate}. Drawn: ${shown}.`,
@@ -91,6 +91,6 @@ export async function capturePicture(
     theme,
     fontFace: face,
   });
-  if (query.format === 'svg') return { contentType: 'image/svg+xml', body: Buffer.from(svg) };
-  return { contentType: 'image/png', body: await toPng(svg, PALETTES[theme].sheet) };
+  if (query.format === 'svg') return { contentType: 'image/svg+xml', body: Buffer.from(picture.svg) };
+  return { contentType: 'image/png', body: await toPng(picture, PALETTES[theme].sheet) };
 }

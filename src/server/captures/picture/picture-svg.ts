@@ -48,7 +48,7 @@ const LETTER = 6.4;
 const n = (value: number) => (Number.isFinite(value) ? String(Number(value.toFixed(2))) : '0');
 
 /** A stretch of a capture as a standing picture: title, scale, lanes with units, marks with their words, caption. */
-export function pictureSvg(input: PictureInput): string {
+export function pictureSvg(input: PictureInput): { svg: string; width: number; height: number } {
   const { title, lanes, view, wheel, marks, width, theme } = input;
   const palette = PALETTES[theme];
   const plotWidth = width - LEFT - RIGHT;
@@ -60,7 +60,7 @@ export function pictureSvg(input: PictureInput): string {
     ...inView.map((mark, place) => `${place + 1}  ${mark.text || 'No text'} (${mark.author})`),
     ...input.caption,
   ].flatMap((line) => wrapped(line, Math.floor((width - LEFT - RIGHT) / LETTER)));
-  const below = top + lanesHeight + 44;
+  const below = top + lanesHeight + 52;
   const height = below + words.length * 17 + 16;
   const text = (x: number, y: number, words: string, more = '') =>
     `<text x="${n(x)}" y="${n(y)}" ${more}>${escapeXml(words)}</text>`;
@@ -112,7 +112,7 @@ export function pictureSvg(input: PictureInput): string {
     parts.push(text(LEFT, below + place * 17, line, `class="s"`));
   });
   parts.push('</svg>');
-  return parts.join('\n');
+  return { svg: parts.join('\n'), width, height };
 }
 
 type Text = (x: number, y: number, words: string, more?: string) => string;
