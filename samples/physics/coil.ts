@@ -10,9 +10,13 @@ export interface CoilFiring {
   /** Null: the gap does not break down, the driver's clamp limits the kick and the energy rings out. */
   readonly burnS: number | null;
   readonly burnV: number;
+  /** Amperes at once at switch-on: turns that are shorted have next to no inductance. */
+  readonly stepA?: number;
+  /** What the driver leaves standing while it is on. */
+  readonly onDropV?: number;
 }
 
-const onDropV = 0.9;
+const ON_DROP_V = 0.9;
 
 /** Primary current: i = (U - u) / R * (1 - e^(-t R / L)) from switch-on, nothing after switch-off. */
 export function coilAmperes(coil: CoilFiring, timeS: number): number {
@@ -20,7 +24,8 @@ export function coilAmperes(coil: CoilFiring, timeS: number): number {
     const on = off - coil.dwellS;
     if (timeS >= on && timeS < off) {
       const tau = coil.henry / coil.ohm;
-      return ((coil.supplyV - onDropV) / coil.ohm) * (1 - Math.exp(-(timeS - on) / tau));
+      const dropV = coil.onDropV ?? ON_DROP_V;
+      return (coil.stepA ?? 0) + ((coil.supplyV - dropV) / coil.ohm) * (1 - Math.exp(-(timeS - on) / tau));
     }
     if (timeS >= off && timeS < off + 8e-6) {
       return coilAmperes(coil, off - 1e-9) * (1 - (timeS - off) / 8e-6);
@@ -34,7 +39,7 @@ export function coilVolts(coil: CoilFiring, timeS: number): number {
   for (const off of coil.firingsS) {
     const on = off - coil.dwellS;
     if (timeS < on || timeS >= off + 0.012) continue;
-    if (timeS < off) return onDropV + 0.08 * coilAmperes(coil, timeS);
+    if (timeS < off) return (coil.onDropV ?? ON_DROP_V) + 0.08 * coilAmperes(coil, timeS);
     return afterSwitchOff(coil, timeS - off);
   }
   return coil.supplyV;
@@ -43,8 +48,9 @@ export function coilVolts(coil: CoilFiring, timeS: number): number {
 function afterSwitchOff(coil: CoilFiring, afterS: number): number {
   const kickRiseS = 14e-6;
   const top = coil.burnS === null ? 70e-6 : 8e-6;
+  const dropV = coil.onDropV ?? ON_DROP_V;
   if (afterS < kickRiseS)
-    return onDropV + (coil.kickV - onDropV) * Math.sin((Math.PI / 2) * (afterS / kickRiseS));
+    return dropV + (coil.kickV - dropV) * Math.sin((Math.PI / 2) * (afterS / kickRiseS));
   if (afterS < kickRiseS + top) return coil.kickV;
   const since = afterS - kickRiseS - top;
   if (coil.burnS === null) {
