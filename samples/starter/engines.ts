@@ -145,9 +145,9 @@ export const STARTER_ENGINES: readonly StarterEngine[] = [
     wheel: { places: 60, missing: 2 },
     sensor: 'three-wire',
     camHighDeg: [
-      [10, 80],
+      [20, 80],
       [190, 330],
-      [370, 400],
+      [410, 450],
       [560, 640],
     ],
     sprocketTeeth: 23,

@@ -4,13 +4,13 @@ import { binMeans, finished, meanOf, meansOverSeconds, numberOf } from './resamp
 
 /**
  * Starter current: 32 numbers over the first 0.4 s from the inrush on, 96 over four compressions laid on one another, turned
- * so that the lowest hump comes first, doubled. All in the cranking mean. Null without a compression rate or a mean.
+ * so that the lowest hump comes first, doubled. All in the cranking mean. Without a compression rate half seconds are laid on one another. Null for a steady or too short trace.
  */
 export function starterShape(side: Side): Float32Array | null {
-  const mean = numberOf(side, 'cranking_mean');
-  if (mean === null || !(mean > 0)) return null;
   const startS = timeAt(side.axis, 0);
   const endS = timeAt(side.axis, sampleCount(side.axis) - 1);
+  const mean = numberOf(side, 'cranking_mean') ?? steadyMean(side, startS, endS);
+  if (mean === null || !(mean > 0)) return null;
   const inrushS = onsetS(side, startS, endS, mean);
   const first = meansOverSeconds(side, inrushS, inrushS + 0.4, 32).map((value) => value / mean / 2);
   const rate = numberOf(side, 'compression_rate');
@@ -22,6 +22,12 @@ export function starterShape(side: Side): Float32Array | null {
   if (cycles.length === 0) return null;
   const folded = meanOf(cycles).map((value) => value / mean);
   return finished([first, turned(folded).map((value) => 2 * (value - 1))]);
+}
+
+/** Without humps there is no cranking mean among the values: the mean of the last third does. */
+function steadyMean(side: Side, startS: number, endS: number): number | null {
+  const [last] = binMeans(meansOverSeconds(side, endS - (endS - startS) / 3, endS, 64), 1);
+  return last === undefined || Number.isNaN(last) ? null : last;
 }
 
 function onsetS(side: Side, startS: number, endS: number, mean: number): number {
