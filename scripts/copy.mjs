@@ -26,6 +26,7 @@ import { startServices } from './services.mjs';
  * @property {string} mailPage
  * @property {Record<string, string>} env of its processes
  * @property {import('./services.mjs').Services} services
+ * @property {(name: string) => Promise<import('./lib/run-program.mjs').Finished>} tool runs one of dist/tools to its end
  * @property {{ web: import('./lib/supervise.mjs').Supervised, worker: import('./lib/supervise.mjs').Supervised }} programs
  */
 
@@ -84,7 +85,16 @@ export async function startCopy({ dataDir, host, port: wanted, origin: given, du
   web.keepUp();
   worker.keepUp();
   const newToken = await seed({ env, tool, say, pending: join(instance.dataDir, 'demo-token') });
-  return { origin, address, newToken, mailPage: services.mailPage, env, services, programs: { web, worker } };
+  return {
+    origin,
+    address,
+    newToken,
+    mailPage: services.mailPage,
+    env,
+    services,
+    tool,
+    programs: { web, worker },
+  };
 }
 
 /**

@@ -35,6 +35,22 @@ async function main() {
     say(`Demo token: ${copy.newToken}`);
     forgetToken(copy);
   }
+  void fillLibrary(copy);
+}
+
+/**
+ * The starting library is made while people work already; ended in the middle, the next start goes on.
+ * @param {import('./copy.mjs').Copy} copy
+ */
+async function fillLibrary(copy) {
+  const { code, stdout, output } = await copy
+    .tool('seed-library')
+    .catch(() => ({ code: null, stdout: '', output: '' }));
+  if (stdout.trim() !== '') say(`- ${stdout.trim()}`);
+  else if (code !== 0 && code !== null)
+    say(
+      `! The starting library is not whole; the next start goes on. What was said:\n${output.trim().slice(-600)}`,
+    );
 }
 
 /** @param {string | undefined} text */

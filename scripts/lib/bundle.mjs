@@ -12,6 +12,7 @@ const PROGRAMS = {
   'tools/restore': 'src/server/backup/restore-tool.ts',
   'tools/reset-password': 'src/server/session/reset-by-hand.ts',
   'tools/seed-demo': 'src/server/workshop/seed-demo.ts',
+  'tools/seed-library': 'src/server/workshop/seed-library.ts',
 };
 
 /** @returns {Record<string, string>} output name → source, threads of the worker included */

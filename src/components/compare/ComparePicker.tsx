@@ -9,6 +9,8 @@ import { Message } from '../base/Message.tsx';
 import { timeText } from '../base/numbers.ts';
 import { Progress } from '../base/Progress.tsx';
 import { Segmented } from '../base/Segmented.tsx';
+import { Nearest } from './Nearest.tsx';
+import { Saved } from './Saved.tsx';
 
 interface Page<T> {
   readonly items: readonly T[];
@@ -31,7 +33,9 @@ export function ComparePicker({ id }: { id: string }) {
   const words = search.trim() === '' ? '' : `&search=${encodeURIComponent(search.trim())}`;
   const keep = { shouldRetryOnError: false, keepPreviousData: true };
   const goods = useSWR(
-    circuit === undefined ? null : `/known-goods?state=published&limit=100&circuit=${circuit}${words}`,
+    circuit === undefined
+      ? null
+      : `/known-goods?state=published&limit=100&fit=${id}&circuit=${circuit}${words}`,
     fetcher<Page<KnownGoodRowJson>>,
     keep,
   );
@@ -153,6 +157,9 @@ export function ComparePicker({ id }: { id: string }) {
               )}
             </ul>
           </section>
+          {signal !== undefined && (
+            <Nearest key={signal.index} id={id} signal={signal} busy={busy} onCompare={compare} />
+          )}
           <section aria-labelledby="others-title">
             <h2 id="others-title">Other captures of this circuit</h2>
             {captures.data !== undefined && others.length === 0 && (
@@ -173,6 +180,7 @@ export function ComparePicker({ id }: { id: string }) {
               )}
             </ul>
           </section>
+          <Saved captureId={id} />
         </div>
       )}
     </div>

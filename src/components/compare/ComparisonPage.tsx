@@ -1,7 +1,7 @@
 import './compare.css';
 import useSWR from 'swr';
 import type { ComparisonJson } from '../../contract/areas/library.ts';
-import { fetcher, sentenceOf } from '../base/api.ts';
+import { fetcherWithEtag, sentenceOf } from '../base/api.ts';
 import { circuitWords } from '../base/circuits.ts';
 import { LineSample } from '../base/LineSample.tsx';
 import { Message } from '../base/Message.tsx';
@@ -10,17 +10,24 @@ import { Progress } from '../base/Progress.tsx';
 import { Verdict } from '../base/Verdict.tsx';
 import { fixed } from '../plot/format.ts';
 import { OverlayPlot } from '../plot/OverlayPlot.tsx';
+import { Adjust } from './Adjust.tsx';
 import { ComparisonTable } from './ComparisonTable.tsx';
+import { DifferenceLane } from './DifferenceLane.tsx';
 
 const POLL_MS = 700;
 const under = (status: ComparisonJson['status'] | undefined) => status === 'queued' || status === 'running';
 
 /** One comparison: what differs in words, the two traces laid on each other, and the table. */
 export function ComparisonPage({ id }: { id: string }) {
-  const { data, error, mutate } = useSWR(`/comparisons/${id}`, fetcher<ComparisonJson>, {
-    refreshInterval: (latest) => (under(latest?.status) ? POLL_MS : 0),
+  const {
+    data: answer,
+    error,
+    mutate,
+  } = useSWR(`/comparisons/${id}`, fetcherWithEtag<ComparisonJson>, {
+    refreshInterval: (latest) => (under(latest?.data.status) ? POLL_MS : 0),
     shouldRetryOnError: false,
   });
+  const data = answer?.data;
   if (data === undefined)
     return (
       <div className="comparison-state">
@@ -37,7 +44,8 @@ export function ComparisonPage({ id }: { id: string }) {
       </div>
     );
   const again = `/captures/${data.captureId}/compare`;
-  if (under(data.status))
+  // While it is laid anew by hand, what was found before stays in sight.
+  if (under(data.status) && data.here === null)
     return (
       <div className="comparison-state" role="status">
         <Progress label="Comparing" />
@@ -67,7 +75,16 @@ export function ComparisonPage({ id }: { id: string }) {
         />
       </div>
     );
-  return <Comparison comparison={data} here={data.here} other={data.other} again={again} />;
+  return (
+    <Comparison
+      comparison={data}
+      here={data.here}
+      other={data.other}
+      again={again}
+      etag={answer?.etag ?? null}
+      onChanged={() => void mutate()}
+    />
+  );
 }
 
 interface ComparisonProps {
@@ -75,9 +92,11 @@ interface ComparisonProps {
   here: NonNullable<ComparisonJson['here']>;
   other: NonNullable<ComparisonJson['other']>;
   again: string;
+  etag: string | null;
+  onChanged: () => void;
 }
 
-function Comparison({ comparison, here, other, again }: ComparisonProps) {
+function Comparison({ comparison, here, other, again, etag, onChanged }: ComparisonProps) {
   const { overlay, shape, rows, alignment } = comparison;
   const outside = rows.filter((row) => row.verdict === 'outside').length;
   const words = circuitWords(here.circuit);
@@ -93,6 +112,9 @@ function Comparison({ comparison, here, other, again }: ComparisonProps) {
             {words.full}
           </span>
           <div className="title-actions">
+            <button type="button" className="button" onClick={() => window.print()}>
+              Print
+            </button>
             <a className="button" href={again}>
               Change reference
             </a>
@@ -140,24 +162,78 @@ function Comparison({ comparison, here, other, again }: ComparisonProps) {
               summary={`${comparison.text} ${parts.map((part) => part.text).join(' ')}`}
             />
           </div>
+          <DifferenceLane overlay={overlay} unit={here.unit} />
           <Legend role={words.role} band={overlay.low !== null} n={other.n} parts={parts.length > 0} />
         </>
       )}
       <p className="comparison-aligned">{alignmentWords(alignment, overlay?.axis ?? null)}</p>
-      {parts.length > 0 && (
-        <section className="comparison-parts">
-          <h2>Where they part</h2>
-          <ul>
-            {parts.map((part) => (
-              <li key={`${part.from} ${part.to}`}>
-                <span className="figures">{partRange(part)}</span> {part.text}
-              </li>
-            ))}
-          </ul>
-        </section>
+      {(alignment?.notes?.length ?? 0) > 0 && (
+        <ul className="comparison-notes" aria-label="What had to be allowed for">
+          {alignment?.notes?.map((note) => (
+            <li key={note}>{note}</li>
+          ))}
+        </ul>
       )}
-      <ComparisonTable comparison={comparison} />
+      <div className="comparison-below">
+        <ComparisonTable comparison={comparison} />
+        <div className="comparison-side">
+          {comparison.says !== null && <WhatThisSays says={comparison.says} />}
+          {parts.length > 0 && (
+            <section>
+              <details className="comparison-parts">
+                <summary>
+                  Where they part: {parts.length} {parts.length === 1 ? 'stretch' : 'stretches'}
+                </summary>
+                <ul>
+                  {parts.map((part) => (
+                    <li key={`${part.from} ${part.to}`}>
+                      <span className="figures">{partRange(part)}</span> {part.text}
+                    </li>
+                  ))}
+                </ul>
+              </details>
+            </section>
+          )}
+          <section aria-label="Alignment by hand">
+            <h2>Alignment by hand</h2>
+            {comparison.status !== 'ready' && <Progress label="Laying the two anew" />}
+            <Adjust comparison={comparison} etag={etag} onChanged={onChanged} />
+          </section>
+          {(other.members?.length ?? 0) > 0 && (
+            <section aria-label="Reference">
+              <h2>{other.kind === 'band' ? 'The band is made of' : 'The reference'}</h2>
+              <ul className="comparison-members">
+                {other.members?.map((member) => (
+                  <li key={member.id}>
+                    <a href={`/library/${member.id}`}>{member.title}</a>
+                    {member.version > 1 && <span className="text-soft">, version {member.version}</span>}
+                  </li>
+                ))}
+              </ul>
+            </section>
+          )}
+        </div>
+      </div>
     </div>
+  );
+}
+
+/** Measured, usually, next, cannot tell: in this order, all four. */
+function WhatThisSays({ says }: { says: NonNullable<ComparisonJson['says']> }) {
+  return (
+    <section aria-label="What this says">
+      <h2>What this says</h2>
+      <dl className="comparison-says">
+        <dt>Measured</dt>
+        <dd>{says.measured}</dd>
+        <dt>Usually</dt>
+        <dd>{says.usually}</dd>
+        <dt>Next</dt>
+        <dd>{says.next}</dd>
+        <dt>Cannot tell</dt>
+        <dd>{says.cannotTell}</dd>
+      </dl>
+    </section>
   );
 }
 
@@ -206,7 +282,8 @@ function cellsOf(
 }
 
 function alignmentWords(alignment: ComparisonJson['alignment'], axis: 'deg' | 's' | null): string {
-  if (alignment === null || alignment.by === 'none') return 'Not aligned: both are drawn as they are.';
+  if (alignment === null || alignment.by === 'none')
+    return 'They could not be laid on each other: both are drawn from their own beginning.';
   const sure =
     alignment.confidence >= 0.85
       ? 'sure'
@@ -220,7 +297,11 @@ function alignmentWords(alignment: ComparisonJson['alignment'], axis: 'deg' | 's
     edge: 'the first edge',
     correlation: 'their shape',
   }[alignment.by];
-  return `Aligned at ${by}, ${sure}.${over}`;
+  const hand =
+    alignment.byHand == null
+      ? ''
+      : ` Moved by hand: the reference ${alignment.byHand.axis === 'deg' ? `${fixed(alignment.byHand.shift, 1)}°` : `${fixed(alignment.byHand.shift * 1e3, 3)} ms`} later.`;
+  return `Aligned at ${by}, ${sure}.${over}${hand}`;
 }
 
 type Part = NonNullable<ComparisonJson['shape']>['parts'][number];

@@ -48,17 +48,26 @@ export class DemoClient {
 
   /** Uploads a file as a form would. */
   async upload(file: string, title: string, cylinders: number): Promise<string> {
+    return this.uploadText(await readFile(file), basename(file), { title, cylinders: String(cylinders) });
+  }
+
+  /** Uploads what a file would hold. */
+  async uploadText(
+    content: string | Uint8Array,
+    name: string,
+    fields: Readonly<Record<string, string>>,
+  ): Promise<string> {
     const form = new FormData();
-    form.set('title', title);
-    form.set('cylinders', String(cylinders));
-    form.set('file', new File([new Uint8Array(await readFile(file))], basename(file), { type: 'text/csv' }));
+    for (const [field, value] of Object.entries(fields)) form.set(field, value);
+    const part = typeof content === 'string' ? content : new Uint8Array(content);
+    form.set('file', new File([part], name, { type: 'text/csv' }));
     const response = await fetch(`${this.origin}/api/v1/captures`, {
       method: 'POST',
       headers: { Authorization: `Bearer ${this.token}` },
       body: form,
       signal: AbortSignal.timeout(60_000),
     });
-    if (!response.ok) throw new Error(`Uploading ${basename(file)} answered ${response.status}`);
+    if (!response.ok) throw new Error(`Uploading ${name} answered ${response.status}`);
     return made.parse(await response.json()).id;
   }
 
