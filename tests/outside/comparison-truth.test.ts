@@ -142,7 +142,7 @@ describe('compare() over crank degrees', () => {
     }
     console.info(`cam shift: worst ${worst.toFixed(3)} degrees over ${asked} pairs`);
     expect(asked).toBe(200);
-    expect(trouble).toEqual([]);
+    expect(trouble.join('\n')).toBe('');
   }, 300_000);
 
   it('says that the polarity is the other way round instead of hiding it', () => {
@@ -211,7 +211,7 @@ describe('compare() with a band', () => {
     let asked = 0;
     let slippedInside = 0;
     let slipped = 0;
-    for (let k = 0; k < 20; k++) {
+    for (let k = 0; k < 12; k++) {
       const good = sidesOf(crankAndCam(engine, { seed: 800 + k }), 3)[1]!;
       for (const row of compare(good, members).rows) {
         if (!row.key.startsWith('cam_')) continue;
@@ -230,5 +230,5 @@ describe('compare() with a band', () => {
     );
     expect(inside / asked).toBeGreaterThanOrEqual(0.92);
     expect(slippedInside / slipped).toBeLessThan(0.02);
-  });
+  }, 300_000);
 });

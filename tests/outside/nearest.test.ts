@@ -14,12 +14,10 @@ const CASES: readonly (readonly [RecordingKind, number, readonly StarterFault[]]
   ['crank and cam', 0, ['none', 'wide air gap', 'chipped tooth', 'bent wheel', 'reversed wires']],
   ['crank and cam', 1, ['none', 'belt slipped one tooth', 'belt slipped two teeth']],
   ['coil', 0, ['none', 'shorted turns', 'open secondary', 'weak driver']],
-  ['coil', 1, ['none', 'shorted turns', 'weak driver']],
   ['injector', 0, ['none', 'injector without hump']],
   ['starter', 0, ['none', 'no compression', 'one weak cylinder']],
-  ['starter', 1, ['none', 'low supply']],
 ];
-const KEPT = 3;
+const KEPT = 2;
 const HELD_OUT = 1;
 
 interface Entry {
@@ -83,8 +81,8 @@ describe('shapeVector()', () => {
       }
     }
     console.info(`nearest: ${found} of ${asked} found among five, ${first} as the first`);
-    expect(asked).toBeGreaterThan(120);
+    expect(asked).toBeGreaterThan(90);
     expect(found / asked, missed.join('\n')).toBeGreaterThanOrEqual(0.95);
     expect(first / asked).toBeGreaterThan(0.75);
-  }, 300_000);
+  }, 600_000);
 });
