@@ -65,13 +65,13 @@ const lateDegOf = (engine: StarterEngine, fault: StarterFault | undefined): numb
   (360 / engine.sprocketTeeth) *
   (fault === 'belt slipped one tooth' ? 1 : fault === 'belt slipped two teeth' ? 2 : 0);
 
-/** Crank and cam while cranking, three turns and a half. */
+/** Crank and cam while cranking, four turns and a bit, so that one whole cycle of the cam is in it wherever it begins. */
 export function crankAndCam(engine: StarterEngine, options: RecordOptions): Recording {
   const { about, noisy, uniform } = vehicle(options);
   const { fault } = options;
   const rpm = speedOf(engine, options, about);
   const stepS = rpm > 400 ? 2e-5 : 5e-5;
-  const count = Math.ceil((3.6 * 60) / rpm / stepS);
+  const count = Math.ceil((4.4 * 60) / rpm / stepS);
   const dip = fault === 'no compression' ? 0.004 : 0.045 * about(0.2);
   const motion = { rpm, cylinders: engine.cylinders, dip, startDeg: 360 * uniform() };
   const { angleDeg, speedDegS } = crankMotion(motion, stepS, count);

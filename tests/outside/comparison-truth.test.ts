@@ -34,7 +34,7 @@ function recorded(given: Pair): Side[] {
   const uniform = seededUniform(given.seed);
   const normal = seededNormal(given.seed + 1);
   const stepS = Math.min(5e-5, 60 / given.rpm / 6000);
-  const count = Math.ceil((3.7 * 60) / given.rpm / stepS);
+  const count = Math.ceil((4.4 * 60) / given.rpm / stepS);
   const { angleDeg, speedDegS } = crankMotion(
     { rpm: given.rpm, cylinders: 4, dip: 0.04, startDeg: 360 * uniform() },
     stepS,
