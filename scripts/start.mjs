@@ -47,7 +47,8 @@ async function fillLibrary(copy) {
     .tool('seed-library')
     .catch(() => ({ code: null, stdout: '', output: '' }));
   if (stdout.trim() !== '') say(`- ${stdout.trim()}`);
-  else if (code !== 0 && code !== null)
+  // Ended with everything else: nothing is wrong, the next start goes on.
+  else if (code !== null && code > 0 && code < 128)
     say(
       `! The starting library is not whole; the next start goes on. What was said:\n${output.trim().slice(-600)}`,
     );

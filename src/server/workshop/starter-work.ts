@@ -8,6 +8,8 @@ import type { DemoClient } from './demo-client.ts';
 export interface Missing {
   readonly goods: readonly StarterItem[];
   readonly practice: readonly StarterItem[];
+  /** Captures that an earlier run uploaded and did not come to keep, by title. */
+  readonly uploaded: ReadonlyMap<string, string>;
 }
 
 /** What of the starting library is not there yet; one that somebody deleted or retired stays away. */
@@ -17,7 +19,7 @@ export async function missingStarters(workshopId: string): Promise<Missing> {
     .from(knownGood)
     .where(eq(knownGood.workshopId, workshopId));
   const captures = await db()
-    .select({ title: capture.title })
+    .select({ id: capture.id, title: capture.title, deletedAt: capture.deletedAt })
     .from(capture)
     .where(eq(capture.workshopId, workshopId));
   const kept = new Set(goods.map(({ note }) => note));
@@ -25,6 +27,9 @@ export async function missingStarters(workshopId: string): Promise<Missing> {
   return {
     goods: STARTER_KNOWN_GOODS.filter((item) => !kept.has(noteOf(item))),
     practice: STARTER_PRACTICE.filter(({ title }) => !titles.has(title)),
+    uploaded: new Map(
+      captures.filter(({ deletedAt }) => deletedAt === null).map(({ id, title }) => [title, id] as const),
+    ),
   };
 }
 
@@ -51,10 +56,10 @@ interface People {
  * Uploads each, keeps the sound ones as known-goods that another person publishes, and takes their captures away again: a
  * known-good outlives its capture, and the list of captures stays short. Returns how many were made.
  */
-export async function starterWork({ goods, practice }: Missing, people: People): Promise<number> {
+export async function starterWork({ goods, practice, uploaded }: Missing, people: People): Promise<number> {
   for (const item of practice) await upload(item, people.technician);
   for (const item of goods) {
-    const captureId = await upload(item, people.technician);
+    const captureId = uploaded.get(item.title) ?? (await upload(item, people.technician));
     await people.technician.untilReady(captureId);
     const { make, model, code, year, yearTo, cylinders } = item.engine;
     const id = await people.technician.make('/known-goods', {
