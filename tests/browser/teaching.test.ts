@@ -49,15 +49,15 @@ describe('teaching', () => {
     await page.getByRole('checkbox', { name: 'Choose a stretch' }).check();
     for (const cause of ['Bent or chipped tooth', 'Wide air gap at the sensor', 'Nothing wrong here'])
       await page.getByRole('checkbox', { name: cause }).check();
+    await page.getByLabel('The answer in one sentence').fill('One tooth is short, every turn.');
+    await page.getByLabel('Step 1 of the reasoning').fill('One or all?');
+    await page.getByLabel('What step 1 shows').fill('Only one is short: a wide gap lowers all.');
     await page.getByRole('button', { name: 'Open', exact: true }).click();
     await page.getByRole('button', { name: 'Save' }).click();
     // What is missing is named, and what was typed stays.
     await page.getByText('Which cause is right: is not among the choices').waitFor();
     await expectAccessible(page);
     await page.getByLabel('Which is right').selectOption({ label: 'Bent or chipped tooth' });
-    await page.getByLabel('The answer in one sentence').fill('One tooth is short, every turn.');
-    await page.getByLabel('Step 1 of the reasoning').fill('One or all?');
-    await page.getByLabel('What step 1 shows').fill('Only one is short: a wide gap lowers all.');
     await page.getByRole('button', { name: 'Save' }).click();
     await page.waitForURL(/\/teaching\/exercises\/[a-z0-9]{16,40}$/);
     exerciseAddress = new URL(page.url()).pathname;
