@@ -43,6 +43,7 @@ export const THINGS = [
   'webhook',
   'job',
   'jobEntry',
+  'photo',
 ] as const;
 export type Thing = (typeof THINGS)[number];
 

@@ -25,6 +25,8 @@ export const PAGES = {
   '/captures/{id}/compare': 'seeStaff',
   '/comparisons/{id}': 'seeStaff',
   '/jobs': 'seeStaff',
+  '/jobs/new': 'seeStaff',
+  '/jobs/{id}': 'seeStaff',
   '/library': 'seeStaff',
   '/library/{id}': 'seeStaff',
   '/teaching': 'self',
@@ -56,4 +58,5 @@ export const PAGE_OPENS: Readonly<Partial<Record<keyof typeof PAGES, EndpointId>
   '/teaching/exercises/{id}/answers': 'attempts.list',
   '/teaching/sets/{id}': 'sets.get',
   '/teaching/sets/{id}/edit': 'sets.patch',
+  '/jobs/{id}': 'jobs.get',
 };

@@ -1,10 +1,13 @@
 import { ENDPOINTS, type EndpointId } from '../contract/endpoints.ts';
 import { createCaptureEndpoint } from './endpoints/create-capture.ts';
+import { createPhotoEndpoint } from './endpoints/create-photo.ts';
 import { exerciseWindowEndpoint } from './endpoints/exercise-window.ts';
 import { exportEndpoint } from './endpoints/export.ts';
 import { exportResultsEndpoint } from './endpoints/export-results.ts';
+import { jobReportEndpoint } from './endpoints/job-report.ts';
 import { knownGoodWindowEndpoint } from './endpoints/known-good-window.ts';
 import { originalEndpoint } from './endpoints/original.ts';
+import { photoImageEndpoint } from './endpoints/photo-image.ts';
 import { pictureEndpoint } from './endpoints/picture.ts';
 import { uploadsEndpoint } from './endpoints/uploads.ts';
 import { sharedWindowEndpoint, windowEndpoint } from './endpoints/window.ts';
@@ -27,6 +30,9 @@ const HANDLERS: Record<InFrontId, FrontEndpoint> = {
   'shared.window': sharedWindowEndpoint,
   'exercises.window': exerciseWindowEndpoint,
   'sets.exportResults': exportResultsEndpoint,
+  'jobs.report': jobReportEndpoint,
+  'photos.create': createPhotoEndpoint,
+  'photos.image': photoImageEndpoint,
   'uploads.options': uploadsEndpoint('uploads.options'),
   'uploads.create': uploadsEndpoint('uploads.create'),
   'uploads.head': uploadsEndpoint('uploads.head'),

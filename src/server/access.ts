@@ -19,6 +19,7 @@ export type { JobRecord } from './access/doors/job.ts';
 export type { JobEntryRecord } from './access/doors/job-entry.ts';
 export type { KnownGoodRecord } from './access/doors/known-good.ts';
 export type { MarkRecord } from './access/doors/mark.ts';
+export type { PhotoRecord } from './access/doors/photo.ts';
 export type { SetRecord } from './access/doors/set.ts';
 export type { ShareLinkRecord } from './access/doors/share-link.ts';
 export type { WebhookRecord } from './access/doors/webhook.ts';

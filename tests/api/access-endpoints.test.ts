@@ -122,6 +122,7 @@ const BODIES: Partial<Record<EndpointId, (things: Things) => unknown>> = {
   'jobEntries.patch': () => ({ text: 'n' }),
   'captures.nearest': () => ({ signal: 0 }),
   'comparisons.patch': () => ({ sprocketTeeth: 20 }),
+  'photos.patch': () => ({ caption: 'c' }),
   'comparisons.create': ({ knownGood }) => ({ signal: 0, knownGoodId: knownGood }),
 };
 
@@ -228,6 +229,7 @@ const NEEDS_SAMPLES: readonly EndpointId[] = [
   'captures.picture',
   'shared.window',
   'exercises.window',
+  'photos.image',
   'knownGoods.create',
 ];
 
@@ -245,7 +247,7 @@ describe.each(rows)('%s', (id, row) => {
     const changes = row.method !== 'GET' && expected === 'goes on';
     const things = changes ? await makeThings(here.id, here.technician) : await thingsFor(id);
     if (NEEDS_SAMPLES.includes(id))
-      await Promise.all([storeSamples(things.capture), storeSamples(things.exerciseCapture)]);
+      await Promise.all([storeSamples(things.capture, things.photo), storeSamples(things.exerciseCapture)]);
     const answer = await call(id, row, caller, things);
     // These end a session that other rows need.
     if (['session.signOut', 'session.signUp', 'sessions.deleteOthers', 'me.leave'].includes(id))

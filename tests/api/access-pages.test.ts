@@ -15,6 +15,7 @@ afterAll(() => pool.end());
 const addressOf = (path: string) =>
   path
     .replace('/comparisons/{id}', `/comparisons/${things.comparison}`)
+    .replace('/jobs/{id}', `/jobs/${things.job}`)
     .replace('/library/{id}', `/library/${things.knownGood}`)
     .replace('/teaching/exercises/{id}', `/teaching/exercises/${things.exercise}`)
     .replace('/teaching/sets/{id}', `/teaching/sets/${things.set}`)

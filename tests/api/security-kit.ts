@@ -179,6 +179,7 @@ export interface Things {
   readonly webhook: string;
   readonly job: string;
   readonly jobEntry: string;
+  readonly photo: string;
 }
 
 /** A capture of two signals with a mark, two links, an answer, a known-good and a comparison, a set with an exercise, a job with a note. */
@@ -204,6 +205,7 @@ export async function makeThings(
     webhook: newId(),
     job: newId(),
     jobEntry: newId(),
+    photo: newId(),
   };
   const axis = JSON.stringify({ kind: 'even', startS: 0, stepS: 0.001, count: 1000 });
   await pool.query(
@@ -350,7 +352,7 @@ async function makeTeaching(workshopId: string, maker: Person, things: Things): 
   );
 }
 
-async function makeJob(workshopId: string, maker: Person, { job, jobEntry }: Things): Promise<void> {
+async function makeJob(workshopId: string, maker: Person, { job, jobEntry, photo }: Things): Promise<void> {
   await pool.query(
     `insert into job (id, workshop_id, number, created_by, make, model, complaint)
      values ($1, $2, (random() * 1e9)::int, $3, 'Corvane', 'Talin', 'Cranks, does not start')`,
@@ -359,6 +361,11 @@ async function makeJob(workshopId: string, maker: Person, { job, jobEntry }: Thi
   await pool.query(
     `insert into job_entry (id, job_id, created_by, author, kind, text) values ($1, $2, $3, $4, 'note', 'smells of fuel')`,
     [jobEntry, job, maker.id, maker.name],
+  );
+  await pool.query(
+    `insert into job_photo (id, job_id, created_by, author, content_type, width, height, bytes, sha256)
+     values ($1, $2, $3, $4, 'image/jpeg', 4, 3, 10, 'ab')`,
+    [photo, job, maker.id, maker.name],
   );
 }
 
@@ -369,16 +376,14 @@ const store = new S3Client({
   credentials: { accessKeyId: needed('S3_ACCESS_KEY_ID'), secretAccessKey: needed('S3_SECRET_ACCESS_KEY') },
 });
 
-/** Gives the capture its original and a thousand samples for each signal. */
-export async function storeSamples(captureId: string): Promise<void> {
+/** Gives the capture its original and a thousand samples for each signal, and the photo its picture. */
+export async function storeSamples(captureId: string, photoId = captureId): Promise<void> {
+  const Bucket = process.env.S3_BUCKET ?? 'gapmark';
   const put = (name: string, Body: Uint8Array) =>
-    store.send(
-      new PutObjectCommand({
-        Bucket: process.env.S3_BUCKET ?? 'gapmark',
-        Key: `captures/${captureId}/${name}`,
-        Body,
-      }),
-    );
+    store.send(new PutObjectCommand({ Bucket, Key: `captures/${captureId}/${name}`, Body }));
+  await store.send(
+    new PutObjectCommand({ Bucket, Key: `photos/${photoId}/whole`, Body: Buffer.from('a picture') }),
+  );
   const samples = new Uint8Array(Float32Array.from({ length: 1000 }, (_, i) => Math.sin(i / 10)).buffer);
   await Promise.all([
     put('1/0.f32', samples),

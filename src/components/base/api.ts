@@ -72,6 +72,8 @@ interface ApiOptions {
   readonly method?: 'GET' | 'POST' | 'PUT' | 'PATCH' | 'DELETE';
   readonly body?: unknown;
   readonly etag?: string | null;
+  /** Idempotency-Key of a POST: sending it again after a lost answer does it no second time. */
+  readonly key?: string;
   readonly signal?: AbortSignal;
 }
 
@@ -80,6 +82,7 @@ export async function api<T>(path: string, options: ApiOptions = {}): Promise<Ap
   const headers = new Headers({ accept: 'application/json' });
   if (options.body !== undefined) headers.set('content-type', 'application/json');
   if (options.etag) headers.set('if-match', options.etag);
+  if (options.key !== undefined) headers.set('idempotency-key', options.key);
   const response = await fetch(`/api/v1${path}`, {
     method: options.method ?? 'GET',
     headers,

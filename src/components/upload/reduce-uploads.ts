@@ -1,10 +1,11 @@
-import type { UploadAction, UploadItem } from './types.ts';
+import type { FileToSend, UploadAction, UploadItem } from './types.ts';
 
-const fresh = (file: File, key: string, title: string | null, cylinders: number | null): UploadItem => ({
+const fresh = ({ file, key, title, cylinders, jobId }: FileToSend & { key: string }): UploadItem => ({
   key,
   file,
-  title,
-  cylinders,
+  title: title ?? null,
+  cylinders: cylinders ?? null,
+  jobId: jobId ?? null,
   phase: file.size === 0 ? 'refused' : 'waiting',
   sentBytes: 0,
   captureId: null,
@@ -15,11 +16,7 @@ const fresh = (file: File, key: string, title: string | null, cylinders: number 
 
 /** Next list of files on their way. Bytes sent never count backwards below zero or past the file. */
 export function reduceUploads(items: readonly UploadItem[], action: UploadAction): readonly UploadItem[] {
-  if (action.type === 'add')
-    return [
-      ...items,
-      ...action.files.map((each) => fresh(each.file, each.key, each.title ?? null, each.cylinders ?? null)),
-    ];
+  if (action.type === 'add') return [...items, ...action.files.map(fresh)];
   if (action.type === 'remove') return items.filter((item) => item.key !== action.key);
   return items.map((item) => (item.key === action.key ? changed(item, action) : item));
 }

@@ -21,6 +21,7 @@ interface SendRequest {
   readonly title: string | null;
   readonly cylinders: number | null;
   readonly note?: string;
+  readonly jobId?: string | null;
 }
 
 const RETRY_MS = [0, 1_000, 3_000, 6_000, 12_000];
@@ -36,6 +37,7 @@ export async function sendFile(request: SendRequest, events: SendEvents): Promis
   if (request.title !== null) metadata.title = request.title;
   if (request.cylinders !== null) metadata.cylinders = String(request.cylinders);
   if (request.note) metadata.note = request.note;
+  if (request.jobId) metadata.jobId = request.jobId;
   const upload: Upload = new tus.Upload(request.file, {
     endpoint: '/api/v1/uploads',
     metadata,

@@ -4,6 +4,8 @@ export interface UploadItem {
   readonly file: File;
   readonly title: string | null;
   readonly cylinders: number | null;
+  /** The job that the capture will belong to. */
+  readonly jobId: string | null;
   readonly phase: 'waiting' | 'sending' | 'paused' | 'received' | 'refused';
   readonly sentBytes: number;
   /** Set with `received`. */
@@ -19,6 +21,7 @@ export interface FileToSend {
   readonly file: File;
   readonly title?: string;
   readonly cylinders?: number;
+  readonly jobId?: string;
 }
 
 export type UploadAction =

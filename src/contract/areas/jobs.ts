@@ -146,6 +146,16 @@ export const photo = z.object({
 });
 export type PhotoJson = z.infer<typeof photo>;
 
+/** Fields beside the picture. */
+export const photoFields = z.object({
+  caption: text(500).optional(),
+  /** Key of the check that it belongs to. */
+  check: z
+    .string()
+    .regex(/^[a-z0-9-]{1,60}$/)
+    .optional(),
+});
+
 export const timelineItem = z.discriminatedUnion('type', [
   z.object({ type: z.literal('entry'), at: isoTime, entry: jobEntry }),
   z.object({ type: z.literal('photo'), at: isoTime, photo }),
@@ -217,6 +227,23 @@ export const jobEndpoints = defineEndpoints({
     opens: 'job',
     response: listOf(timelineItem),
   },
+  'jobs.report': {
+    method: 'GET',
+    path: '/jobs/{id}/report',
+    summary: 'The job as a report, as a page or as a tagged PDF; the same job gives the same bytes.',
+    access: 'seeStaff',
+    opens: 'job',
+    query: z.object({
+      /** In plain words, or with all numbers. */
+      for: z.enum(['customer', 'colleague']).default('colleague'),
+      format: z.enum(['html', 'pdf']).default('html'),
+    }),
+    response: {
+      contentType: 'text/html',
+      description: 'A page without scripts; application/pdf when asked for.',
+    },
+    inFront: true,
+  },
   'jobEntries.create': {
     method: 'POST',
     path: '/jobs/{id}/entries',
@@ -255,5 +282,69 @@ export const jobEndpoints = defineEndpoints({
     opens: 'jobEntry',
     opensDeleted: true,
     response: jobEntry,
+  },
+  'photos.create': {
+    method: 'POST',
+    path: '/jobs/{id}/photos',
+    summary:
+      'Add a photo (JPEG, PNG or WebP, at most 25 MiB and 50 megapixels) as multipart/form-data with the field "file". It is ' +
+      'decoded and written anew, without place and device.',
+    access: 'changeStaff',
+    opens: 'job',
+    body: photoFields,
+    bodyKind: 'multipart',
+    response: photo,
+    successStatus: 201,
+    inFront: true,
+  },
+  'photos.list': {
+    method: 'GET',
+    path: '/jobs/{id}/photos',
+    summary: 'Photos of a job, oldest first.',
+    access: 'seeStaff',
+    opens: 'job',
+    response: listOf(photo),
+  },
+  'photos.image': {
+    method: 'GET',
+    path: '/photos/{id}/image',
+    summary: 'The picture itself, whole or small.',
+    access: 'seeStaff',
+    opens: 'photo',
+    query: z.object({ size: z.enum(['whole', 'small']).default('whole') }),
+    response: {
+      contentType: 'image/jpeg',
+      description: 'JPEG, PNG or WebP, as `contentType` says; small ones are JPEG.',
+    },
+    inFront: true,
+  },
+  'photos.patch': {
+    method: 'PATCH',
+    path: '/photos/{id}',
+    summary: 'Change a photo’s caption.',
+    access: 'changeStaff',
+    opens: 'photo',
+    body: z.object({ caption: text(500) }).strict(),
+    response: photo,
+    ifMatch: true,
+  },
+  'photos.delete': {
+    method: 'DELETE',
+    path: '/photos/{id}',
+    summary: 'Take a photo away; it can be brought back for 30 days.',
+    access: 'removeStaff',
+    opens: 'photo',
+    response: z.null(),
+    successStatus: 204,
+    ifMatch: true,
+  },
+  'photos.restore': {
+    method: 'POST',
+    path: '/photos/{id}/restore',
+    summary: 'Bring a photo back.',
+    access: 'removeStaff',
+    opens: 'photo',
+    opensDeleted: true,
+    response: photo,
   },
 });

@@ -10,6 +10,7 @@ import { jobDoor } from './doors/job.ts';
 import { jobEntryDoor } from './doors/job-entry.ts';
 import { knownGoodDoor } from './doors/known-good.ts';
 import { markDoor } from './doors/mark.ts';
+import { photoDoor } from './doors/photo.ts';
 import { setDoor } from './doors/set.ts';
 import { shareLinkDoor } from './doors/share-link.ts';
 import { webhookDoor } from './doors/webhook.ts';
@@ -29,6 +30,7 @@ export const OPENERS = {
   webhook: openThrough(webhookDoor),
   job: openThrough(jobDoor),
   jobEntry: openThrough(jobEntryDoor),
+  photo: openThrough(photoDoor),
 } as const satisfies Record<Thing, unknown>;
 
 /** What each kind of thing opens as. */

@@ -20,6 +20,10 @@ export const knownGoodPyramidKey = (knownGoodId: string, signal: number) =>
   `known-goods/${knownGoodId}/${signal}.pyramid`;
 export const knownGoodTimesPyramidKey = (knownGoodId: string) => `known-goods/${knownGoodId}/times.pyramid`;
 
+/** A photo of a job as it was written anew, and the same small. */
+export const photoKey = (photoId: string) => `photos/${photoId}/whole`;
+export const smallPhotoKey = (photoId: string) => `photos/${photoId}/small`;
+
 /** Times at the pyramid's block bounds of an uneven axis: see src/server/storage/pyramid-file.ts. */
 export const timesPyramidKey = (captureId: string, samplesVersion: number) =>
   `captures/${captureId}/${samplesVersion}/times.pyramid`;

@@ -1,6 +1,7 @@
 import { and, asc, eq, isNotNull, isNull, lt, or, sql } from 'drizzle-orm';
 import { db } from '../../db/client.ts';
 import { capture, pendingSignUp, upload } from '../../db/schema.ts';
+import { sweepJobs } from '../../jobs/sweep-jobs.ts';
 import { deleteObject, deleteObjects } from '../../storage/delete-objects.ts';
 import { capturePrefix } from '../../storage/keys.ts';
 import { listKeys } from '../../storage/list-keys.ts';
@@ -18,6 +19,7 @@ const LONG_AGO = sql`now() - interval '7 days'`;
 export async function sweep(): Promise<{ captures: number; uploads: number }> {
   const captures = await sweepCaptures();
   const uploads = await sweepUploads();
+  await sweepJobs();
   await db().delete(pendingSignUp).where(lt(pendingSignUp.expiresAt, sql`now()`));
   return { captures, uploads };
 }
