@@ -3,6 +3,7 @@ import { cellKind, cellNumber } from './cellKind.ts';
 import { type Clock, NS_PER_DAY, parseClock } from './clock.ts';
 import { parseNumber } from './number.ts';
 import type { Plan } from './plan.ts';
+import { placesBetween, quantityOf } from './quantity.ts';
 import type { Stage } from './stage.ts';
 import { decodeText } from './text.ts';
 import type { Decimal } from './types.ts';
@@ -118,6 +119,8 @@ export class CellReader {
     const kind = cellKind(text, this.decimal);
     if (kind === 'number' || kind === 'grouped')
       return cellNumber(text, this.decimal, this.stage.shifts[column]!);
+    const quantity = kind === 'text' ? this.quantity(text, column) : null;
+    if (quantity !== null) return quantity;
     if (!isSignal) {
       // Dates and clock times in columns that are not used are no text that would make a row odd.
       return this.uses[column] === 'none' && kind !== 'text' ? Number.NaN : null;
@@ -132,6 +135,16 @@ export class CellReader {
     signal[kind] ??= { count: 0, firstLine: line, word: text };
     signal[kind].count++;
     return kind === 'high' ? Number.POSITIVE_INFINITY : Number.NEGATIVE_INFINITY;
+  }
+
+  /** A number with its unit inside the cell, in the unit of its column; null: no such thing. */
+  private quantity(text: string, column: number): number | null {
+    const unit = this.plan.cellUnits[column];
+    const found = unit && quantityOf(text, this.decimal);
+    const places = found ? placesBetween(found.unit, unit) : null;
+    return found && places !== null
+      ? cellNumber(found.number, this.decimal, this.stage.shifts[column]! + places)
+      : null;
   }
 
   private settleDecimal(text: string): void {

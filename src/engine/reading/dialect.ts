@@ -1,6 +1,7 @@
 import { type CellKind, cellKind } from './cellKind.ts';
 import { splitCells } from './cells.ts';
 import type { HeadLine } from './lines.ts';
+import { quantityOf } from './quantity.ts';
 import type { Decimal, Delimiter, ReadingHints } from './types.ts';
 
 export interface Dialect {
@@ -16,6 +17,8 @@ export interface Dialect {
   readonly rows: readonly number[];
   /** True when the same cells could as well be whole numbers with thousands marks. */
   readonly groupsInDoubt: boolean;
+  /** True when numbers carry their unit inside the cell. */
+  readonly quantities: boolean;
 }
 
 const DELIMITERS: readonly Delimiter[] = [',', ';', '\t', '|', ' '];
@@ -46,17 +49,29 @@ function detectIn(lines: readonly HeadLine[], hints: ReadingHints): Dialect {
   const pairs = delimiters
     .flatMap((delimiter) => decimals.map((decimal) => ({ delimiter, decimal })))
     .filter(({ delimiter, decimal }) => delimiter !== decimal || hints.decimal !== undefined);
-  const bestOf = (loose: boolean) =>
+  const bestOf = (loose: boolean, quantities = false) =>
     pairs
-      .map(({ delimiter, decimal }) => tryDialect(lines, delimiter, decimal, hints.headerLine ?? null, loose))
+      .map(({ delimiter, decimal }) =>
+        tryDialect(lines, delimiter, decimal, hints.headerLine ?? null, loose, quantities),
+      )
       .reduce(
         (best, tried) => (tried !== null && (best === null || tried.score > best.score) ? tried : best),
         null,
       );
   const strict = bestOf(false);
   const isEnough = strict !== null && (strict.rows.length > 2 || strict.rows.length * 3 > lines.length);
-  const best = isEnough ? strict : (bestOf(true) ?? strict);
-  const none = { cells: 0, decimalKnown: false, firstRow: null, rows: [], groupsInDoubt: false };
+  const withUnits = isEnough ? null : bestOf(false, true);
+  const isUnitsEnough =
+    withUnits !== null && withUnits.rows.length > 2 && withUnits.rows.length > (strict?.rows.length ?? 0);
+  const best = isEnough ? strict : isUnitsEnough ? withUnits : (bestOf(true) ?? strict);
+  const none = {
+    cells: 0,
+    decimalKnown: false,
+    firstRow: null,
+    rows: [],
+    groupsInDoubt: false,
+    quantities: false,
+  };
   return best ?? { ...none, delimiter: hints.delimiter ?? ',', decimal: hints.decimal ?? '.' };
 }
 
@@ -73,8 +88,10 @@ function tryDialect(
   decimal: Decimal,
   headerLine: number | null,
   loose: boolean,
+  quantities: boolean,
 ): Tried | null {
-  const split = lines.map(({ text }) => (text.trim() === '' ? [] : splitCells(text, delimiter)));
+  const bare = (cell: string) => (quantities ? (quantityOf(cell, decimal)?.number ?? cell) : cell);
+  const split = lines.map(({ text }) => (text.trim() === '' ? [] : splitCells(text, delimiter).map(bare)));
   const kinds = split.map((cells) => cells.map((cell) => cellKind(cell, decimal)));
   const isRow = kinds.map((row, i) => lines[i]!.line > (headerLine ?? 0) && isRowOfNumbers(row, loose));
   const counts = new Map<number, number>();
@@ -113,7 +130,7 @@ function tryDialect(
     flat.every(
       ({ cell, kind }) => kind !== 'number' || !cell.includes(',') || /^[+-]?[1-9]\d{0,2},\d{3}$/.test(cell),
     );
-  return { delimiter, decimal, decimalKnown, cells, firstRow, rows: table, groupsInDoubt, score };
+  return { delimiter, decimal, decimalKnown, cells, firstRow, rows: table, groupsInDoubt, quantities, score };
 }
 
 /** A row holds at least one number or clock time, and no text; loosely: more of those than of text. */

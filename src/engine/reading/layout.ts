@@ -3,6 +3,7 @@ import { type Dialect, detectDialect, MOST_SNIFFED_LINES } from './dialect.ts';
 import { findHeader, type Header } from './header.ts';
 import { type HeadLine, joinHeadings, splitLines } from './lines.ts';
 import { type Preamble, readPreamble } from './preamble.ts';
+import { quantityOf } from './quantity.ts';
 import { findRoles, type Roles } from './roles.ts';
 import type { Delimiter, Encoding, ReadingHints, TimeUnit } from './types.ts';
 import { timeUnitOf } from './units.ts';
@@ -28,10 +29,12 @@ export function findLayout(
   said: ReadingHints,
 ): Layout {
   const lines = joinHeadings(splitLines(head, encoding, isWholeFile, MOST_SNIFFED_LINES));
-  const named = /^\s*"?sep=(.)"?\s*$/i.exec(lines[0]?.text ?? '')?.[1];
-  const hints = said.delimiter === undefined && isDelimiter(named) ? { ...said, delimiter: named } : said;
+  const separator = /^\s*"?sep=(.)"?\s*$/i.exec(lines[0]?.text ?? '')?.[1];
+  const hints =
+    said.delimiter === undefined && isDelimiter(separator) ? { ...said, delimiter: separator } : said;
   const dialect = detectDialect(lines, hints);
-  const header = findHeader(lines, dialect, hints);
+  const named = findHeader(lines, dialect, hints);
+  const header = dialect.quantities ? withCellUnits(named, lines, dialect) : named;
   const above = lines.slice(0, header.namesAt ?? header.unitsAt ?? dialect.firstRow ?? lines.length);
   const preamble = readPreamble(
     above.map(({ text }) => text),
@@ -39,7 +42,9 @@ export function findLayout(
     dialect.decimal,
   );
   const intervalS = hints.sampleIntervalS ?? preamble.intervalS;
-  const rows = dialect.rows.map((row) => splitCells(lines[row]!.text, dialect.delimiter));
+  const bare = (cell: string) =>
+    dialect.quantities ? (quantityOf(cell, dialect.decimal)?.number ?? cell) : cell;
+  const rows = dialect.rows.map((row) => splitCells(lines[row]!.text, dialect.delimiter).map(bare));
   const roles = findRoles(rows, dialect, header, hints, intervalS !== null);
   const unit =
     roles.time === null ? null : timeUnit(hints, header, preamble, roles, rows, dialect.decimal === ',');
@@ -53,6 +58,22 @@ export function findLayout(
     timeUnit: roles.time === null ? null : (unit ?? 's'),
     isTimeUnitAssumed: roles.time !== null && unit === null,
   };
+}
+
+/** Units inside the cells of the first rows go before those of the header: a column's first one counts. */
+function withCellUnits(header: Header, lines: readonly HeadLine[], dialect: Dialect): Header {
+  const units = Array.from(
+    { length: Math.max(header.units.length, dialect.cells) },
+    (_, i) => header.units[i] ?? null,
+  );
+  const names = units.map((_, i) => header.names[i] ?? '');
+  for (const row of [...dialect.rows].reverse()) {
+    splitCells(lines[row]!.text, dialect.delimiter).forEach((cell, column) => {
+      const unit = quantityOf(cell, dialect.decimal)?.unit;
+      if (unit !== undefined && column < units.length) units[column] = unit;
+    });
+  }
+  return { ...header, names, units };
 }
 
 function isDelimiter(text: string | undefined): text is Delimiter {

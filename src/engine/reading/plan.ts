@@ -1,4 +1,5 @@
 import type { Decimal, Delimiter, Encoding, TimeUnit } from './types.ts';
+import type { Unit } from './units.ts';
 
 /** How the rows are to be read; made from the first lines of the file. */
 export interface Plan {
@@ -20,6 +21,8 @@ export interface Plan {
   readonly firstLine: number;
   /** An empty line between rows of a one-column table is an empty cell. */
   readonly blankIsHole: boolean;
+  /** By file column, where cells carry their unit: the unit that the column is read in; empty otherwise. */
+  readonly cellUnits: readonly (Unit | null)[];
 }
 
 /** Why reading ended before the end of the file. */

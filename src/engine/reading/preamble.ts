@@ -43,8 +43,9 @@ export function readPreamble(lines: readonly string[], delimiter: Delimiter, dec
   let startS: number | null = null;
   let recordedAt: string | null = null;
   let timeUnit: TimeUnit | null = null;
-  for (const line of lines) {
-    for (const { key, value } of entriesOf(line, delimiter)) {
+  for (const [i, line] of lines.entries()) {
+    const below = entriesBelow(line, lines[i + 1] ?? '', delimiter);
+    for (const { key, value } of [...entriesOf(line, delimiter), ...below]) {
       if (RATE.test(key)) {
         const rate = quantity(key, value, decimal, 'Hz');
         if (rate !== null && rate > 0) intervalS ??= 1 / rate;
@@ -86,6 +87,17 @@ function entriesOf(text: string, delimiter: Delimiter): Entry[] {
   const spaced = /^([A-Za-z][A-Za-z _-]*?)\s+([-+]?\d.*)$/.exec(bare);
   if (entries.length === 0 && spaced !== null) entries.push({ key: spaced[1]!, value: spaced[2]! });
   return entries;
+}
+
+/** Keys in one line and their values in the next, cell under cell; none where a key holds a number or the counts differ. */
+function entriesBelow(text: string, next: string, delimiter: Delimiter): Entry[] {
+  const keys = splitCells(text, delimiter);
+  const values = splitCells(next, delimiter);
+  if (keys.length < 2 || keys.length !== values.length) return [];
+  if (keys.some((key) => /^[-+−]?[\d.,]/.test(key))) return [];
+  return keys.flatMap((key, i) =>
+    /[A-Za-zΔ∆]/.test(key) && /\d/.test(values[i]!) ? [{ key, value: values[i]! }] : [],
+  );
 }
 
 /** "20 µs", "50 kS/s", "2e-5", or a bare number with the unit in the key: "Interval (ms)". In seconds or hertz. */

@@ -118,6 +118,7 @@ export function startReading(
     namesText: header.namesAt === null ? null : lines[header.namesAt]!.text.trim(),
     firstLine: first.line,
     blankIsHole: dialect.cells === 1 && blank * 5 < dialect.rows.length,
+    cellUnits: dialect.quantities ? header.units : [],
   };
   return { ok: true, head, layout, plan, isChosen: hints.columns !== undefined, firstRowAt: first.from };
 }

@@ -7,7 +7,7 @@ const wanted = process.argv.slice(2);
 const total = { right: 0, silent: 0, wrong: 0 };
 for (const circuit of Object.keys(TRIALS)) {
   if (wanted.length > 0 && !wanted.includes(circuit)) continue;
-  const rows = sweep(circuit, seeds);
+  const rows = await sweep(circuit, seeds);
   const sum = { right: 0, silent: 0, wrong: 0 };
   for (const row of rows) {
     for (const verdict of ['right', 'silent', 'wrong'] as const) sum[verdict] += row[verdict];
