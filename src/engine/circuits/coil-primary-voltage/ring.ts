@@ -62,7 +62,7 @@ function passesLimit(
   step: number,
 ): { at: number; error: number } | null {
   // Steps as coarse as the limit show nothing about it.
-  if (limit < 1.5 * step) return null;
+  if (limit < 2.5 * step) return null;
   // The last heights well above their own error; weights are those of a logarithm.
   const shown = heights.flatMap(({ height, error: white }, k) => {
     const error = Math.max(white, step / 2.5);
@@ -111,7 +111,7 @@ function furthest(
 
 /** Too few half swings for a decay: each height by itself, if none stands so near the limit that it may be on either side. */
 function fewPass(heights: HalfSwings['heights'], limit: number): { at: number; error: number } | null {
-  if (heights.some(({ height, error }) => Math.abs(height - limit) < Math.max(3 * error, 0.25 * limit)))
+  if (heights.some(({ height, error }) => Math.abs(height - limit) < Math.max(3 * error, 0.35 * limit)))
     return null;
   const below = heights.findIndex(({ height }) => height < limit);
   return { at: (below < 0 ? heights.length : below) - 0.5, error: 0 };
