@@ -4,6 +4,7 @@ import { jobEndpoints } from './areas/jobs.ts';
 import { libraryEndpoints } from './areas/library.ts';
 import { markEndpoints } from './areas/marks.ts';
 import { ownerEndpoints } from './areas/owner.ts';
+import { pathEndpoints } from './areas/path.ts';
 import { peopleEndpoints } from './areas/people.ts';
 import { sharingEndpoints } from './areas/sharing.ts';
 import { teachingEndpoints } from './areas/teaching.ts';
@@ -21,6 +22,7 @@ export const ENDPOINTS = defineEndpoints({
   ...sharingEndpoints,
   ...libraryEndpoints,
   ...jobEndpoints,
+  ...pathEndpoints,
   ...teachingEndpoints,
   ...peopleEndpoints,
   ...ownerEndpoints,

@@ -14,9 +14,9 @@ export function tidyCode(typed: string): string {
   return /^[PBCU][0-3][0-9A-F]{3}$/.test(tidy) ? tidy : typed.trim();
 }
 
-/** The codes noted with any check, each once, in order. */
-export function codesOf(records: readonly CheckRecord[]): NotedCode[] {
-  const codes = new Set(records.flatMap((record) => record.codes.map(tidyCode)));
+/** The codes noted with the job and with any check, each once, in order. */
+export function codesOf(records: readonly CheckRecord[], noted: readonly string[]): NotedCode[] {
+  const codes = new Set([...noted, ...records.flatMap((record) => record.codes)].map(tidyCode));
   return [...codes].map((code) => ({
     code,
     known: Object.hasOwn(CODES, code) ? (CODES[code] ?? null) : null,

@@ -49,8 +49,10 @@ export interface Facts {
   readonly complaintText: string;
   /** In the order in which they were recorded. */
   readonly records: readonly CheckRecord[];
+  /** Codes noted with the job itself. */
+  readonly codes: readonly string[];
   readonly measured: readonly MeasuredReading[];
   readonly overrules: readonly Overrule[];
 }
 
-export const noFacts: Facts = { complaintText: '', records: [], measured: [], overrules: [] };
+export const noFacts: Facts = { complaintText: '', records: [], codes: [], measured: [], overrules: [] };

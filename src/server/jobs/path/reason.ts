@@ -26,7 +26,7 @@ export interface Reasoned {
 export function reason(facts: Facts): Reasoned {
   const known = outcomesOf(facts);
   const { complaint, guessed } = complaintOf(known.outcomes.get('complaint'), facts.complaintText);
-  const codes = codesOf(facts.records);
+  const codes = codesOf(facts.records, facts.codes);
   const alerts = alertsUp(known, codes, complaint);
   const followed = followCauses(known, codes, complaint, facts.overrules);
   const contradictions = [...known.contradictions, ...followed.contradictions];

@@ -110,6 +110,7 @@ describe('reason()', () => {
         const facts: Facts = {
           complaintText: pick(['cranks, does not start', 'stalls']),
           records,
+          codes: [],
           measured: [],
           overrules: [],
         };

@@ -51,7 +51,7 @@ export function runCase(one: TradeCase, choose: Choose = bestFirst): CaseEnd {
   const unanswered = new Set<CheckId>();
   let minutes = 0;
   for (let step = 0; step < 90; step++) {
-    const facts: Facts = { complaintText: one.complaint, records, measured: [], overrules: [] };
+    const facts: Facts = { complaintText: one.complaint, records, codes: [], measured: [], overrules: [] };
     const reasoned = reason(facts);
     const shown = reasoned.causes.filter(({ state }) => state === 'shown');
     const [leading] = reasoned.causes;
