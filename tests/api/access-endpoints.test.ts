@@ -118,6 +118,8 @@ const BODIES: Partial<Record<EndpointId, (things: Things) => unknown>> = {
   'attempts.judge': () => ({ mark: 'right' }),
   'jobs.create': () => ({ complaint: 'Cranks, does not start' }),
   'jobs.patch': () => ({ complaint: 'Cranks slowly' }),
+  'jobChecks.put': () => ({ result: 'unclear' }),
+  'jobCauses.put': () => ({ decision: 'set aside', why: 'has none' }),
   'jobEntries.create': () => ({ kind: 'note', text: 'n' }),
   'jobEntries.patch': () => ({ text: 'n' }),
   'captures.nearest': () => ({ signal: 0 }),
@@ -141,7 +143,11 @@ interface Extra {
 function pathOf(id: EndpointId, row: Endpoint, things: Things, secret: string, extra: Extra): string {
   const thing =
     row.opens === undefined ? extra[id.startsWith('people.') ? 'person' : 'token'] : things[row.opens];
-  const path = row.path.replace('{id}', thing).replace('{secret}', secret);
+  const path = row.path
+    .replace('{id}', thing)
+    .replace('{secret}', secret)
+    .replace('{check}', 'spark')
+    .replace('{cause}', 'coil');
   return `/api/v1${path}${QUERIES[id] ?? ''}`;
 }
 
