@@ -363,7 +363,7 @@ describe('results', () => {
     expect(json.exercises).toEqual([
       { id: exercise, title: 'What is wrong?', right: 1, tried: 3, waiting: 0 },
     ]);
-    const ada = json.people.find(({ name }: Json) => name === 'Ada');
+    const ada = json.people.find(({ id }: Json) => id === people[0]?.id);
     expect(ada.attempts.map(({ outcome }: Json) => outcome)).toEqual(['wrong']);
     expect(json.confusion.causes.map(({ key }: Json) => key)).toEqual(['bent-tooth', 'wide-gap']);
     expect(json.confusion.counts).toEqual([
