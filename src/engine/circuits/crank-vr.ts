@@ -108,22 +108,24 @@ function readTeeth(signal: MeasuredSignal, pickup: Pickup, context: CrankContext
   };
   const told = tellPolarity(pickup);
   if (told) {
-    const [own, other] =
+    const [kind, opposite] =
       told === 'normal' ? (['falling', 'rising'] as const) : (['rising', 'falling'] as const);
-    const reading = read(own, told);
-    const { shortest } = reading.sampling;
-    if (shortest !== null && shortest < FEW_SAMPLES && !tellSteepness(pickup)) return unclear(reading);
+    const reading = read(kind, told);
+    if (tooCoarse(reading) && !tellSteepness(pickup)) return unclear(reading);
     // Few teeth, of which one may be weak: the passages between them must not make a wheel as well.
     if (!reading.result.ok || reading.result.pattern.teeth > FEW_TEETH || tellSteepness(pickup))
       return reading;
-    const against = read(other, null);
+    const against = read(opposite, null);
+    if (!against.result.ok) return reading;
+    const [own, others] = [unevenness(reading), unevenness(against)];
     const asGood =
-      longestGap(against) > longestGap(reading) - NEARLY_AS_LONG &&
-      unevenness(reading) > MORE_EVEN * unevenness(against);
+      others < MORE_EVEN * own ||
+      (longestGap(against) > longestGap(reading) - NEARLY_AS_LONG && others < own / MORE_EVEN);
     return asGood ? unclear(reading) : reading;
   }
   const falling = read('falling', null);
   const rising = read('rising', null);
+  if (tooCoarse(falling) || tooCoarse(rising)) return unclear(falling);
   const difference = longestGap(falling) - longestGap(rising);
   const chosen: Reading =
     difference > 0 ? { ...falling, polarity: 'normal' } : { ...rising, polarity: 'inverted' };
@@ -136,6 +138,8 @@ function readTeeth(signal: MeasuredSignal, pickup: Pickup, context: CrankContext
     return falling;
   return unclear(falling);
 }
+
+const tooCoarse = ({ sampling }: Reading) => sampling.shortest !== null && sampling.shortest < FEW_SAMPLES;
 
 const unclear = (reading: Reading): Reading => ({
   ...reading,

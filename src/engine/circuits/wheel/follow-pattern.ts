@@ -29,6 +29,9 @@ function turnedTo(template: readonly PatternGap[], index: number, turn: number):
   }));
 }
 
+/** Wheels with fewer teeth than this are easily misread where the shaft starts or stops. */
+const FEW_TEETH = 12;
+
 /** Of two marks less than a turn apart the one with fewer like it, turn by turn, is no mark. */
 function oneATurn(features: readonly Feature[], turn: number): Feature[] {
   const support = (list: readonly Feature[]) => {
@@ -131,6 +134,29 @@ export function follow(laid: Laid, turn: number, template: readonly PatternGap[]
     }
     markEvents.push(candidate.event);
     lastPlace = here;
+  }
+  const teeth = turn - gaps.reduce((sum, gap) => sum + gap.size - 1, 0);
+  // Of few teeth a slow start or stop makes a gap anywhere: the outer turns must have all their teeth.
+  while (
+    teeth <= FEW_TEETH &&
+    markEvents.length > 1 &&
+    chainStarts[1] !== 1 &&
+    markEvents[1]! - markEvents[0]! !== teeth
+  ) {
+    markEvents.shift();
+    markTurns.shift();
+    const first = markTurns[0]!;
+    for (let m = 0; m < markTurns.length; m += 1) markTurns[m]! -= first;
+    for (let c = 1; c < chainStarts.length; c += 1) chainStarts[c]! -= 1;
+  }
+  while (
+    teeth <= FEW_TEETH &&
+    markEvents.length > 1 &&
+    chainStarts.at(-1)! < markEvents.length - 1 &&
+    markEvents.at(-1)! - markEvents.at(-2)! !== teeth
+  ) {
+    markEvents.pop();
+    markTurns.pop();
   }
   if (markEvents.length < 2) return null;
   if (placed.cutBefore && place[0] === place[markEvents[0]!]! - turn) {

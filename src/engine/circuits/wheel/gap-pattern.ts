@@ -14,15 +14,20 @@ const MOST_SCATTER = 0.24;
 /** Periods that shrink (or grow) by this much over three teeth, noise aside: the shaft comes from rest or to a stop. */
 const STARTING = 1.12;
 /** Periods that grow by this much from tooth to tooth, twice in a row, at the end of the train. */
-const STOPPING = 1.15;
+const STOPPING = 1.1;
+/** … and are so much longer than they were. */
+const STOPPED = 1.3;
 /** Fewer teeth a gap than this are few: the speed may swing while a gap of two teeth passes. */
 const FEW_TEETH = 40;
 /** One reading of the gaps' lengths must fit better than another by this, in places. */
 const CLEARLY = 0.3;
+const MOST_WAYS = 16;
+/** A pick-up's gap may measure half a place more than it is, and the speed may swing; no more, on the average. */
+const FARTHEST = 0.65;
 /** What each further size of gap costs, in places. */
 const UNLIKE = 0.25;
-/** Among fewer places than this an odd division is believed only of a gap that fits it well. */
-const FEW_PLACES = 20;
+/** An odd division is believed only of a gap that fits it well. */
+const FITS_WELL = 0.15;
 /** With fewer gaps than this share of the intervals, the rest is an even division. */
 const MOST_GAPS = 0.2;
 /** Intervals this near to whole numbers of periods are places of an even division. */
@@ -98,7 +103,8 @@ function trimmed(times: Float64Array, placed: Placed): Placed {
   while (to - from > 8) {
     const a = interval(to - 2);
     const b = interval(to - 3);
-    if (a > STOPPING * b && a < 1.8 * b && b > STOPPING * interval(to - 4)) to -= 1;
+    const usual = median(mapped(new Float64Array(9), (_, i) => interval(Math.max(from, to - 3 - i))))!;
+    if (a > STOPPING * b && a < 1.8 * b && b > STOPPING * interval(to - 4) && a > STOPPED * usual) to -= 1;
     else break;
   }
   if (from === 0 && to === times.length) return placed;
@@ -124,10 +130,16 @@ function sizings(placed: Placed): Array<(ratio: number) => number> {
     const wide = to - cluster[0]! > Math.max(1.4, 0.5 * middle);
     const nearest = Math.max(2, Math.round(middle));
     const other = middle > nearest ? nearest + 1 : nearest - 1;
-    // A long gap among few teeth lasts a good part of the turn, in which the speed swings: its length is open too.
+    // The speed swings while a long gap passes, the more the fewer teeth there are: its length is open then.
     const long = middle > 2.6 && intervals < FEW_TEETH * gaps.length;
-    const open = !wide && (long || Math.abs(middle - nearest) > 0.2) && other >= 2 && ways.length < 8;
-    const sizes = wide ? [0] : open ? [nearest, other] : [nearest];
+    const longest = Math.min(nearest + 2, Math.round(middle * placed.swing));
+    const shortest = Math.max(2, nearest - 2, Math.round(middle / placed.swing));
+    const open = new Set([nearest]);
+    if (ways.length < MOST_WAYS && !wide) {
+      if (other >= 2 && (long || Math.abs(middle - nearest) > 0.2)) open.add(other);
+      if (long) for (let size = shortest; size <= longest; size += 1) open.add(size);
+    }
+    const sizes = wide ? [0] : Array.from(open);
     ways = ways.flatMap((way) => sizes.map((size) => [...way, { to, size }]));
   }
   return ways.map((way) => (ratio: number) => {
@@ -198,6 +210,7 @@ function findTurn(laid: Laid): Found | null {
       Math.min(1, Math.abs(laid.placed.ratio[f.event - 1]! - f.size)),
     ),
   )!;
+  if (nearness > FARTHEST * laid.placed.swing) return null;
   const template = commonTemplates(features, turn, end).find((gaps) => {
     const missing = gaps.reduce((sum, gap) => sum + gap.size - 1, 0);
     return (
@@ -209,8 +222,8 @@ function findTurn(laid: Laid): Found | null {
   if (laid.placed.extras.length > 2 + 1.5 * laid.features.length) return null;
   // Wheels are divided into a whole number of degrees, halves or quarters; this decides only where a gap's length is open.
   const natural = isOrdinaryDivision(turn);
-  // Among few teeth the speed swings while the gap passes: an odd division is believed only of a gap that fits it well.
-  if (!natural && turn < FEW_PLACES && nearness > 0.12) return null;
+  // The speed swings while the gap passes: an odd division is believed only of a gap that fits it well.
+  if (!natural && nearness > FITS_WELL) return null;
   // Gaps of one size, or of two, are usual; the swing of speed makes equal gaps look different.
   const sizes = new Set(template.map(({ size }) => size)).size;
   return { laid, turn, template, rank: (natural ? 1 : 0) - nearness - UNLIKE * (sizes - 1) };

@@ -98,6 +98,7 @@ export function irregularTeeth(wheel: FoundWheel, gaps: Value): Irregular {
 
   function worstTooth(): (IrregularTooth & { off: number }) | null {
     const heights: number[][] = Array.from({ length: teeth + 1 }, () => []);
+    const plains: number[][] = Array.from({ length: teeth + 1 }, () => []);
     const offsets: number[][] = Array.from({ length: teeth + 1 }, () => []);
     const doubts: number[][] = Array.from({ length: teeth + 1 }, () => []);
     const round = flux
@@ -108,7 +109,16 @@ export function irregularTeeth(wheel: FoundWheel, gaps: Value): Irregular {
       if (flagged.has(tooth) || beside.has(tooth)) continue;
       const near = neighbours(k);
       const ratio = height ? heightRatio(k, near, round) : null;
-      if (ratio !== null) heights[tooth]!.push(ratio);
+      if (ratio !== null) {
+        heights[tooth]!.push(ratio);
+        plains[tooth]!.push(
+          overNeighbours(
+            Number.isNaN(flux![k]!) ? height! : flux!,
+            k,
+            near.filter((j) => !Number.isNaN(flux![j]!)),
+          ) ?? 1,
+        );
+      }
       const off = offset(k, near);
       if (off === null) continue;
       offsets[tooth]!.push(off.degrees);
@@ -120,7 +130,7 @@ export function irregularTeeth(wheel: FoundWheel, gaps: Value): Irregular {
     const offNoise = pooledDeviation(offsets);
     // What the teeth around are off by comes from the curve, from run-out, from hum in step with the turn or the like.
     const usualOff = usualAround(offsets, 0);
-    const usualHeight = usualAround(heights, 1);
+    const usualHeight = usualAround(plains, 1);
     let worst: (IrregularTooth & { off: number }) | null = null;
     let badness = 1;
     for (let tooth = 1; tooth <= teeth; tooth += 1) {
@@ -163,17 +173,14 @@ export function irregularTeeth(wheel: FoundWheel, gaps: Value): Irregular {
     return lists.map((list) => median(list) ?? 0);
   }
 
-  /** Three times the middle of what the teeth around each are off by. */
+  /** What the single passages of the teeth around each are off by: three and a half deviations, robustly. */
   function usualAround(lists: readonly (readonly number[])[], usual: number): (tooth: number) => number {
-    const off = lists.map((list) => (list.length > 0 ? Math.abs(mean(list)! - usual) : Number.NaN));
-    const known = off.filter((value) => !Number.isNaN(value));
-    const everywhere = median(known) ?? 0;
+    const off = lists.map((list) => list.map((value) => Math.abs(value - usual)));
     return (tooth) => {
-      const around = Array.from(
-        { length: 2 * AROUND + 1 },
-        (_, i) => off[((tooth - 1 + i - AROUND + 2 * teeth) % teeth) + 1]!,
-      );
-      return 3 * Math.max(everywhere, median(around.filter((value) => !Number.isNaN(value))) ?? 0);
+      const around: number[] = [];
+      for (let i = -AROUND; i <= AROUND; i += 1)
+        around.push(...off[((tooth - 1 + i + 2 * teeth) % teeth) + 1]!);
+      return 3.5 * 1.4826 * (median(around) ?? 0);
     };
   }
 
@@ -270,7 +277,7 @@ export function irregularTeeth(wheel: FoundWheel, gaps: Value): Irregular {
 
 /**
  * Mean of the values when at least 80 % of them lie on one side (by `side`), at least two, and the mean is clear of
- * chance: five deviations of the mean away from `usual`. Else null.
+ * chance: six deviations of the mean away from `usual`. Else null.
  */
 function consistent(
   values: readonly number[],
@@ -290,7 +297,7 @@ function consistent(
   const middle = mean(values)!;
   // On the far side of a run-out a tooth has more noise than the others; two turns say little of their own.
   const own = spread(values)!.sd * (values.length < 4 ? 1.5 : 1);
-  return Math.abs(middle - usual) > (5 * Math.max(noise, own)) / Math.sqrt(values.length) ? middle : null;
+  return Math.abs(middle - usual) > (6 * Math.max(noise, own)) / Math.sqrt(values.length) ? middle : null;
 }
 
 /** Height over the speed at each tooth (a pick-up's voltage is in proportion to it); NaN where that is not known. */

@@ -1,5 +1,5 @@
 import { mapped } from '../../signal/mapped.ts';
-import { median } from '../../signal/statistics.ts';
+import { median, quantile } from '../../signal/statistics.ts';
 import { findGapPattern } from './gap-pattern.ts';
 import type { TwoLevels } from './two-levels.ts';
 
@@ -34,7 +34,7 @@ interface LongHolds {
   readonly count: number;
   /** Middle of how much longer than usual the long ones are. */
   readonly longest: number;
-  /** Middle of how much longer than usual the opposite level right after them is held. */
+  /** Middle of how much longer than usual, and than nearly all its like, the opposite level right after them is held. */
   readonly after: number;
 }
 
@@ -52,16 +52,22 @@ function longHolds(levels: TwoLevels, level: 0 | 1): LongHolds {
   };
   const ratios: number[] = [];
   const after: number[] = [];
+  const others: number[] = [];
   for (let k = 1; k + 1 < held.length; k += 1) {
     // From a rising edge on the signal is high.
     if (rising[k] !== level) continue;
     const ratio = overUsual(k);
-    if (ratio <= LONG) continue;
+    if (ratio <= LONG) {
+      others.push(overUsual(k + 1));
+      continue;
+    }
     ratios.push(ratio);
     // A pulse long because the shaft is slow there has a long one before the gap as well.
     after.push(Math.min(overUsual(k + 1), held[k + 1]! / held[k - 1]!));
   }
-  return { count: ratios.length, longest: median(ratios) ?? 0, after: median(after) ?? 1 };
+  // Where the speed swings, levels are as long elsewhere.
+  const usual = Math.max(1, quantile(others, 0.95) ?? 1);
+  return { count: ratios.length, longest: median(ratios) ?? 0, after: (median(after) ?? 1) / usual };
 }
 
 /** Width of the pulse that begins at each tooth event, over the middle of the intervals around it. */

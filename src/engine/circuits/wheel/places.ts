@@ -1,4 +1,5 @@
 import { runningQuantile } from '../../signal/running-quantile.ts';
+import { quantileSorted } from '../../signal/statistics.ts';
 
 /** A train of events laid on equal places: how many places each event lies after the one before. */
 export interface Placed {
@@ -12,9 +13,14 @@ export interface Placed {
   readonly cutBefore?: boolean;
   /** Standard deviation of the single intervals' ratios about 1. */
   readonly scatter: number;
+  /** How many times longer single periods are at the slowest than at the fastest, within about a turn: 1 or more. */
+  readonly swing: number;
 }
 
 const NEIGHBOURS = 8;
+/** About half a turn of most wheels, and so many periods are enough to tell by. */
+const ARM = 20;
+const MOST_SINGLES = 5000;
 /** Above this many periods an interval is no single one. */
 export const SINGLE_MOST = 1.45;
 
@@ -71,7 +77,20 @@ export function layOnPlaces(times: Float64Array): Placed {
     ratio,
     extras: placedExtras,
     scatter: singles > 0 ? Math.sqrt(squares / singles) : Infinity,
+    swing: swingOf(times, kept, ratio),
   };
+}
+
+/** 95 % over 5 % quantile of single periods, each over the middle of those around it. */
+function swingOf(times: Float64Array, kept: Int32Array, ratio: Float64Array): number {
+  const single: number[] = [];
+  for (let k = 0; k < ratio.length && single.length < MOST_SINGLES; k += 1) {
+    if (ratio[k]! < SINGLE_MOST && ratio[k]! > 0.62) single.push(times[kept[k + 1]!]! - times[kept[k]!]!);
+  }
+  const usual = runningQuantile(Float64Array.from(single), ARM, 0.5);
+  const relative = single.map((length, k) => length / usual[k]!).sort((a, b) => a - b);
+  if (relative.length < 8) return 1;
+  return quantileSorted(relative, 0.95) / quantileSorted(relative, 0.05);
 }
 
 function ratios(times: Float64Array, kept: Int32Array): Float64Array {

@@ -55,7 +55,7 @@ export function wheelFindings(
       instantSpeed(speeds),
       speedRipple(speeds, hasMark),
       irregular.value,
-      compressionBalance(speeds, context.cylinders),
+      compressionBalance(speeds, pattern, context.cylinders),
     ],
     notices: patternNotices(wheel, irregular.value),
     wheel: hasMark ? exportWheel(wheel, irregular.offDeg, context.index) : null,
