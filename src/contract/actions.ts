@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { id, text } from './areas/common.ts';
+import { email, id, text } from './areas/common.ts';
 import { webhookInput } from './areas/owner.ts';
 import {
   acceptInput,
@@ -12,7 +12,7 @@ import {
   withPassword,
 } from './areas/people.ts';
 import { answerInput, shareLinkInput } from './areas/sharing.ts';
-import { auditDays, confirmInput, email, signInInput, signUpInput } from './areas/workshop.ts';
+import { auditDays, confirmInput, signInInput, signUpInput } from './areas/workshop.ts';
 import type { EndpointId } from './endpoints.ts';
 import { ROLES, SCOPES } from './roles.ts';
 

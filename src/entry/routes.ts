@@ -11,6 +11,7 @@ import { photoImageEndpoint } from './endpoints/photo-image.ts';
 import { pictureEndpoint } from './endpoints/picture.ts';
 import { uploadsEndpoint } from './endpoints/uploads.ts';
 import { sharedWindowEndpoint, windowEndpoint } from './endpoints/window.ts';
+import { exportWorkshopEndpoint, importWorkshopEndpoint } from './endpoints/workshop-archive.ts';
 import type { FrontRequest } from './types.ts';
 
 export type FrontEndpoint = (request: FrontRequest) => Promise<void>;
@@ -33,6 +34,8 @@ const HANDLERS: Record<InFrontId, FrontEndpoint> = {
   'jobs.report': jobReportEndpoint,
   'photos.create': createPhotoEndpoint,
   'photos.image': photoImageEndpoint,
+  'workshop.export': exportWorkshopEndpoint,
+  'workshop.import': importWorkshopEndpoint,
   'uploads.options': uploadsEndpoint('uploads.options'),
   'uploads.create': uploadsEndpoint('uploads.create'),
   'uploads.head': uploadsEndpoint('uploads.head'),

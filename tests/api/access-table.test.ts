@@ -81,6 +81,8 @@ describe('the access table', () => {
       'secondStep.end',
       'workshop.end',
       'workshop.keep',
+      'workshop.export',
+      'workshop.import',
     ] as const)
       expect(ACCESS[ENDPOINTS[id].access].scope, id).toBe('none');
   });

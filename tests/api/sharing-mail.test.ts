@@ -42,3 +42,27 @@ it('an answer is not mailed to who has switched that off; it is kept all the sam
   });
   expect(answers.json.items).toHaveLength(2);
 });
+
+it('a question goes to a colleague by mail, in text and HTML, with the link that its answer comes back by', async () => {
+  await forgetRates();
+  const shop = await makeWorkshop();
+  const things = await makeThings(shop.id, shop.technician);
+  const to = `${things.capture}@people.example`;
+  const made = await send('POST', `/api/v1/captures/${things.capture}/share-links`, {
+    headers: shop.technician.browser,
+    body: { question: 'Tooth 23: chip & dirt?', email: to },
+  });
+  expect(made.status).toBe(201);
+  const [mail, ...more] = await mailsTo(to);
+  expect(more).toEqual([]);
+  expect(mail?.subject).toBe('Test technician asks you about Crank and cam');
+  expect(mail?.text).toContain('Tooth 23: chip & dirt?');
+  expect(mail?.html).toContain('Tooth 23: chip &amp; dirt?');
+  const link = /http\S+\/s\/([\w-]{43})/.exec(mail?.text ?? '');
+  expect(link?.[0]).toBe(made.json.url);
+  const body = { name: 'Kit', text: 'A chip.' };
+  const answered = await send('POST', `/api/v1/shared/${link?.[1]}/answers`, { headers: { origin }, body });
+  expect(answered.status).toBe(201);
+  const [back] = await mailsTo(shop.technician.email);
+  expect(back?.text).toContain('A chip.');
+});

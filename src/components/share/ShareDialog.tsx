@@ -17,6 +17,7 @@ export function ShareDialog({ capture, onClose }: { capture: CaptureJson; onClos
   const links = useSWR(`/captures/${capture.id}/share-links`, fetcher<{ items: ShareLinkJson[] }>);
   const answers = useSWR(`/captures/${capture.id}/answers`, fetcher<{ items: AnswerJson[] }>);
   const [made, setMade] = useState<{ id: string; url: string } | null>(null);
+  const [mailedTo, setMailedTo] = useState('');
   const [copied, setCopied] = useState(false);
   const [busy, setBusy] = useState(false);
   const [trouble, setTrouble] = useState<string | null>(null);
@@ -25,6 +26,7 @@ export function ShareDialog({ capture, onClose }: { capture: CaptureJson; onClos
     event.preventDefault();
     const form = new FormData(event.currentTarget);
     const days = Number(form.get('days'));
+    const email = String(form.get('email') ?? '').trim();
     setBusy(true);
     setTrouble(null);
     try {
@@ -33,10 +35,12 @@ export function ShareDialog({ capture, onClose }: { capture: CaptureJson; onClos
         body: {
           question: String(form.get('question') ?? ''),
           mayAnswer: form.get('mayAnswer') === 'on',
+          ...(email === '' ? {} : { email }),
           expiresAt: new Date(Date.now() + days * 86_400_000).toISOString(),
         },
       });
       setMade(data);
+      setMailedTo(email);
       setCopied(false);
       await links.mutate();
     } catch (thrown) {
@@ -82,6 +86,7 @@ export function ShareDialog({ capture, onClose }: { capture: CaptureJson; onClos
           verdict="good"
           live="status"
           title="The link is made"
+          {...(mailedTo === '' ? {} : { happened: `It is on its way to ${mailedTo}, with your question.` })}
           todo="Copy it now: the address is shown only this once."
           actions={
             <Button kind="main" onClick={copy}>
@@ -102,6 +107,12 @@ export function ShareDialog({ capture, onClose }: { capture: CaptureJson; onClos
         <form className="dialog-form" onSubmit={make}>
           <Field label="Your question" help="It stands under the trace. May stay empty.">
             <textarea className="box" name="question" rows={2} maxLength={1000} />
+          </Field>
+          <Field
+            label="Mail it to"
+            help="A colleague's address. May stay empty: then you send the link yourself."
+          >
+            <input className="box" type="email" name="email" maxLength={254} autoComplete="off" />
           </Field>
           <div className="dialog-row">
             <Field label="Ends after">

@@ -1,6 +1,9 @@
 import { z } from 'zod';
 
 export const id = z.string().regex(/^[a-z0-9]{16,40}$/);
+/** An address as it is kept: lower case. */
+export const email = z.string().trim().toLowerCase().max(254).email();
+
 export const isoTime = z.string().datetime();
 
 /** Seconds of the capture's own axis. */

@@ -87,4 +87,23 @@ export const ownerEndpoints = defineEndpoints({
     response: z.null(),
     successStatus: 204,
   },
+  'workshop.export': {
+    method: 'GET',
+    path: '/workshop/export',
+    summary: 'The whole workshop as a zip that another installation reads back.',
+    access: 'selfManage',
+    inFront: true,
+    response: { contentType: 'application/zip', description: 'The zip, streamed.' },
+  },
+  'workshop.import': {
+    method: 'POST',
+    path: '/workshops/import',
+    summary: 'Make a new workshop from such a zip, with new ids; its originals are measured again.',
+    access: 'selfSession',
+    bodyKind: 'multipart',
+    body: z.object({}),
+    inFront: true,
+    response: z.object({ id, name: z.string(), captures: z.number().int() }),
+    successStatus: 201,
+  },
 });

@@ -1,8 +1,8 @@
 import { z } from 'zod';
 import { defineEndpoints } from '../endpoint.ts';
 import { ROLES } from '../roles.ts';
-import { id, isoTime, listOf, pageQuery, text } from './common.ts';
-import { email, me, password } from './workshop.ts';
+import { email, id, isoTime, listOf, pageQuery, text } from './common.ts';
+import { me, password } from './workshop.ts';
 
 const role = z.enum(ROLES);
 const name = text(80).pipe(z.string().min(1));

@@ -1,13 +1,15 @@
 import { z } from 'zod';
 import { defineEndpoints } from '../endpoint.ts';
 import { capture, measurements, wheel, windowAnswer, windowQuery } from './captures.ts';
-import { id, isoTime, listOf, text } from './common.ts';
+import { email, id, isoTime, listOf, text } from './common.ts';
 import { mark, markInput } from './marks.ts';
 
 export const shareLinkInput = z.object({
   question: text(1_000).optional(),
   expiresAt: isoTime.optional(),
   mayAnswer: z.boolean().default(true),
+  /** A colleague to whom the question and the link go by mail. */
+  email: email.optional(),
 });
 
 export const shareLink = z.object({

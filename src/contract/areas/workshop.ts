@@ -1,10 +1,9 @@
 import { z } from 'zod';
 import { defineEndpoints } from '../endpoint.ts';
 import { ROLES, SCOPES } from '../roles.ts';
-import { id, isoTime, listOf, pageQuery, text } from './common.ts';
+import { email, id, isoTime, listOf, pageQuery, text } from './common.ts';
 
 const role = z.enum(ROLES);
-export const email = z.string().trim().toLowerCase().max(254).email();
 export const password = z.string().min(10, 'at least 10 characters').max(200);
 /** An IANA time zone name that this server knows. */
 export const timeZone = z

@@ -145,6 +145,12 @@ export const limitInvitations = async (workshopId: string): Promise<void> => {
   await take(invitations(), keyOf(workshopId));
 };
 
+const questions = once(() => shared('questions', 30, 3600));
+/** Thirty questions by mail an hour from one person. */
+export const limitQuestions = async (personId: string): Promise<void> => {
+  await take(questions(), keyOf(personId));
+};
+
 const answersOfAddress = once(() => shared('answer-address', 10, 600));
 const answersOfLink = once(() => shared('answer-link', 60, 3600));
 const looks = once(() => shared('seen', 6, 60));

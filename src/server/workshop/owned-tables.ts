@@ -1,9 +1,12 @@
-import type pg from 'pg';
-
 /** A table whose rows belong to a workshop, and the condition for those of workshop `$1`. */
 export interface OwnedTable {
   readonly name: string;
   readonly where: string;
+}
+
+/** A connection to the database, whoever's it is. */
+interface Queryable {
+  query(text: string): Promise<{ rows: unknown[] }>;
 }
 
 interface Reference {
@@ -22,8 +25,8 @@ const quoted = (name: string) => `"${name.replaceAll('"', '""')}"`;
  * Every table that belongs to workshops, directly or through what it hangs on, as the database's own foreign keys say; children
  * before parents, so that rows can be deleted in this order. A table added later is found by itself.
  */
-export async function ownedTables(client: pg.Pool | pg.PoolClient): Promise<OwnedTable[]> {
-  const { rows } = await client.query<Reference>(
+export async function ownedTables(client: Queryable): Promise<OwnedTable[]> {
+  const { rows } = await client.query(
     `select c.conrelid::regclass::text as child, a.attname as column, c.confrelid::regclass::text as parent,
         pa.attname as parent_column
        from pg_constraint c
@@ -32,7 +35,8 @@ export async function ownedTables(client: pg.Pool | pg.PoolClient): Promise<Owne
       where c.contype = 'f' and c.connamespace = 'public'::regnamespace and array_length(c.conkey, 1) = 1
       order by 1, 2`,
   );
-  const references = rows.map((row) => ({ ...row, child: row.child.replaceAll('"', '') }));
+  // The columns that the query names.
+  const references = (rows as Reference[]).map((row) => ({ ...row, child: row.child.replaceAll('"', '') }));
   const found = new Map<string, string>();
   for (const { child, column, parent } of references)
     if (parent === 'workshop' && !NOT_OWNED.has(child)) found.set(child, `${quoted(column)} = $1`);

@@ -3,10 +3,13 @@ import type { z } from 'zod';
 import type { shareLinkInput } from '../../../contract/areas/sharing.ts';
 import type { CaptureRecord, PersonCaller } from '../../access.ts';
 import { config } from '../../config.ts';
-import { db } from '../../db/client.ts';
 import { capture, shareLink } from '../../db/schema.ts';
 import { ApiError } from '../../errors.ts';
+import { limitQuestions } from '../../http/limits.ts';
 import { hashSecret, newId, newSecret } from '../../ids.ts';
+import { questionMail } from '../../mail/question-mail.ts';
+import { mailWorks, queueMail } from '../../mail/queue-mail.ts';
+import { inTransaction } from '../../queue/transaction.ts';
 import { auditedBy, recordAudit } from '../../workshop/audit.ts';
 
 const DAY_MS = 86_400_000;
@@ -36,7 +39,11 @@ export async function createLink(
   const expiresAt = linkEnd(input.expiresAt);
   const id = newId();
   const secret = newSecret();
-  await db().transaction(async (tx) => {
+  const url = `${config().origin}/s/${secret}`;
+  const { email } = input;
+  if (email !== undefined) await checkMail(caller);
+  await inTransaction(async (transaction) => {
+    const { tx } = transaction;
     await tx.select({ id: capture.id }).from(capture).where(eq(capture.id, row.id)).for('update');
     const [open] = await tx
       .select({ total: count() })
@@ -64,9 +71,32 @@ export async function createLink(
       expiresAt,
     });
     await recordAudit(
-      { ...auditedBy(caller, row.workshopId, address), action: 'link made', subject: row.title },
+      {
+        ...auditedBy(caller, row.workshopId, address),
+        action: email === undefined ? 'link made' : 'question mailed',
+        subject: row.title,
+      },
       tx,
     );
+    if (email === undefined) return;
+    const question = {
+      to: email,
+      from: caller.name,
+      title: row.title,
+      question: input.question ?? '',
+      url,
+      expiresAt,
+    };
+    await queueMail(transaction, questionMail({ ...question, mayAnswer: input.mayAnswer }));
   });
-  return { id, url: `${config().origin}/s/${secret}` };
+  return { id, url };
+}
+
+/** Mails to strangers in our name are limited, and promised only where they can be sent. */
+async function checkMail(caller: PersonCaller): Promise<void> {
+  if (!mailWorks())
+    throw new ApiError('conflict', {
+      message: 'This server sends no mail. Make the link without an address and send it yourself.',
+    });
+  await limitQuestions(caller.personId);
 }

@@ -1,7 +1,8 @@
 import { and, eq, isNull, sql } from 'drizzle-orm';
 import type { PersonCaller } from '../../access.ts';
+import { config } from '../../config.ts';
 import { db } from '../../db/client.ts';
-import { upload } from '../../db/schema.ts';
+import { capture, upload } from '../../db/schema.ts';
 import { ApiError } from '../../errors.ts';
 import { newId } from '../../ids.ts';
 
@@ -37,6 +38,7 @@ export async function beginUpload(
       retryAfterS: 60,
     });
   }
+  await refuseOverLimit(caller.workshopId, length);
   const id = newId();
   await db()
     .insert(upload)
@@ -48,4 +50,20 @@ export async function beginUpload(
       metadata: { ...metadata },
     });
   return id;
+}
+
+/** Where a limit is set: the originals that are kept and this one together. */
+async function refuseOverLimit(workshopId: string, length: number): Promise<void> {
+  const limit = config().workshopLimitBytes;
+  if (limit === null) return;
+  const [kept] = await db()
+    .select({ bytes: sql<number>`coalesce(sum(${capture.bytes}), 0)::float8` })
+    .from(capture)
+    .where(eq(capture.workshopId, workshopId));
+  if ((kept?.bytes ?? 0) + length <= limit) return;
+  throw new ApiError('too_large', {
+    message:
+      'The workshop has used up the room that is set for its originals. Nothing was kept of this upload.',
+    hint: 'Delete captures that are no longer needed (their room is free after 30 days), or ask whoever runs this server.',
+  });
 }
