@@ -27,6 +27,11 @@ const people = [...staff, 'learner'];
 export const pages = [
   { name: 'start', path: '/', lookers: ['nobody', ...people] },
   { name: 'sign-in', path: '/sign-in', lookers: ['nobody'] },
+  { name: 'code', path: '/sign-in/code', lookers: ['nobody'] },
+  { name: 'reset', path: '/reset', lookers: ['nobody'] },
+  { name: 'reset-new', path: '/reset/new', lookers: ['nobody'] },
+  { name: 'invitation', path: '/invitation', lookers: ['nobody'] },
+  { name: 'e-mail', path: '/e-mail', lookers: ['nobody'] },
   { name: 'sign-up', path: '/sign-up', lookers: ['nobody'] },
   { name: 'shared', path: '/s/{share}', lookers: ['nobody'] },
   { name: 'not-found', path: '/there-is-no-such-page', lookers: ['nobody', 'technician'] },
@@ -51,6 +56,8 @@ export const pages = [
   { name: 'exercise-edit', path: '/teaching/exercises/{exercise}/edit', lookers: ['instructor'] },
   { name: 'exercise-answers', path: '/teaching/exercises/{exercise}/answers', lookers: ['instructor'] },
   { name: 'workshop', path: '/workshop', lookers: people },
+  { name: 'own-sign-in', path: '/workshop/sign-in', lookers: people },
+  { name: 'owner', path: '/workshop/owner', lookers: ['owner'] },
 ];
 
 export const themes = /** @type {const} */ (['paper', 'dim']);
