@@ -137,7 +137,7 @@ export function MarkDialog({ capture, draft, onClose, onSaved, reload }: MarkDia
           />
         )}
         {trouble !== null && <Message verdict="bad" live="alert" title={trouble} />}
-        <Field label="What is seen here">
+        <Field label="What is seen here" help="Name a colleague with @ and they get a mail.">
           <textarea
             className="box"
             rows={3}

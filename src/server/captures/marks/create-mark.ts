@@ -2,10 +2,12 @@ import { and, count, eq, isNull } from 'drizzle-orm';
 import type { z } from 'zod';
 import type { markInput } from '../../../contract/areas/marks.ts';
 import type { MarkRecord } from '../../access.ts';
-import { db, type Executor } from '../../db/client.ts';
+import type { Executor } from '../../db/client.ts';
 import { capture, mark } from '../../db/schema.ts';
 import { ApiError } from '../../errors.ts';
 import { newId } from '../../ids.ts';
+import { inTransaction } from '../../queue/transaction.ts';
+import { mailMentions } from '../../workshop/mentions/mail-mentions.ts';
 import { checkSignal } from './check-signal.ts';
 
 /** More would hide the trace; it also bounds the list. */
@@ -18,12 +20,17 @@ interface Author {
   readonly answerId?: string;
 }
 
-/** Pins a mark to a capture. */
+/** Pins a person's mark to a capture, and tells those whom it names. */
 export const createMark = (
   captureId: string,
-  author: Author,
+  author: Author & { readonly personId: string },
   input: z.output<typeof markInput>,
-): Promise<MarkRecord> => db().transaction((tx) => addMark(tx, captureId, author, input));
+): Promise<MarkRecord> =>
+  inTransaction(async (transaction) => {
+    const made = await addMark(transaction.tx, captureId, author, input);
+    await mailMentions(transaction, { captureId, by: author, text: input.text });
+    return made;
+  });
 
 /** The same within a transaction. `path` leads to the mark in what was sent. */
 export async function addMark(

@@ -1,11 +1,12 @@
 import { and, eq, isNull, sql } from 'drizzle-orm';
 import { type MarkJson, markInput } from '../../../contract/areas/marks.ts';
-import type { MarkRecord } from '../../access.ts';
-import { db } from '../../db/client.ts';
+import type { MarkRecord, PersonCaller } from '../../access.ts';
 import { mark } from '../../db/schema.ts';
 import { ApiError } from '../../errors.ts';
 import { checkIfMatch } from '../../http/etag.ts';
 import { validate } from '../../http/validate.ts';
+import { inTransaction } from '../../queue/transaction.ts';
+import { mailMentions } from '../../workshop/mentions/mail-mentions.ts';
 import { checkSignal } from './check-signal.ts';
 import { markJson } from './mark-json.ts';
 
@@ -16,8 +17,10 @@ export async function patchMark(
   row: MarkRecord,
   patch: MarkPatch,
   ifMatch: string | undefined,
+  by: PersonCaller,
 ): Promise<MarkRecord> {
-  return db().transaction(async (tx) => {
+  return inTransaction(async (transaction) => {
+    const { tx } = transaction;
     const [now] = await tx
       .select()
       .from(mark)
@@ -42,6 +45,7 @@ export async function patchMark(
       .where(eq(mark.id, row.id))
       .returning();
     if (changed === undefined) throw new ApiError('not_found');
+    await mailMentions(transaction, { captureId: row.captureId, by, text: whole.text, before: now.text });
     return changed;
   });
 }
