@@ -1,6 +1,6 @@
 import { afterAll, expect, it } from 'vitest';
 import { mailsTo } from '../kit/caught-mail.ts';
-import { forgetRates, makeThings, makeWorkshop, origin, pool, send } from './security-kit.ts';
+import { forgetRates, makeThings, makeWorkshop, origin, pool, send, storeSamples } from './security-kit.ts';
 
 afterAll(() => pool.end());
 
@@ -43,10 +43,11 @@ it('an answer is not mailed to who has switched that off; it is kept all the sam
   expect(answers.json.items).toHaveLength(2);
 });
 
-it('a question goes to a colleague by mail, in text and HTML, with the link that its answer comes back by', async () => {
+it('a question goes to a colleague by mail, in text and HTML with a picture of the trace, and the link that its answer comes back by', async () => {
   await forgetRates();
   const shop = await makeWorkshop();
   const things = await makeThings(shop.id, shop.technician);
+  await storeSamples(things.capture);
   const to = `${things.capture}@people.example`;
   const made = await send('POST', `/api/v1/captures/${things.capture}/share-links`, {
     headers: shop.technician.browser,
@@ -58,6 +59,10 @@ it('a question goes to a colleague by mail, in text and HTML, with the link that
   expect(mail?.subject).toBe('Test technician asks you about Crank and cam');
   expect(mail?.text).toContain('Tooth 23: chip & dirt?');
   expect(mail?.html).toContain('Tooth 23: chip &amp; dirt?');
+  expect(mail?.text).toContain('[Picture: The trace "Crank and cam"]');
+  const picture = /src="data:image\/png;base64,([^"]+)"/.exec(mail?.html ?? '')?.[1] ?? '';
+  expect(Buffer.from(picture, 'base64').subarray(1, 4).toString('latin1')).toBe('PNG');
+  expect(Buffer.from(picture, 'base64').length).toBeGreaterThan(5_000);
   const link = /http\S+\/s\/([\w-]{43})/.exec(mail?.text ?? '');
   expect(link?.[0]).toBe(made.json.url);
   const body = { name: 'Kit', text: 'A chip.' };

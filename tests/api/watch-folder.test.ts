@@ -9,7 +9,7 @@ import { until } from './faults-kit.ts';
 import { makeToken, makeWorkshop, origin, pool } from './security-kit.ts';
 
 const folder = mkdtempSync(join(tmpdir(), 'gapmark-watch-'));
-const running: ReturnType<typeof watch>[] = [];
+const running: { readonly end: () => Promise<void> }[] = [];
 afterAll(async () => {
   for (const one of running) await one.end();
   rmSync(folder, { recursive: true, force: true });

@@ -21,6 +21,8 @@ export interface PictureQuery {
   readonly theme: PictureTheme;
   readonly format: 'svg' | 'png';
   readonly signals?: readonly number[] | undefined;
+  /** For somebody outside of the workshop: no file name, no people, and no marks that came through links. */
+  readonly shared?: boolean;
 }
 
 /** More lanes than this make no picture that could be read. */
@@ -75,18 +77,21 @@ export async function capturePicture(
     title: row.title || 'Capture',
     caption: [
       `${fixed(from, 4)} to ${fixed(to, 4)} s of ${fixed(durationS, 3)} s; ${count(row.samples)} samples a signal at ${rate}. Drawn: ${shown}.`,
-      `File ${row.fileName}, SHA-256 ${row.sha256.slice(0, 12)}…, recorded values with factor and offset applied. Drawn by Gapmark; it certifies nothing.`,
+      `${query.shared ? 'Recorded' : `File ${row.fileName}, SHA-256 ${row.sha256.slice(0, 12)}…, recorded`} values with factor and offset applied. Drawn by Gapmark; it certifies nothing.`,
     ],
     lanes: signals.map((signal) => ({ signal, ...strokeOf(signal.circuit, theme) })),
     window: decoded,
     holds: axis === 'holds',
     view: { from, to },
     wheel,
-    marks: marks.map(({ kind, fromS, toS, ...mark }) => ({
-      ...mark,
-      from: fromS,
-      to: kind === 'range' ? toS : null,
-    })),
+    marks: marks
+      .filter((mark) => !query.shared || mark.answerId === null)
+      .map(({ kind, fromS, toS, author, ...mark }) => ({
+        ...mark,
+        author: query.shared ? 'the workshop' : author,
+        from: fromS,
+        to: kind === 'range' ? toS : null,
+      })),
     width,
     theme,
     fontFace: face,

@@ -7,10 +7,12 @@ import { capture, shareLink } from '../../db/schema.ts';
 import { ApiError } from '../../errors.ts';
 import { limitQuestions } from '../../http/limits.ts';
 import { hashSecret, newId, newSecret } from '../../ids.ts';
+import { log } from '../../log.ts';
 import { questionMail } from '../../mail/question-mail.ts';
 import { mailWorks, queueMail } from '../../mail/queue-mail.ts';
 import { inTransaction } from '../../queue/transaction.ts';
 import { auditedBy, recordAudit } from '../../workshop/audit.ts';
+import { capturePicture } from '../picture/capture-picture.ts';
 
 const DAY_MS = 86_400_000;
 const DEFAULT_DAYS = 14;
@@ -42,6 +44,7 @@ export async function createLink(
   const url = `${config().origin}/s/${secret}`;
   const { email } = input;
   if (email !== undefined) await checkMail(caller);
+  const picture = email === undefined ? null : await pictureOf(row);
   await inTransaction(async (transaction) => {
     const { tx } = transaction;
     await tx.select({ id: capture.id }).from(capture).where(eq(capture.id, row.id)).for('update');
@@ -86,6 +89,7 @@ export async function createLink(
       question: input.question ?? '',
       url,
       expiresAt,
+      picture,
     };
     await queueMail(transaction, questionMail({ ...question, mayAnswer: input.mayAnswer }));
   });
@@ -99,4 +103,15 @@ async function checkMail(caller: PersonCaller): Promise<void> {
       message: 'This server sends no mail. Make the link without an address and send it yourself.',
     });
   await limitQuestions(caller.personId);
+}
+
+/** The trace as the link shows it. A question goes without one when there is nothing to draw, or it cannot be had now. */
+async function pictureOf(row: CaptureRecord): Promise<Buffer | null> {
+  try {
+    return (await capturePicture(row, { width: 640, theme: 'paper', format: 'png', shared: true })).body;
+  } catch (error) {
+    const code = error instanceof ApiError ? error.code : 'fault';
+    log.info({ capture: row.id, code }, 'a question goes without a picture');
+    return null;
+  }
 }
