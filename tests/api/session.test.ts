@@ -3,19 +3,23 @@ import { afterAll, beforeEach, describe, expect, it } from 'vitest';
 import { confirmationLink, mailsTo } from '../kit/caught-mail.ts';
 import {
   cookieHeaders,
-  forgetRates,
+  forgetRatesOf,
   join,
   makePerson,
   makeWorkshop,
   newId,
   origin,
   pool,
-  send,
+  type Sent,
+  send as sendFrom,
   sha256,
 } from './security-kit.ts';
 
 const PASSWORD = 'a quiet afternoon';
-beforeEach(forgetRates);
+const FROM = '127.0.0.6';
+beforeEach(() => forgetRatesOf(FROM));
+const send = (method: string, path: string, sent: Sent = {}) =>
+  sendFrom(method, path, { ...sent, from: FROM });
 afterAll(() => pool.end());
 
 /** Cheap parameters: what is tested here is not the strength of this hash. */

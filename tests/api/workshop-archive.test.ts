@@ -2,7 +2,7 @@ import { createHash } from 'node:crypto';
 import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join as joinPath } from 'node:path';
-import { afterAll, beforeAll, beforeEach, describe, expect, it, vi } from 'vitest';
+import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest';
 import { ZipFile } from 'yazl';
 import { openZip } from '../../src/server/backup/zip-reader.ts';
 import { openArchive } from '../../src/server/workshop/archive/read-archive.ts';
@@ -10,7 +10,6 @@ import { EXPORTED, LEFT_OUT } from '../../src/server/workshop/archive/tables.ts'
 import { ownedTables } from '../../src/server/workshop/owned-tables.ts';
 import { sampleCsv } from './capture-kit.ts';
 import {
-  forgetRates,
   makeThings,
   makeToken,
   makeWorkshop,
@@ -24,7 +23,6 @@ import {
 
 vi.setConfig({ testTimeout: 180_000 });
 const work = mkdtempSync(joinPath(tmpdir(), 'gapmark-archive-'));
-beforeEach(forgetRates);
 afterAll(async () => {
   rmSync(work, { recursive: true, force: true });
   await pool.end();
