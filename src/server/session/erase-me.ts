@@ -1,6 +1,6 @@
 import { eq, inArray, sql } from 'drizzle-orm';
 import type { PersonCaller } from '../access.ts';
-import { audit, mark, membership, person, session, token } from '../db/schema.ts';
+import { audit, jobEntry, jobPhoto, mark, membership, person, session, token } from '../db/schema.ts';
 import { newId } from '../ids.ts';
 import { inTransaction } from '../queue/transaction.ts';
 import { auditedBy, recordAudit } from '../workshop/audit.ts';
@@ -37,6 +37,8 @@ export async function eraseMe(
     await tx.delete(token).where(eq(token.personId, personId));
     await forgetSecondStep(tx, personId);
     await tx.update(mark).set({ author: name }).where(eq(mark.createdBy, personId));
+    await tx.update(jobEntry).set({ author: name }).where(eq(jobEntry.createdBy, personId));
+    await tx.update(jobPhoto).set({ author: name }).where(eq(jobPhoto.createdBy, personId));
     await tx.update(audit).set({ who: name, address: '' }).where(eq(audit.personId, personId));
     const [who] = await tx.select({ email: person.email }).from(person).where(eq(person.id, personId));
     const workshops = held.map((one) => one.workshopId);
