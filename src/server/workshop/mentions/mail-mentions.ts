@@ -1,4 +1,5 @@
-import { and, eq, ne } from 'drizzle-orm';
+import { and, eq, isNull, ne } from 'drizzle-orm';
+import type { Role } from '../../../contract/roles.ts';
 import { captureVisible } from '../../access.ts';
 import { config } from '../../config.ts';
 import { capture, membership, person } from '../../db/schema.ts';
@@ -25,17 +26,17 @@ export async function mailMentions(transaction: Transaction, mention: Mention): 
       name: person.name,
       email: person.email,
       mutedMail: person.mutedMail,
+      role: membership.role,
       title: capture.title,
     })
     .from(capture)
     .innerJoin(membership, eq(membership.workshopId, capture.workshopId))
     .innerJoin(person, eq(person.id, membership.personId))
-    .where(
-      and(eq(capture.id, captureId), ne(person.id, by.personId), captureVisible(person.id, membership.role)),
-    );
+    .where(and(eq(capture.id, captureId), ne(person.id, by.personId)));
   const told = new Set(mentionedIn(before, people));
   const named = new Set(mentionedIn(text, people).filter((id) => !told.has(id)));
-  for (const one of people.filter(({ id, mutedMail }) => named.has(id) && !mutedMail.includes('mentions')))
+  for (const one of people.filter(({ id, mutedMail }) => named.has(id) && !mutedMail.includes('mentions'))) {
+    if (!(await sees(transaction, captureId, one))) continue;
     await queueMail(transaction, {
       kind: 'mention',
       to: one.email,
@@ -47,4 +48,14 @@ export async function mailMentions(transaction: Transaction, mention: Mention): 
         { label: 'Which mails come is set here', link: `${config().origin}/workshop/sign-in` },
       ],
     });
+  }
+}
+
+async function sees(
+  { tx }: Transaction,
+  captureId: string,
+  { id, role }: { readonly id: string; readonly role: Role },
+): Promise<boolean> {
+  const seen = and(eq(capture.id, captureId), isNull(capture.deletedAt), captureVisible(id, role));
+  return (await tx.select({ id: capture.id }).from(capture).where(seen)).length > 0;
 }
