@@ -123,11 +123,11 @@ function completed(table: string, row: Row, workshopId: string): Row {
 
 const quoted = (name: string) => `"${name.replaceAll('"', '""')}"`;
 
-/** Inserts rows by the table's own columns; what a row has besides is left, what it lacks takes its default. */
+/** Inserts rows by the table's own columns, those that it computes left out; what a row has besides is left, what it lacks takes its default. */
 async function insertRows(queueDb: PgBoss.Db, table: string, rows: readonly Row[]): Promise<void> {
   if (!Object.hasOwn(EXPORTED, table)) throw new Error(`${table} is not for archives`);
   const { rows: known } = await queueDb.executeSql(
-    "select column_name as name from information_schema.columns where table_schema = 'public' and table_name = $1",
+    "select column_name as name from information_schema.columns where table_schema = 'public' and table_name = $1 and is_generated = 'NEVER'",
     [table],
   );
   const columns = new Set(known.map((column: { name: string }) => column.name));

@@ -45,6 +45,7 @@ export const LEFT_OUT: Readonly<Record<string, string>> = {
   audit: 'tells of people and addresses; it stays where it was written',
   upload: 'what has not arrived yet',
   job_photo: 'photos do not travel yet',
+  shape_edition: 'a counter of this installation',
   capture_signal: 'made again from the original',
   teaching_set_person: 'whom a set was set for: people are invited anew',
   measurement: 'made again from the original',
