@@ -36,3 +36,22 @@ it('a mark mails the colleagues whom it names, once, and nobody who may not see 
     expect(await subjects()).toEqual(expected);
   }
 });
+
+it('a job that is handed over is told to whom it goes, and to nobody who takes it themselves', async () => {
+  const shop = await makeWorkshop();
+  const headers = shop.technician.browser;
+  const made = await send('POST', '/api/v1/jobs', { headers, body: { complaint: 'Cranks, does not start' } });
+  expect(made.status, made.text).toBe(201);
+  const path = `/api/v1/jobs/${made.json.id}`;
+  const hand = (assigneeId: string) => send('PATCH', path, { headers, body: { assigneeId } });
+  expect((await hand(shop.instructor.id)).status).toBe(200);
+  const mails = await mailsTo(shop.instructor.email);
+  expect(mails.map(({ subject }) => subject)).toEqual(['Test technician hands J-0001 to you']);
+  expect(mails[0]?.text).toContain('Cranks, does not start');
+  expect((await hand(shop.technician.id)).status).toBe(200);
+  expect((await hand(shop.owner.id)).status).toBe(200);
+  expect(await mailsTo(shop.owner.email)).toHaveLength(1);
+  const caught = await fetch(new URL('messages.json', process.env.GAPMARK_TEST_MAIL));
+  const all = (await caught.json()) as { to: string[] }[];
+  expect(all.filter(({ to }) => to.includes(shop.technician.email))).toEqual([]);
+});

@@ -2,10 +2,12 @@ import { and, eq, sql } from 'drizzle-orm';
 import type { z } from 'zod';
 import type { jobPatch } from '../../contract/areas/jobs.ts';
 import type { JobRecord, PersonCaller } from '../access.ts';
-import { db, type Executor } from '../db/client.ts';
+import type { Executor } from '../db/client.ts';
 import { job, person } from '../db/schema.ts';
 import { ApiError } from '../errors.ts';
 import { checkIfMatch } from '../http/etag.ts';
+import { mailHandOver } from '../mail/hand-over-mail.ts';
+import { inTransaction } from '../queue/transaction.ts';
 import { auditedBy, recordAudit } from '../workshop/audit.ts';
 import { checkAssignee } from './check-assignee.ts';
 import { nameOf } from './create-job.ts';
@@ -24,7 +26,8 @@ export async function patchJob(
   ifMatch: string | undefined,
   address: string,
 ): Promise<JobRecord> {
-  return db().transaction(async (tx) => {
+  return inTransaction(async (transaction) => {
+    const { tx } = transaction;
     const [now] = await tx.select().from(job).where(eq(job.id, row.id)).for('update');
     if (now === undefined || now.deletedAt !== null) throw new ApiError('not_found');
     checkIfMatch(ifMatch, now.edition);
@@ -58,6 +61,10 @@ export async function patchJob(
       .returning();
     if (changed === undefined) throw new ApiError('stale');
     for (const text of events) await noteEvent(tx, now.id, caller, text);
+    if (changed.assigneeId !== null && changed.assigneeId !== now.assigneeId) {
+      const { assigneeId: to, complaint } = changed;
+      await mailHandOver(transaction, { jobId: now.id, job: nameOf(now), complaint, to, by: caller });
+    }
     if (closes || reopens) {
       const action = closes ? 'job closed' : 'job opened again';
       await recordAudit({ ...auditedBy(caller, now.workshopId, address), action, subject: nameOf(now) }, tx);
