@@ -1,7 +1,7 @@
 import { connectionPool } from '../db/client.ts';
 import { log } from '../log.ts';
 import { deleteObjects } from '../storage/delete-objects.ts';
-import { capturePrefix, knownGoodPrefix } from '../storage/keys.ts';
+import { capturePrefix, knownGoodPrefix, photoKey, smallPhotoKey } from '../storage/keys.ts';
 import { listKeys } from '../storage/list-keys.ts';
 import { ownedTables } from './owned-tables.ts';
 
@@ -15,6 +15,11 @@ export async function removeWorkshop(workshopId: string): Promise<void> {
     (await pool.query<{ id: string }>(`select id from ${table} where workshop_id = $1`, [workshopId])).rows;
   for (const { id } of await idsOf('capture')) await deleteObjects(await listKeys(capturePrefix(id)));
   for (const { id } of await idsOf('known_good')) await deleteObjects(await listKeys(knownGoodPrefix(id)));
+  const { rows: photos } = await pool.query<{ id: string }>(
+    'select p.id from job_photo p join job j on j.id = p.job_id where j.workshop_id = $1',
+    [workshopId],
+  );
+  await deleteObjects(photos.flatMap(({ id }) => [photoKey(id), smallPhotoKey(id)]));
   const client = await pool.connect();
   try {
     await client.query('begin');

@@ -5,6 +5,8 @@
 export const EXPORTED: Readonly<Record<string, { readonly without: readonly string[] }>> = {
   job: { without: ['search'] },
   job_entry: { without: [] },
+  job_check: { without: [] },
+  job_overrule: { without: [] },
   /** Read and measured anew from the original. */
   capture: {
     without: [
