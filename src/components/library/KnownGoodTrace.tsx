@@ -1,4 +1,3 @@
-import '../capture/capture.css';
 import './library.css';
 import { useState } from 'react';
 import useSWR from 'swr';
