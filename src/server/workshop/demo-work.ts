@@ -2,6 +2,7 @@ import { join } from 'node:path';
 import { z } from 'zod';
 import { measurements, wheel } from '../../contract/areas/captures.ts';
 import type { DemoClient } from './demo-client.ts';
+import { demoJobs } from './demo-jobs.ts';
 import { demoTeaching } from './demo-teaching.ts';
 
 interface DemoWork {
@@ -61,6 +62,7 @@ export async function demoWork({ technician, instructor, samples, folder }: Demo
   const weak = ids.get('crank-60-2-weak-tooth.csv');
   if (weak !== undefined) await markWeakTooth(technician, weak);
   await demoTeaching(instructor, ids);
+  await demoJobs(technician, ids);
 }
 
 async function keep(technician: DemoClient, captureId: string, condition: string): Promise<string> {
