@@ -1,9 +1,10 @@
-import { type ReactNode, useRef, useState } from 'react';
+import { useRef, useState } from 'react';
 import type { JobJson, PhotoJson, TimelineItemJson } from '../../contract/areas/jobs.ts';
 import { api, sentenceOf } from '../base/api.ts';
 import { Button, buttonClass } from '../base/Button.tsx';
 import { Message } from '../base/Message.tsx';
 import { UndoBar } from '../base/UndoBar.tsx';
+import { PathOfChecks } from '../path/PathOfChecks.tsx';
 import { UploadRow } from '../upload/UploadRow.tsx';
 import { useUploads } from '../upload/useUploads.ts';
 import { CaptionDialog } from './CaptionDialog.tsx';
@@ -28,8 +29,6 @@ interface JobPageProps {
   personId: string;
   timeZone: string;
   mayDelete: boolean;
-  /** The path of checks. */
-  children?: ReactNode;
 }
 
 type Open =
@@ -45,7 +44,6 @@ export function JobPage({
   personId,
   timeZone,
   mayDelete,
-  children,
 }: JobPageProps) {
   const { job, items, put, reload } = useJob(first, firstItems);
   const [open, setOpen] = useState<Open>(null);
@@ -132,7 +130,7 @@ export function JobPage({
       />
       <div className="grid grow content-start panel:grid-cols-[minmax(0,1fr)_348px] panel:content-stretch">
         <div className="min-w-0">
-          {children}
+          <PathOfChecks jobId={job.id} />
           <section aria-labelledby="timeline">
             <div className="panel-head border-b border-line bg-ground">
               <h2 id="timeline">What happened, in order</h2>

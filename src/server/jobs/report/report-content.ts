@@ -5,9 +5,11 @@ import { captureMeasurements } from '../../captures/capture-measurements.ts';
 import { db } from '../../db/client.ts';
 import { capture, comparison, jobEntry, person, workshop } from '../../db/schema.ts';
 import { nameOf } from '../create-job.ts';
+import { nextOfJob } from '../path/next-of-job.ts';
 import { listPhotos } from '../photos/list-photos.ts';
 import type { Block, Report, Section } from './blocks.ts';
 import { CAUTIONS, DISCLAIMER } from './cautions.ts';
+import { checksSection } from './checks-section.ts';
 import { traceFigure } from './trace-figure.ts';
 import { whenText } from './when.ts';
 
@@ -18,7 +20,7 @@ const MOST = { figures: 3, photos: { customer: 4, colleague: 8 }, values: 14, co
 
 /** A job as a report: complaint, vehicle, what was read and seen in order, cause and proof, cautions. */
 export async function reportContent(row: JobRecord, reader: Reader): Promise<Report> {
-  const [[shop], entries, photos, captures, names] = await Promise.all([
+  const [[shop], entries, photos, captures, names, path] = await Promise.all([
     db().select().from(workshop).where(eq(workshop.id, row.workshopId)),
     db()
       .select()
@@ -33,6 +35,7 @@ export async function reportContent(row: JobRecord, reader: Reader): Promise<Rep
       .orderBy(asc(capture.createdAt), asc(capture.id))
       .limit(50),
     nameOfPeople([row.assigneeId, row.closedBy, row.createdBy]),
+    nextOfJob(row),
   ]);
   const timeZone = shop?.timeZone ?? 'Etc/UTC';
   const when = (at: Date) => whenText(at, timeZone);
@@ -47,6 +50,7 @@ export async function reportContent(row: JobRecord, reader: Reader): Promise<Rep
   const shownPhotos = photos.slice(0, MOST.photos[reader]);
   const sections: (Section | null)[] = [
     outcomeSection(row, names, colleague),
+    checksSection(path, colleague, when),
     readings.length === 0
       ? null
       : {
@@ -109,7 +113,10 @@ export async function reportContent(row: JobRecord, reader: Reader): Promise<Rep
     ],
     ['Plate', row.plate],
     ['VIN', row.vin],
-    ['Trouble codes', row.codes.join(', ')],
+    [
+      'Trouble codes',
+      path.codes.map(({ code, title }) => (title === null ? code : `${code} ${title}`)).join('; '),
+    ],
     ['In', when(row.createdAt)],
     ['Closed', row.closedAt === null ? 'still open' : when(row.closedAt)],
     ['Technician', names.get(row.assigneeId ?? '') ?? ''],
@@ -126,6 +133,7 @@ export async function reportContent(row: JobRecord, reader: Reader): Promise<Rep
       ...entries.map((entry) => entry.updatedAt),
       ...photos.map((photo) => photo.createdAt),
       ...captures.map((each) => each.updatedAt),
+      ...path.steps.flatMap(({ record }) => (record === null ? [] : [new Date(record.at)])),
     ]),
   };
 }
