@@ -39,7 +39,7 @@ test('openInstance() keeps id and secrets, for this user only', async () => {
   await second.stop();
   expect(second.id).toBe(first.id);
   expect(second.secrets).toEqual(first.secrets);
-  expect(new Set(Object.values(first.secrets)).size).toBe(4);
+  expect(new Set(Object.values(first.secrets)).size).toBe(5);
   for (const name of ['instance', 'secrets.json'])
     expect(statSync(join(dataDir, name)).mode & 0o777).toBe(0o600);
 });

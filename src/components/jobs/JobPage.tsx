@@ -130,7 +130,7 @@ export function JobPage({
       />
       <div className="grid grow content-start panel:grid-cols-[minmax(0,1fr)_348px] panel:content-stretch">
         <div className="min-w-0">
-          <PathOfChecks jobId={job.id} />
+          <PathOfChecks jobId={job.id} closed={job.state === 'closed'} />
           <section aria-labelledby="timeline">
             <div className="panel-head border-b border-line bg-ground">
               <h2 id="timeline">What happened, in order</h2>

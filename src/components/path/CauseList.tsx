@@ -11,6 +11,9 @@ interface CauseListProps {
   onChange: (next: NextJson) => void;
 }
 
+/** Beyond these the list is folded; the heaviest come first. */
+const SHOWN = 6;
+
 /** The causes, each with its state in a word and a shape, why, and a way for a person to say otherwise. */
 export function CauseList({ jobId, causes, onChange }: CauseListProps) {
   const open = causes.filter(({ state }) => state !== 'ruled out');
@@ -27,7 +30,13 @@ export function CauseList({ jobId, causes, onChange }: CauseListProps) {
       <h2 id="path-causes">
         Causes <small>{open.length} open</small>
       </h2>
-      {rows(open)}
+      {rows(open.slice(0, SHOWN))}
+      {open.length > SHOWN && (
+        <details>
+          <summary>{open.length - SHOWN} more, less weighty</summary>
+          {rows(open.slice(SHOWN))}
+        </details>
+      )}
       {out.length > 0 && (
         <details>
           <summary>Ruled out: {out.length}</summary>

@@ -8,7 +8,7 @@ interface NextChecksProps {
   onOpen: (check: string) => void;
 }
 
-const SHOWN = 5;
+const SHOWN = 3;
 const RISKS = ['no risk', 'some risk', 'raised risk', 'high risk'];
 
 /** The checks left, best first: why, what it settles, cost, and its cautions beside it. */
@@ -27,29 +27,13 @@ export function NextChecks({ next, onOpen }: NextChecksProps) {
             <dl>
               <dt>Why</dt>
               <dd>{one.why}</dd>
-              <dt>Settles</dt>
-              <dd>
-                {one.settles
-                  .filter(
-                    ({ rulesOut, pointsAt, shows }) => rulesOut.length + pointsAt.length + shows.length > 0,
-                  )
-                  .map(({ finding, says, rulesOut, pointsAt, shows }) => (
-                    <span key={finding} className="path-settles">
-                      {says}:{' '}
-                      {shows.length > 0
-                        ? `shows ${shows.slice(0, 2).join('; ')}`
-                        : rulesOut.length > 0
-                          ? `rules out ${rulesOut.length}`
-                          : `points at ${pointsAt.slice(0, 2).join('; ')}`}
-                    </span>
-                  ))}
-              </dd>
               <dt>Cost</dt>
               <dd>
                 {one.minutes} min, {RISKS[one.risk]}
                 {one.needs.length > 0 && `, ${one.needs.join(', ')}`}
               </dd>
             </dl>
+            <Settles settles={one.settles} />
             {one.cautions.length > 0 && (
               <ul className="path-cautions">
                 {one.cautions.map((caution) => (
@@ -67,7 +51,7 @@ export function NextChecks({ next, onOpen }: NextChecksProps) {
       </ol>
       {next.checks.length > SHOWN && (
         <Button kind="quiet" onClick={() => setAll(!all)}>
-          {all ? 'Show the first five' : `Show all ${next.checks.length}`}
+          {all ? 'Show the first three' : `Show all ${next.checks.length}`}
         </Button>
       )}
       {next.held.length > 0 && (
@@ -83,5 +67,30 @@ export function NextChecks({ next, onOpen }: NextChecksProps) {
         </details>
       )}
     </section>
+  );
+}
+
+/** What each finding would do, folded away: the why above says how much it settles. */
+function Settles({ settles }: { settles: NextJson['checks'][number]['settles'] }) {
+  const telling = settles.filter(
+    ({ rulesOut, pointsAt, shows }) => rulesOut.length + pointsAt.length + shows.length > 0,
+  );
+  if (telling.length === 0) return null;
+  return (
+    <details>
+      <summary>What it would settle</summary>
+      <ul className="path-settles">
+        {telling.map(({ finding, says, rulesOut, pointsAt, shows }) => (
+          <li key={finding}>
+            {says}:{' '}
+            {shows.length > 0
+              ? `shows ${shows.slice(0, 2).join('; ')}`
+              : rulesOut.length > 0
+                ? `rules out ${rulesOut.length}`
+                : `points at ${pointsAt.slice(0, 2).join('; ')}`}
+          </li>
+        ))}
+      </ul>
+    </details>
   );
 }

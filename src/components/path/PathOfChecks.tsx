@@ -20,7 +20,7 @@ const COMPLAINT: Readonly<Record<NextJson['complaint'], string>> = {
 };
 
 /** The path of eliminations of a job, with what to check next and why. */
-export function PathOfChecks({ jobId }: { jobId: string }) {
+export function PathOfChecks({ jobId, closed }: { jobId: string; closed: boolean }) {
   const path = useSWR<NextJson, unknown>(`/jobs/${jobId}/next`, fetcher);
   const checks = useSWR<{ items: CheckJson[] }, unknown>('/checks', fetcher, { revalidateOnFocus: false });
   const [open, setOpen] = useState<string | null>(null);
@@ -51,6 +51,16 @@ export function PathOfChecks({ jobId }: { jobId: string }) {
     );
   }
   const shown = next.causes.filter(({ state }) => state === 'shown');
+  const left = (
+    <>
+      <NextChecks next={next} onOpen={setOpen} />
+      <CauseList
+        jobId={jobId}
+        causes={next.causes}
+        onChange={(data) => void refresh(data, { revalidate: false })}
+      />
+    </>
+  );
   return (
     <div className="path">
       {open !== null && chosen !== undefined && present.data !== undefined && !present.isLoading ? (
@@ -105,12 +115,14 @@ export function PathOfChecks({ jobId }: { jobId: string }) {
         </section>
       )}
       <div className="path-side">
-        <NextChecks next={next} onOpen={setOpen} />
-        <CauseList
-          jobId={jobId}
-          causes={next.causes}
-          onChange={(data) => void refresh(data, { revalidate: false })}
-        />
+        {closed ? (
+          <details>
+            <summary>The job is closed. What was left to check</summary>
+            {left}
+          </details>
+        ) : (
+          left
+        )}
         <p className="path-foot">
           It weighs what was recorded by common practice and certifies nothing. The maker’s service
           information, local rules and a qualified technician’s judgement come first.

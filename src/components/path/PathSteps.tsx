@@ -2,6 +2,9 @@ import type { NextJson } from '../../contract/areas/path.ts';
 import { Verdict, VerdictShape } from '../base/Verdict.tsx';
 import { SHAPE } from './result-shape.ts';
 
+/** The capture and signal of "title, signal: key"; the reading is named already. */
+const titleOf = (from: string) => from.replace(/: [a-z_]+$/, '');
+
 interface PathStepsProps {
   steps: NextJson['steps'];
   onOpen: (check: string) => void;
@@ -37,7 +40,7 @@ export function PathSteps({ steps, onOpen }: PathStepsProps) {
               {step.measured.map((one) => (
                 <div key={`${one.captureId} ${one.reading} ${one.from}`}>
                   <dt>
-                    {one.what}, <a href={`/captures/${one.captureId}`}>{one.from}</a>
+                    {one.what}, <a href={`/captures/${one.captureId}`}>{titleOf(one.from)}</a>
                   </dt>
                   <dd>
                     <b>{Number(one.value.toPrecision(4))}</b> {one.unit === '1' ? '' : one.unit}
