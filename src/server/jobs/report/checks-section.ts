@@ -56,7 +56,8 @@ function readingsOf(step: Step): string {
     lineOf(step.check, what, value, unit),
   );
   const measured = step.measured.map(
-    ({ what, value, unit, from }) => `${lineOf(step.check, what, value, unit)} (measured: ${from})`,
+    ({ what, value, unit, from }) =>
+      `${lineOf(step.check, what, value, unit)} (measured: ${from.replace(/: [a-z_]+$/, '')})`,
   );
   return [...typed, ...measured, step.record?.note ?? ''].filter((line) => line !== '').join('; ');
 }

@@ -11,7 +11,7 @@ h2{font-size:1.1rem;margin:1.75rem 0 .5rem;padding-bottom:.25rem;border-bottom:1
 p{margin:.5rem 0;white-space:pre-line}.kicker,.soft,figcaption{color:#59616a;font-size:.875rem}
 .strong{font-size:1.15rem;font-weight:600}
 table{width:100%;border-collapse:collapse;margin:.5rem 0;font-size:.9rem}
-th,td{padding:.35rem .75rem .35rem 0;border-bottom:1px solid #dad4c6;text-align:left;vertical-align:top;overflow-wrap:anywhere}
+th,td{padding:.35rem .75rem .35rem 0;border-bottom:1px solid #dad4c6;text-align:left;vertical-align:top;overflow-wrap:anywhere;min-width:4.4rem}
 thead th{color:#59616a;font-weight:400}tbody th{font-weight:500}.n{text-align:right;font-variant-numeric:tabular-nums}
 .facts th{width:9rem;color:#59616a;font-weight:400}
 figure{margin:1rem 0}svg,img{display:block;max-width:100%;height:auto;border:1px solid #dad4c6}img{max-height:24rem;width:auto}
