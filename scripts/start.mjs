@@ -35,7 +35,7 @@ async function main() {
     say(`Demo token: ${copy.newToken}`);
     forgetToken(copy);
   }
-  void fillLibrary(copy);
+  if (process.env.GAPMARK_STARTING_LIBRARY !== 'off') void fillLibrary(copy);
 }
 
 /**

@@ -88,9 +88,12 @@ describe('the access table', () => {
   });
 
   it('needs more than the scope read for everything that changes something', () => {
+    /** A POST that only asks: its question is too long for an address. */
+    const asks = ['captures.nearest'];
     for (const [id, row] of Object.entries(ENDPOINTS)) {
       const access = ACCESS[row.access];
       if (row.method === 'GET' || row.method === 'HEAD' || access.nobody || access.share !== 'no') continue;
+      if (asks.includes(id)) continue;
       expect(access.scope, id).not.toBe('read');
     }
   });

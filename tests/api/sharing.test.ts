@@ -66,8 +66,9 @@ describe('making a link', () => {
 
 describe('what a link shows', () => {
   it('is a listed projection: no workshop, file name, people, e-mail, job or ids of them', async () => {
-    await pool.query("update capture set note = 'private note', job_id = 'privatejob' where id = $1", [
+    await pool.query("update capture set note = 'private note', job_id = $2 where id = $1", [
       things.capture,
+      things.job,
     ]);
     const answer = await shared(things.answerSecret);
     expect(answer.status).toBe(200);
@@ -88,7 +89,14 @@ describe('what a link shows', () => {
         'title',
       ].sort(),
     );
-    for (const secret of ['private', '@people.example', here.id, here.technician.id, things.capture])
+    for (const secret of [
+      'private',
+      '@people.example',
+      things.job,
+      here.id,
+      here.technician.id,
+      things.capture,
+    ])
       expect(answer.text, secret).not.toContain(secret);
   });
 
