@@ -17,7 +17,7 @@ function manualChunks(id) {
   )
     return 'base';
   if (
-    /node_modules\/uplot\/|(engine\/drawing|components\/plot)\/(?!Keys|SpanFigures|snap|OverlayPlot|overlay-canvas|plain-degree)/.test(
+    /node_modules\/uplot\/|(engine\/drawing|components\/plot)\/(?!Keys|SpanFigures|snap|OverlayPlot|overlay-canvas|plain-degree)|components\/capture\/(steps-of|usePlotModel|view-of|where-of|number-rows|number-text|labels)\./.test(
       id,
     )
   )

@@ -24,7 +24,7 @@ const ODD: readonly (readonly [what: string, text: string, lanes: number])[] = [
       500,
       (i) =>
         Array.from({ length: 10 }, (_, k) =>
-          k === 4 ? '' : (Math.sin(i / (k + 3)) * (k + 1)).toFixed(3),
+          k === 4 ? 'OL' : (Math.sin(i / (k + 3)) * (k + 1)).toFixed(3),
         ).join(),
       `Time (s),${Array.from({ length: 10 }, (_, k) => `S${k} (V)`).join()}`,
     ),
@@ -67,7 +67,9 @@ describe('an address that asks for too much', () => {
   });
 
   it('a capture that is deleted while it is open: what is there stays, and the page says so', async () => {
-    const bench = await measured(ODD[0]![1], 'Soon gone', desk);
+    // Long enough that a closer look asks for samples again.
+    const long = rows(60_000, (i) => Math.sin(i / 5).toFixed(3), 'Time (s),S (V)');
+    const bench = await measured(long, 'Soon gone', desk);
     const { page, close } = await open(browser, DESK);
     await enterAs(page, bench.desk.workshop, 'technician');
     await page.goto(`/captures/${bench.id}`);
