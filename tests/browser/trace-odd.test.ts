@@ -1,9 +1,8 @@
 import type { Browser } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { type Desk, makeDesk } from '../api/capture-kit.ts';
-import { send } from '../api/security-kit.ts';
-import { DESK, enterAs, expectNoSidewaysScroll, launch, open, PHONE } from './browser-kit.ts';
-import { drawn, measured, openTrace, shownView } from './trace-kit.ts';
+import { DESK, expectNoSidewaysScroll, launch, open, PHONE } from './browser-kit.ts';
+import { measured, openTrace, shownView } from './trace-kit.ts';
 
 let browser: Browser;
 let desk: Desk;
@@ -63,28 +62,6 @@ describe('an address that asks for too much', () => {
     expect(from).toBeGreaterThanOrEqual(0);
     expect(to).toBeLessThanOrEqual(0.5);
     expect(complaints).toEqual([]);
-    await close();
-  });
-
-  it('a capture that is deleted while it is open: what is there stays, and the page says so', async () => {
-    // Long enough that a closer look asks for samples again.
-    const long = rows(60_000, (i) => Math.sin(i / 5).toFixed(3), 'Time (s),S (V)');
-    const bench = await measured(long, 'Soon gone', desk);
-    const { page, close } = await open(browser, DESK);
-    await enterAs(page, bench.desk.workshop, 'technician');
-    await page.goto(`/captures/${bench.id}`);
-    await drawn(page);
-    const path = `/api/v1/captures/${bench.id}`;
-    const { headers } = await send('GET', path, { headers: desk.headers });
-    const owner = bench.desk.workshop.owner.browser;
-    const gone = await send('DELETE', path, { headers: { ...owner, 'if-match': String(headers.etag) } });
-    expect(gone.status).toBe(204);
-    await page.getByRole('application').focus();
-    for (let i = 0; i < 12; i += 1) await page.keyboard.press('+');
-    await page
-      .getByText(/not here|not there|does not exist|is gone/i)
-      .first()
-      .waitFor();
     await close();
   });
 });
