@@ -26,9 +26,10 @@ let deadline = Date.now() + WHOLE_RUN_MS;
 const named = process.argv.slice(2).map((path) => path.replace(/^\.\//, ''));
 const wholeRun = named.length === 0;
 
-/** @param {string} folder what is named below it */
-const namedIn = (folder) => named.filter((path) => path.startsWith(folder));
-const outsideServer = named.filter((path) => !/^tests\/(api|browser)\b/.test(path));
+/** The scripts' own tests start copies and go with the API's. */
+const withApi = /^(tests\/api\b|scripts\/[^/]+\.test\.ts)/;
+const inBrowser = /^tests\/browser\b/;
+const outsideServer = named.filter((path) => !withApi.test(path) && !inBrowser.test(path));
 
 /** @type {Counts} */
 const total = { passed: 0, failed: 0, skipped: [] };
@@ -136,11 +137,11 @@ async function testAgainstCopy() {
     env = copy.env;
   });
   if (env.GAPMARK_TEST_ORIGIN !== undefined) {
-    for (const [title, folder, config, share] of /** @type {const} */ ([
-      ['API tests', 'tests/api', 'vitest.api.config.ts', 6],
-      ['Browser tests', 'tests/browser', 'vitest.browser.config.ts', 7],
+    for (const [title, folder, belongs, config, share] of /** @type {const} */ ([
+      ['API tests', 'tests/api', withApi, 'vitest.api.config.ts', 6],
+      ['Browser tests', 'tests/browser', inBrowser, 'vitest.browser.config.ts', 7],
     ])) {
-      const files = namedIn(folder);
+      const files = named.filter((path) => belongs.test(path));
       if (!(wholeRun ? hasTests(folder) : files.length > 0)) continue;
       await stage(title, () => vitest(config, { limitMs: minutes(share), files, env }));
     }
