@@ -47,7 +47,7 @@ export const BLIND_CASES: readonly TradeCase[] = [
     },
   },
   {
-    name: 'Ostrava Lumen 2.0, 2013, 4 cylinders',
+    name: 'Ostrell Lumen 2.0, 2013, 4 cylinders',
     complaint: 'cranks fast, smooth whirring, will not start; stopped while driving',
     // As written: timing belt broken, no compression in any cylinder
     cause: 'timing-broken',
@@ -192,7 +192,7 @@ export const BLIND_CASES: readonly TradeCase[] = [
     },
   },
   {
-    name: 'Ostrava Lumen 2.0, 2014, 4 cylinders',
+    name: 'Ostrell Lumen 2.0, 2014, 4 cylinders',
     complaint: 'started badly after belt work, now does not start, pops in the intake',
     // As written: timing belt slipped by one tooth or more (cam out of step)
     cause: 'timing-slipped',
@@ -426,7 +426,7 @@ export const BLIND_CASES: readonly TradeCase[] = [
     },
   },
   {
-    name: 'Ostrava Lumen 2.0, 2010, 4 cylinders',
+    name: 'Ostrell Lumen 2.0, 2010, 4 cylinders',
     complaint: 'cranks, no spark and no injection after a repair at the engine harness',
     // As written: main relay does not feed the control unit
     cause: 'main-relay',
@@ -656,7 +656,7 @@ export const BLIND_CASES: readonly TradeCase[] = [
     },
   },
   {
-    name: 'Ostrava Lumen 2.0, 2012, 4 cylinders',
+    name: 'Ostrell Lumen 2.0, 2012, 4 cylinders',
     complaint: 'cranks, no start; three-wire crank sensor',
     // As written: three-wire crank sensor has no supply (broken reference wire)
     cause: 'crank-wiring',
