@@ -1,19 +1,14 @@
 import './build.css';
-import { type ReactNode, useState } from 'react';
+import { useState } from 'react';
 import type { SetItemInput, SetItemJson, SetJson } from '../../contract/areas/teaching.ts';
 import { ApiFailure, api, sentenceOf } from '../base/api.ts';
 import { Button } from '../base/Button.tsx';
 import { Dialog } from '../base/Dialog.tsx';
 import { Field } from '../base/Field.tsx';
-import { Icon } from '../base/Icon.tsx';
 import { Message } from '../base/Message.tsx';
 import { Segmented } from '../base/Segmented.tsx';
 import { UndoBar } from '../base/UndoBar.tsx';
-
-interface Named {
-  readonly id: string;
-  readonly title: string;
-}
+import { type Draft, type Named, SetEditorItem } from './SetEditorItem.tsx';
 
 interface SetEditorProps {
   /** Null: a new one. */
@@ -21,16 +16,6 @@ interface SetEditorProps {
   learners: readonly { readonly id: string; readonly name: string }[];
   exercises: readonly Named[];
   captures: readonly Named[];
-}
-
-/** An item while it is being edited; `key` holds it in place in the list. */
-interface Draft {
-  readonly key: string;
-  readonly id?: string;
-  readonly kind: SetItemJson['kind'];
-  readonly text: string;
-  readonly afterCommit: boolean;
-  readonly thing: Named | null;
 }
 
 const draftOf = (item: SetItemJson): Draft => ({
@@ -146,7 +131,7 @@ export function SetEditor({ set, learners, exercises, captures }: SetEditorProps
         <h2 id="set-items">In this set</h2>
         <ol className="build-list">
           {items.map((item, at) => (
-            <Item
+            <SetEditorItem
               key={item.key}
               item={item}
               number={at + 1}
@@ -296,84 +281,6 @@ export function SetEditor({ set, learners, exercises, captures }: SetEditorProps
         />
       )}
     </div>
-  );
-}
-
-interface ItemProps {
-  item: Draft;
-  number: number;
-  first: boolean;
-  last: boolean;
-  onChange: (over: Partial<Draft>) => void;
-  onMove: (by: -1 | 1) => void;
-  onRemove: () => void;
-}
-
-function Item({ item, number, first, last, onChange, onMove, onRemove }: ItemProps) {
-  const name = item.thing?.title ?? (item.kind === 'text' ? 'Text' : 'no longer there');
-  return (
-    <li>
-      <span className="balloon" aria-hidden="true">
-        {number}
-      </span>
-      <div className="grid grow gap-2">
-        {item.kind !== 'text' && (
-          <p>
-            <span className="text-soft">{item.kind === 'exercise' ? 'Exercise: ' : 'Capture: '}</span>
-            <b>{name}</b>
-          </p>
-        )}
-        {item.kind !== 'exercise' && (
-          <Field label={item.kind === 'text' ? `Text of item ${number}` : `Caption of item ${number}`}>
-            <textarea
-              className="box"
-              maxLength={item.kind === 'text' ? 8000 : 2000}
-              value={item.text}
-              onChange={(event) => onChange({ text: event.target.value })}
-            />
-          </Field>
-        )}
-        {item.kind === 'text' && (
-          <label className="build-tick">
-            <input
-              type="checkbox"
-              className="tick"
-              checked={item.afterCommit}
-              onChange={(event) => onChange({ afterCommit: event.target.checked })}
-            />
-            Show it only after the exercises before it are answered
-          </label>
-        )}
-      </div>
-      <Move label={`Move item ${number} up`} disabled={first} turned onMove={() => onMove(-1)} />
-      <Move label={`Move item ${number} down`} disabled={last} onMove={() => onMove(1)} />
-      <Button className="button-icon" aria-label={`Remove item ${number}: ${name}`} onClick={onRemove}>
-        <Icon name="cross" small />
-      </Button>
-    </li>
-  );
-}
-
-function Move({
-  label,
-  disabled,
-  turned = false,
-  onMove,
-}: {
-  label: string;
-  disabled: boolean;
-  turned?: boolean;
-  onMove: () => void;
-}): ReactNode {
-  return (
-    <Button
-      className={`button-icon${turned ? ' rotate-180' : ''}`}
-      aria-label={label}
-      disabled={disabled}
-      onClick={onMove}
-    >
-      <Icon name="down" small />
-    </Button>
   );
 }
 
